@@ -1,0 +1,92 @@
+import { useState } from 'react';
+import type { ModeSummary, SolveSummary } from '#shared/schemas/solveResult.ts';
+import { useElementWidth } from '#src/hooks/useElementWidth.ts';
+import { frequencyScale, type ScaleKind } from '../state/frequencyScale.ts';
+import { layOutMarks } from '../state/layOutMarks.ts';
+import { FrequencyAxis } from './FrequencyAxis.tsx';
+import { FrequencyMarks } from './FrequencyMarks.tsx';
+
+export interface FrequencyLineProps {
+  readonly summary: SolveSummary | null;
+  /** What the line shows, in words: "Draft, tank full, consistent mass". */
+  readonly caption: string;
+  /** Everything that limits what the line says: stale, incomplete, not solved yet. */
+  readonly remarks: readonly string[];
+  readonly selectedMode: number | null;
+  readonly hrefFor: (mode: ModeSummary) => string;
+}
+
+/** Space at both ends, so that the first and last labels do not run off the sheet. */
+const SIDE_PX = 36;
+
+const formatHz = (mode: ModeSummary): string => `${significant(mode.frequencyHz)} Hz`;
+
+/** Four significant digits: more than that no support condition of a machine warrants on a line. */
+function significant(hz: number): string {
+  return hz >= 1000 ? hz.toFixed(0) : hz.toPrecision(4);
+}
+
+const describe = (mode: ModeSummary): string =>
+  `Mode ${mode.number}, ${formatHz(mode)}, ${mode.name}`;
+
+/**
+ * The frequency line along the foot of every project screen: natural frequencies on a scale of Hz with the
+ * same speed in rpm under it. A mark opens its mode.
+ */
+export function FrequencyLine(props: FrequencyLineProps) {
+  const { summary, caption, remarks, selectedMode, hrefFor } = props;
+  const [kind, setKind] = useState<ScaleKind>('log');
+  const [frame, width] = useElementWidth<HTMLDivElement>();
+  const modes = summary?.modes ?? [];
+  const scale = frequencyScale(
+    kind,
+    modes.map((mode) => mode.frequencyHz),
+    Math.max(0, width - 2 * SIDE_PX),
+  );
+  const marks = width > 0 ? layOutMarks(modes, scale, formatHz) : [];
+  const rigid = summary?.rigidBodyModes ?? 0;
+
+  return (
+    <section aria-label="Frequency line" className="border-t border-ink bg-sheet pb-1">
+      <div className="flex flex-wrap items-baseline gap-x-4 gap-y-0.5 px-4 pt-1 text-xs text-ink-soft">
+        <span className="text-ink">{caption}</span>
+        {rigid > 0 && <span>{rigid} rigid-body modes at 0 Hz</span>}
+        {remarks.map((remark) => (
+          <span key={remark} className="text-caution-ink">
+            <span aria-hidden="true">△ </span>
+            {remark}
+          </span>
+        ))}
+        <span className="ml-auto flex items-baseline gap-2">
+          <span>Hz over rpm</span>
+          <button
+            type="button"
+            className="min-h-6 min-w-6 px-1 underline decoration-rule underline-offset-2 hover:text-ink focus-visible:outline-2 focus-visible:outline-focus"
+            onClick={() => setKind(kind === 'log' ? 'linear' : 'log')}
+          >
+            {kind === 'log' ? 'Log scale' : 'Linear scale'}
+            <span className="sr-only">, switch to {kind === 'log' ? 'linear' : 'log'}</span>
+          </button>
+        </span>
+      </div>
+      <div ref={frame} className="relative h-[84px] overflow-hidden">
+        {modes.length > 0 && width > 0 && (
+          <div className="absolute inset-y-0" style={{ left: SIDE_PX, width: scale.width }}>
+            <FrequencyAxis scale={scale} />
+            <FrequencyMarks
+              marks={marks}
+              selectedMode={selectedMode}
+              describe={describe}
+              hrefFor={hrefFor}
+            />
+          </div>
+        )}
+        {modes.length === 0 && (
+          <p className="px-4 pt-6 text-sm text-ink-soft">
+            No natural frequencies yet. Solve the frame, and they appear here.
+          </p>
+        )}
+      </div>
+    </section>
+  );
+}
