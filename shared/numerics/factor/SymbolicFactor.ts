@@ -23,7 +23,7 @@ export interface SymbolicFactor {
   /** For each of `rows`: its index in the parent's front. */
   readonly relative: Int32Array;
   /** supernodes + 1: offset of each supernode's dense panel (row by row) in the values of L. */
-  readonly panelPtr: Float64Array;
+  readonly panelPtr: Int32Array;
   /** Largest number of values on the stack of update matrices. */
   readonly stackSize: number;
   /** Largest number of columns in one supernode. */
