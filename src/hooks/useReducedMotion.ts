@@ -9,5 +9,4 @@ const watch = (changed: () => void) => {
 };
 
 /** Whether the person asked their system for less motion: then nothing moves by itself. */
-export const useReducedMotion = (): boolean =>
-  useSyncExternalStore(watch, () => query().matches);
+export const useReducedMotion = (): boolean => useSyncExternalStore(watch, () => query().matches);

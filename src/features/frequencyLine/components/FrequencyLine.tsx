@@ -52,7 +52,7 @@ export function FrequencyLine(props: FrequencyLineProps) {
         <span className="text-ink">{caption}</span>
         {rigid > 0 && <span>{rigid} rigid-body modes at 0 Hz</span>}
         {remarks.map((remark) => (
-          <span key={remark} className="text-caution-ink">
+          <span key={remark} className="text-caution">
             <span aria-hidden="true">△ </span>
             {remark}
           </span>

@@ -21,7 +21,7 @@ export function FrequencyMarks({ marks, selectedMode, describe, hrefFor }: Frequ
         const inside = <MarkFigure mark={mark} selected={selected} />;
         const className =
           'absolute bottom-0 top-0 -translate-x-1/2 flex flex-col items-center justify-end rounded-xs ' +
-          'text-ink hover:text-signal-ink focus-visible:outline-2 focus-visible:outline-focus';
+          'text-ink hover:text-signal-text focus-visible:outline-2 focus-visible:outline-focus';
         const style = { width: TARGET_PX };
         return (
           <li key={only.number} className="absolute inset-y-0" style={{ left: mark.x }}>

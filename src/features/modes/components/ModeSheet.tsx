@@ -1,0 +1,62 @@
+import { useState } from 'react';
+import type { ModeShapes } from '#shared/analysis/shapesFile.ts';
+import type { ModeSummary } from '#shared/schemas/solveResult.ts';
+import { useReducedMotion } from '#src/hooks/useReducedMotion.ts';
+import type { Playback } from '../state/playback.ts';
+import { formatModeFrequency } from '../state/formatMode.ts';
+import { ModePictureCanvas } from './ModePictureCanvas.tsx';
+
+interface ModeSheetProps {
+  readonly modes: readonly ModeSummary[];
+  readonly shapes: ModeShapes;
+  readonly selectedMode: number;
+  readonly playback: Playback;
+  readonly onChoose: (mode: number) => void;
+}
+
+const PICTURE = { width: 168, height: 126 };
+/** Above this many lines per frame only the picture pointed at moves; the rest stand at their extreme. */
+const SEGMENTS_THAT_MOVE = 12_000;
+
+/** All modes as small moving pictures. */
+export function ModeSheet({ modes, shapes, selectedMode, playback, onChoose }: ModeSheetProps) {
+  const [pointedAt, setPointedAt] = useState<number | null>(null);
+  const still = useReducedMotion();
+  const allMove = shapes.points * modes.length <= SEGMENTS_THAT_MOVE;
+  return (
+    <ul
+      aria-label="Mode sheet"
+      className="grid grid-cols-[repeat(auto-fill,minmax(168px,1fr))] gap-px border border-rule bg-rule"
+    >
+      {modes.map((mode, index) => (
+        <li key={mode.number} className="bg-sheet">
+          <button
+            type="button"
+            aria-pressed={mode.number === selectedMode}
+            onClick={() => onChoose(mode.number)}
+            onPointerEnter={() => setPointedAt(mode.number)}
+            onPointerLeave={() => setPointedAt(null)}
+            onFocus={() => setPointedAt(mode.number)}
+            onBlur={() => setPointedAt(null)}
+            className="flex h-full w-full cursor-pointer flex-col items-center border-t-2 border-transparent px-2 pt-1 pb-2 text-left hover:bg-ground aria-pressed:border-ink"
+          >
+            <ModePictureCanvas
+              shapes={shapes}
+              mode={index}
+              playback={playback}
+              moves={!still && (allMove || pointedAt === mode.number)}
+              {...PICTURE}
+            />
+            <span className="w-full text-sm">
+              <span className="flex items-baseline justify-between gap-2">
+                <span className="text-ink-soft">Mode {mode.number}</span>
+                <span className="num">{formatModeFrequency(mode)}</span>
+              </span>
+              <span className="block">{mode.name}</span>
+            </span>
+          </button>
+        </li>
+      ))}
+    </ul>
+  );
+}
