@@ -30,8 +30,16 @@ const id = z
   .regex(/^[A-Za-z0-9][A-Za-z0-9 ._-]*$/, 'An id may hold letters, digits, spaces, . _ and -.');
 const name = z.string().max(DOCUMENT_LIMITS.name);
 const text = z.string().max(DOCUMENT_LIMITS.text);
-const finite = z.number({ error: 'Enter a number.' });
-const positive = finite.positive('Must be greater than zero.');
+/** Beyond these sizes a product of a few values leaves the range of a double; no machine comes near them. */
+const LARGEST = 1e15;
+const SMALLEST = 1e-25;
+const finite = z
+  .number({ error: 'Enter a number.' })
+  .min(-LARGEST, 'This number is too large.')
+  .max(LARGEST, 'This number is too large.');
+const positive = finite
+  .positive('Must be greater than zero.')
+  .refine((value) => value <= 0 || value >= SMALLEST, 'This number is too small.');
 const nonNegative = finite.nonnegative('Must not be negative.');
 const vector3 = z.tuple([finite, finite, finite]);
 export type Vector3 = z.infer<typeof vector3>;
@@ -140,13 +148,16 @@ export const member = z.strictObject({
   section: id,
   roll: finite.default(0),
   divisions: z
-    .union([
-      z
-        .int('Divisions are a whole number or "auto".')
-        .min(1, 'At least 1 division.')
-        .max(DOCUMENT_LIMITS.divisions, `At most ${DOCUMENT_LIMITS.divisions} divisions.`),
-      z.literal('auto'),
-    ])
+    .union(
+      [
+        z
+          .int('Divisions are a whole number or "auto".')
+          .min(1, 'At least 1 division.')
+          .max(DOCUMENT_LIMITS.divisions, `At most ${DOCUMENT_LIMITS.divisions} divisions.`),
+        z.literal('auto'),
+      ],
+      'Divisions are a whole number from 1 to 200, or "auto".',
+    )
     .default(4),
   theory: z.enum(['timoshenko', 'bernoulli']).default('timoshenko'),
   massPerLength: nonNegative.default(0),
@@ -216,15 +227,22 @@ export const operatingState = z.strictObject({
       }),
     )
     .default({}),
-  supports: z.union([supportCondition, z.record(z.string(), supportCondition)]).default('expected'),
+  supports: z
+    .union(
+      [supportCondition, z.record(z.string(), supportCondition)],
+      'Supports are soft, expected or stiff: one word for all, or one by node.',
+    )
+    .default('expected'),
 });
 
 const list = <T extends z.ZodType>(item: T, most: number) =>
   z.array(item).max(most, `At most ${most} entries.`).default([]);
 
 export const frameDocument = z.strictObject({
-  format: z.literal('ringstead-frame').default('ringstead-frame'),
-  version: z.literal(1).default(1),
+  format: z
+    .literal('ringstead-frame', 'This is not a Ringstead frame: the format is “ringstead-frame”.')
+    .default('ringstead-frame'),
+  version: z.literal(1, 'Only version 1 of the document can be read here.').default(1),
   name,
   unknowns: unknowns.default(['u', 'v', 'w', 'rx', 'ry', 'rz']),
   materials: list(material, DOCUMENT_LIMITS.perList),
