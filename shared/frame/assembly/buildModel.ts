@@ -1,0 +1,273 @@
+import { DISPLACEMENTS } from '../../schemas/frameDocument.ts';
+import type { Displacement, FrameDocument, Support, Vector3 } from '../../schemas/frameDocument.ts';
+import { rigidBodyMass } from '../elements/rigidBody.ts';
+import { combine } from '../freedoms/Combination.ts';
+import type { Terms } from '../freedoms/Combination.ts';
+import { GroupFreedoms } from '../freedoms/GroupFreedoms.ts';
+import type { GroupDisplacement } from '../freedoms/GroupFreedoms.ts';
+import { add, cross, dot, normalise, scale, subtract } from '../vector3.ts';
+import { carriedBy, carriersOf, GLOBAL_AXES } from './carriers.ts';
+import type { Carriers } from './carriers.ts';
+import { componentsOf } from './components.ts';
+import { dividePart, memberParts } from './memberParts.ts';
+import type {
+  Body,
+  DividedPart,
+  FrameModel,
+  Hold,
+  MassKind,
+  MemberPart,
+  Segment,
+  Tie,
+} from './FrameModel.ts';
+
+export interface ModelOptions {
+  readonly massKind: MassKind;
+  /** Elements of a beam. */
+  readonly divisionsOf: (part: MemberPart) => number;
+}
+
+/** A stiffness or fixing before the unknowns are numbered: displacements that it adds up. */
+interface TieDraft extends Omit<Tie, 'motion'> {
+  readonly sum: readonly { displacement: GroupDisplacement; factor: number }[];
+}
+
+/** One end of a member: its displacements in member axes, rigid or through a joint. */
+interface MemberEnd {
+  readonly rigid: readonly GroupDisplacement[];
+  /** Per displacement: undefined = rigid, 0 = free, else the joint's stiffness. */
+  readonly joint: readonly (number | undefined)[];
+}
+
+const isRotation = (displacement: number) => displacement >= 3;
+
+/**
+ * The frame as elements over free unknowns (frame document page, "Element matrices" and "Axes, unknowns,
+ * signs"). Rigid links, arms and offsets of masses are carried by exact small-displacement kinematics; a
+ * joint's displacement is an unknown of its own at the member's end; fixed displacements are left out.
+ *   document  accepted by `checkDocument`, with an operating state applied
+ */
+export function buildModel(document: FrameDocument, options: ModelOptions): FrameModel {
+  const carriers = carriersOf(document);
+  const exists = Uint8Array.from(DISPLACEMENTS, (d) => (document.unknowns.includes(d) ? 1 : 0));
+  const freedoms = new GroupFreedoms(carriers.reference.length, exists);
+  const parts = memberParts(document).map((part) =>
+    dividePart(part, options.divisionsOf(part), options.massKind),
+  );
+
+  const ends = parts.map((part) => [
+    memberEnd(carriers, part, 'start', exists),
+    memberEnd(carriers, part, 'end', exists),
+  ]);
+  for (const end of ends.flat()) {
+    end.rigid.forEach((displacement, i) => {
+      if (end.joint[i] !== 0) freedoms.use(displacement);
+    });
+  }
+  const { holds, fixed, drafts } = supportTies(document.supports, carriers);
+  for (const displacement of fixed) freedoms.fix(displacement);
+  drafts.push(...springTies(document, carriers));
+  for (const { displacement } of drafts.flatMap((draft) => draft.sum)) freedoms.use(displacement);
+  const bodyDisplacements = document.masses.map((mass) => {
+    const at = add(carriers.at.get(mass.node)!, mass.offset);
+    return { at, displacements: carriedBy(carriers, mass.node, GLOBAL_AXES, at) };
+  });
+  const bodyMasses = document.masses.map((mass) => rigidBodyMass(mass.mass, mass.inertia));
+  bodyDisplacements.forEach(({ displacements }, i) => {
+    useBody(freedoms, displacements, bodyMasses[i]!);
+  });
+
+  freedoms.number();
+  const ties: Tie[] = drafts.map(({ sum, ...tie }) => ({
+    ...tie,
+    motion: combine([
+      sum.flatMap(({ displacement, factor }) => freedoms.terms(displacement, factor)),
+    ]),
+  }));
+  const segments = parts.flatMap((part, i) =>
+    divide(part, ends[i]!, carriers, freedoms, exists, ties),
+  );
+  const bodies: Body[] = bodyDisplacements.map(({ at, displacements }, index) => ({
+    index,
+    at,
+    motion: combine(displacements.map((displacement) => freedoms.terms(displacement))),
+    mass: bodyMasses[index]!,
+  }));
+  return {
+    document,
+    massKind: options.massKind,
+    free: freedoms.meanings.length,
+    scale: carriers.scale,
+    exists,
+    parts,
+    segments,
+    ties: ties.filter((tie) => tie.motion.dofs.length > 0),
+    bodies,
+    nodes: document.nodes.map((node) =>
+      combine(carriedBy(carriers, node.id).map((displacement) => freedoms.terms(displacement))),
+    ),
+    meanings: freedoms.meanings,
+    holds,
+    groupOf: carriers.groupOf,
+    reference: carriers.reference,
+    ...componentsOf(document, carriers),
+  };
+}
+
+function memberEnd(
+  carriers: Carriers,
+  { member, axes, start, end }: DividedPart,
+  which: 'start' | 'end',
+  exists: Uint8Array,
+): MemberEnd {
+  const directions = [axes.x, axes.y, axes.z] as const;
+  const point = which === 'start' ? start : end;
+  const all = carriedBy(carriers, member[which], [...directions], point);
+  const rigid = member.kind === 'bar' ? all.slice(0, 3) : all;
+  const joint = member.joints?.[which];
+  return {
+    rigid,
+    joint: rigid.map((_, i) =>
+      inModel(directions, i, exists) ? joint?.[DISPLACEMENTS[i]!] : undefined,
+    ),
+  };
+}
+
+/** Whether displacement `i` along or about a member's axes exists in a model of a reduced set. */
+function inModel(axes: readonly Vector3[], i: number, exists: Uint8Array): boolean {
+  const axis = axes[i % 3]!;
+  const offset = isRotation(i) ? 3 : 0;
+  const share = axis.reduce((sum, c, k) => sum + (exists[offset + k] ? c * c : 0), 0);
+  // `checkDocument` refuses axes that leave the set, so this is 0 or 1 up to rounding.
+  return share > 0.5;
+}
+
+function supportAxes({ axes }: Support): [Vector3, Vector3, Vector3] {
+  if (!axes) return [...GLOBAL_AXES];
+  const x = normalise(axes.x);
+  const z = normalise(subtract(axes.z, scale(x, dot(axes.z, x))));
+  return [x, cross(z, x), z];
+}
+
+function supportTies(
+  supports: readonly Support[],
+  carriers: Carriers,
+): { holds: Hold[]; fixed: GroupDisplacement[]; drafts: TieDraft[] } {
+  const holds: Hold[] = [];
+  const fixed: GroupDisplacement[] = [];
+  const drafts: TieDraft[] = [];
+  for (const support of supports) {
+    const displacements = carriedBy(carriers, support.node, supportAxes(support));
+    DISPLACEMENTS.forEach((name, i) => {
+      const displacement = displacements[i]!;
+      const stiffness = support.stiffness?.[name];
+      if (support.fixed.includes(name)) fixed.push(displacement);
+      else if (stiffness === undefined) return;
+      else {
+        drafts.push({
+          owner: 'support',
+          id: support.node,
+          sum: [{ displacement, factor: 1 }],
+          stiffness,
+          turns: isRotation(i),
+        });
+      }
+      holds.push(displacement);
+    });
+  }
+  return { holds, fixed, drafts };
+}
+
+function springTies(document: FrameDocument, carriers: Carriers): TieDraft[] {
+  return document.springs.flatMap((spring) => {
+    const middle = scale(add(carriers.at.get(spring.start)!, carriers.at.get(spring.end)!), 0.5);
+    const start = carriedBy(carriers, spring.start, GLOBAL_AXES, middle);
+    const end = carriedBy(carriers, spring.end, GLOBAL_AXES, middle);
+    // Inside one rigid group the mid-point has one displacement, so the spring is never stretched.
+    if (start[0]!.group === end[0]!.group) return [];
+    return DISPLACEMENTS.flatMap((name: Displacement, i) => {
+      const stiffness = spring.stiffness[name];
+      if (stiffness === undefined) return [];
+      return {
+        owner: 'spring' as const,
+        id: spring.id,
+        sum: [
+          { displacement: end[i]!, factor: 1 },
+          { displacement: start[i]!, factor: -1 },
+        ],
+        stiffness,
+        turns: isRotation(i),
+      };
+    });
+  });
+}
+
+/** A body uses its translations, and the rotations about which it has inertia. */
+function useBody(
+  freedoms: GroupFreedoms,
+  displacements: readonly GroupDisplacement[],
+  mass: Float64Array,
+): void {
+  for (const displacement of displacements.slice(0, 3)) freedoms.use(displacement);
+  for (let i = 3; i < 6; i++) {
+    const row = new Float64Array(6);
+    for (let j = 3; j < 6; j++) {
+      for (let k = 0; k < 6; k++) row[k]! += mass[i * 6 + j]! * displacements[j]!.row[k]!;
+    }
+    freedoms.use({ group: displacements[0]!.group, row });
+  }
+}
+
+/** The elements of one member; stations inside it have unknowns of their own in member axes. */
+function divide(
+  part: DividedPart,
+  ends: readonly MemberEnd[],
+  carriers: Carriers,
+  freedoms: GroupFreedoms,
+  exists: Uint8Array,
+  ties: Tie[],
+): Segment[] {
+  const { member, axes, divisions } = part;
+  const directions = [axes.x, axes.y, axes.z] as const;
+  let station = endTerms(part, 'start', ends[0]!, freedoms, ties);
+  return Array.from({ length: divisions }, (_, number) => {
+    let next: Terms[];
+    if (number === divisions - 1) {
+      next = endTerms(part, 'end', ends[1]!, freedoms, ties);
+    } else {
+      const along = ((number + 1) / divisions) * axes.length;
+      const point = add(part.start, scale(axes.x, along));
+      const carried = carriedBy(carriers, member.start, [...directions], point);
+      next = carried.map((displacement, i) =>
+        inModel(directions, i, exists) ? [[freedoms.add(displacement), 1]] : [],
+      );
+    }
+    const segment = { part, number, motion: combine([...station, ...next]) };
+    station = next;
+    return segment;
+  });
+}
+
+function endTerms(
+  { member }: DividedPart,
+  which: 'start' | 'end',
+  { rigid, joint }: MemberEnd,
+  freedoms: GroupFreedoms,
+  ties: Tie[],
+): Terms[] {
+  return rigid.map((displacement, i) => {
+    const stiffness = joint[i];
+    if (stiffness === undefined) return freedoms.terms(displacement);
+    const own = freedoms.add(displacement);
+    if (stiffness > 0) {
+      ties.push({
+        owner: 'joint',
+        id: `${member.id} ${which}`,
+        motion: combine([[[own, 1], ...freedoms.terms(displacement, -1)]]),
+        stiffness,
+        turns: isRotation(i),
+      });
+    }
+    return [[own, 1]];
+  });
+}
