@@ -1,5 +1,7 @@
 /** Every error code the product can answer with. Each has exactly one HTTP status (server/middlewares/errors.ts). */
 export type ErrorCode =
+  | 'malformed-request'
+  | 'unsupported-media-type'
   | 'invalid-request'
   | 'invalid-document'
   | 'not-signed-in'

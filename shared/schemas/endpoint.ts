@@ -24,6 +24,8 @@ export interface Endpoint<
   /** JSON answer; `binary` endpoints and event streams describe themselves in `summary`. */
   readonly response: Response;
   readonly produces?: 'json' | 'binary' | 'event-stream';
+  /** Largest JSON body in bytes; 64 KiB unless said otherwise. */
+  readonly maxBodyBytes?: number;
 }
 
 export const endpoint = <

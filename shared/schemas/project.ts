@@ -57,6 +57,9 @@ export const projectResponse = projectSummary.extend({
 });
 export type ProjectResponse = z.infer<typeof projectResponse>;
 
+/** A frame of 10,000 nodes and members takes about 3 MB. */
+const MAX_DOCUMENT_BYTES = 8 * 1024 * 1024;
+
 const projectName = z.string().trim().min(1, 'Enter a name.').max(120, 'At most 120 characters.');
 const projectParams = z.strictObject({ projectId: uuid });
 
@@ -80,6 +83,7 @@ export const createProject = endpoint({
     'The client chooses the id, so that repeating the request makes one project.',
   status: 201,
   access: 'signed-in',
+  maxBodyBytes: MAX_DOCUMENT_BYTES,
   params: nothing,
   query: nothing,
   body: z.strictObject({
@@ -189,6 +193,7 @@ export const writeDraft = endpoint({
     'Writing the document that is already there answers 200 without a new version.',
   status: 200,
   access: 'signed-in',
+  maxBodyBytes: MAX_DOCUMENT_BYTES,
   params: projectParams,
   query: nothing,
   body: z.strictObject({ version: z.int().min(1), document: z.unknown() }),
