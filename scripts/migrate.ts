@@ -1,10 +1,11 @@
-import { databaseAddresses } from './lib/environment.mjs';
+import { loadEnvironment, ownerAddress } from './lib/environment.mjs';
 import { migrateDown, migrateUp } from './lib/migrations.ts';
 import { reportFailure, StepError } from './lib/steps.mjs';
 
 /** `npm run migrate` brings the database up to date; `npm run migrate -- down` takes the last step back. */
 async function main(direction: string): Promise<void> {
-  const { owner } = databaseAddresses();
+  loadEnvironment();
+  const owner = ownerAddress();
   if (direction !== 'up' && direction !== 'down') {
     throw new StepError(`Say \`up\` or \`down\`, not \`${direction}\`.`);
   }

@@ -22,10 +22,10 @@ export async function installDebianPackage(name) {
   }
   const env = { ...process.env, DEBIAN_FRONTEND: 'noninteractive' };
   const install = ['install', '-y', '--no-install-recommends', name];
-  if ((await run('apt-get', ['update'], { env, quiet: true })) !== 0) {
+  if ((await run('apt-get', ['update'], { env, quiet: true })).status !== 0) {
     throw new StepError('`apt-get update` failed: check the package sources of this machine.');
   }
-  if ((await run('apt-get', install, { env, quiet: true })) !== 0) {
+  if ((await run('apt-get', install, { env, quiet: true })).status !== 0) {
     throw new StepError(`\`apt-get install ${name}\` failed: see its messages above.`);
   }
 }

@@ -24,23 +24,37 @@ export function namedDatabase() {
     throw new StepError('MIGRATION_DATABASE_URL is set, DATABASE_URL is not: set both.');
   if (!owner) {
     throw new StepError(
-      'DATABASE_URL is set (the role ringstead_app): set MIGRATION_DATABASE_URL too, to the role that owns the tables; .env.example shows how to make both.',
+      'DATABASE_URL is set (run-time role): set MIGRATION_DATABASE_URL too, to the role that owns the tables; .env.example shows how to make both.',
     );
   }
   return { owner, runTime };
 }
 
 /**
- * The database that the environment names, else the private cluster of this checkout.
+ * The address of the role that owns the tables: from the environment, else of this checkout's cluster.
  *
- * @returns {import('./privateCluster.mjs').DatabaseAddresses}
+ * @returns {string}
  * @throws {StepError}
  */
-export function databaseAddresses() {
-  loadEnvironment();
-  const addresses = namedDatabase() ?? rememberedAddresses();
-  if (addresses === undefined) {
-    throw new StepError('There is no database yet: set DATABASE_URL, or run `npm start` first.');
-  }
-  return addresses;
+export function ownerAddress() {
+  const address = process.env['MIGRATION_DATABASE_URL'] || rememberedAddresses()?.owner;
+  return address ?? missing('MIGRATION_DATABASE_URL');
+}
+
+/**
+ * The address of the run-time role: from the environment, else of this checkout's cluster.
+ *
+ * @returns {string}
+ * @throws {StepError}
+ */
+export function runTimeAddress() {
+  return process.env['DATABASE_URL'] || (rememberedAddresses()?.runTime ?? missing('DATABASE_URL'));
+}
+
+/**
+ * @param {string} variable
+ * @returns {never}
+ */
+function missing(variable) {
+  throw new StepError(`There is no database yet: set ${variable}, or run \`npm start\` first.`);
 }

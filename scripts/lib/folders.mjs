@@ -6,7 +6,7 @@ import { fileURLToPath } from 'node:url';
 export const root = fileURLToPath(new URL('../..', import.meta.url)).replace(/\/$/, '');
 
 /** Git-ignored folder for all that belongs to this machine: secrets, the private cluster, stamps. */
-export const stateFolder = join(root, '.ringstead');
+export const stateFolder = process.env['RINGSTEAD_STATE'] ?? join(root, '.ringstead');
 
 /** Makes the state folder. Others may pass through it (PostgreSQL runs as another user), not list it. */
 export function makeStateFolder() {

@@ -73,7 +73,11 @@ async function provideQueues(ownerAddress: string, sequelize: Sequelize): Promis
   });
   await boss.start();
   try {
-    for (const { name, ...options } of queues) await boss.createQueue(name, { name, ...options });
+    for (const queue of queues) {
+      await boss.createQueue(queue.name, queue);
+      // One that exists already may have had other options in an earlier version.
+      await boss.updateQueue(queue.name, queue);
+    }
   } finally {
     await boss.stop({ graceful: false });
   }

@@ -24,7 +24,7 @@ function rememberedCluster() {
  * Starts this checkout's own cluster, made when missing, with its roles and its database.
  *
  * @param {string} bin PostgreSQL's programs
- * @returns {Promise<{ cluster: import('./cluster.mjs').Cluster, addresses: DatabaseAddresses, wasRunning: boolean }>}
+ * @returns {Promise<{ cluster: import('./cluster.mjs').Cluster, addresses: DatabaseAddresses, isNew: boolean, wasRunning: boolean }>}
  * @throws {import('./steps.mjs').StepError}
  */
 export async function startPrivateCluster(bin) {
@@ -36,7 +36,7 @@ export async function startPrivateCluster(bin) {
     postgresAccount(),
   );
   const { superuserPassword } = secrets;
-  initCluster(bin, base, superuserPassword);
+  const isNew = initCluster(bin, base, superuserPassword);
   const { wasRunning, ...cluster } = await startCluster({
     bin,
     base,
@@ -46,7 +46,7 @@ export async function startPrivateCluster(bin) {
   writeState(STATE, { base, port: cluster.port });
   makeRoles(cluster, { owner: secrets.ownerPassword, runTime: secrets.runTimePassword });
   makeDatabase(cluster, DATABASE);
-  return { cluster, wasRunning, addresses: privateAddresses(cluster.port) };
+  return { cluster, isNew, wasRunning, addresses: privateAddresses(cluster.port) };
 }
 
 /**

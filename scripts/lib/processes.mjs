@@ -1,15 +1,35 @@
 import { spawn, spawnSync } from 'node:child_process';
+import { once } from 'node:events';
 import { readFileSync } from 'node:fs';
 import { setTimeout as wait } from 'node:timers/promises';
 import { root } from './folders.mjs';
 
 /**
- * Runs a program to its end, its output shown.
+ * Programs that `run` has under way.
+ * @type {Set<import('node:child_process').ChildProcess>}
+ */
+const children = new Set();
+
+/** Asks the programs that `run` has under way to stop, and waits until they have. */
+export async function stopChildren() {
+  await Promise.all(
+    [...children].map((child) => {
+      const closed = once(child, 'close');
+      child.kill('SIGTERM');
+      return closed;
+    }),
+  );
+}
+
+/**
+ * Runs a program to its end.
  *
  * @param {string} program
  * @param {string[]} args
- * @param {{ env?: NodeJS.ProcessEnv, quiet?: boolean }} [options] quiet: output is shown only on failure
- * @returns {Promise<number>} exit status; 1 when a signal ended it
+ * @param {{ env?: NodeJS.ProcessEnv, quiet?: boolean }} [options] quiet: what it prints is shown only when
+ *   it fails
+ * @returns {Promise<{ status: number, output: string }>} exit status, 1 when a signal ended it; what a
+ *   quiet one wrote to standard output
  */
 export function run(program, args, { env = process.env, quiet = false } = {}) {
   return new Promise((resolve, reject) => {
@@ -18,14 +38,16 @@ export function run(program, args, { env = process.env, quiet = false } = {}) {
       env,
       stdio: quiet ? ['ignore', 'pipe', 'pipe'] : ['ignore', 'inherit', 'inherit'],
     });
-    /** @type {Buffer[]} */
-    const held = [];
-    child.stdout?.on('data', (chunk) => held.push(chunk));
-    child.stderr?.on('data', (chunk) => held.push(chunk));
+    children.add(child);
+    let output = '';
+    let errors = '';
+    child.stdout?.setEncoding('utf8').on('data', (text) => (output += text));
+    child.stderr?.setEncoding('utf8').on('data', (text) => (errors += text));
     child.on('error', reject);
     child.on('close', (code) => {
-      if (code !== 0) process.stderr.write(Buffer.concat(held));
-      resolve(code ?? 1);
+      children.delete(child);
+      if (code !== 0) process.stderr.write(output + errors);
+      resolve({ status: code ?? 1, output });
     });
   });
 }
@@ -36,7 +58,7 @@ export function run(program, args, { env = process.env, quiet = false } = {}) {
  * @param {string} script path from the root
  * @param {string[]} args
  * @param {NodeJS.ProcessEnv} env
- * @returns {Promise<number>} exit status
+ * @returns {Promise<{ status: number, output: string }>}
  */
 export function runScript(script, args, env) {
   return run(process.execPath, ['--import', 'tsx', script, ...args], { env, quiet: true });

@@ -23,7 +23,7 @@ export default async function setup(project: TestProject): Promise<() => void> {
   try {
     const { owner, runTime } = createDatabase(throwAway, TEMPLATE);
     const env = { ...process.env, MIGRATION_DATABASE_URL: owner, DATABASE_URL: runTime };
-    if ((await runScript('scripts/migrate.ts', [], env)) !== 0) {
+    if ((await runScript('scripts/migrate.ts', [], env)).status !== 0) {
       throw new Error('The template database could not be migrated: see the messages above.');
     }
   } catch (error) {
