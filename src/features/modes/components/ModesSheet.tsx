@@ -1,0 +1,177 @@
+import { useEffect, useMemo, useState } from 'react';
+import { useSearchParams } from 'react-router-dom';
+import { pairModes } from '#shared/analysis/pairModes.ts';
+import type { ModeShapes } from '#shared/analysis/shapesFile.ts';
+import type { ProjectResponse } from '#shared/schemas/project.ts';
+import type { SolveSummary } from '#shared/schemas/solveResult.ts';
+import { Notice } from '#src/components/Notice.tsx';
+import { useReducedMotion } from '#src/hooks/useReducedMotion.ts';
+import type { ShownFrame } from '#src/hooks/useShownFrame.ts';
+import { createCameraStore } from '#src/viewer/camera/cameraStore.ts';
+import { createPlayback } from '../state/playback.ts';
+import { LOOKS, type Look } from '../state/looks.ts';
+import { MethodComparison } from './MethodComparison.tsx';
+import { ModeDetails } from './ModeDetails.tsx';
+import { ModeSheet } from './ModeSheet.tsx';
+import { ModeStrip } from './ModeStrip.tsx';
+import { ModeTable } from './ModeTable.tsx';
+import { ModeTitleBlock } from './ModeTitleBlock.tsx';
+import { MovingFrame } from './MovingFrame.tsx';
+
+export interface Solved {
+  readonly summary: SolveSummary;
+  readonly shapes: ModeShapes;
+}
+
+interface ModesSheetProps {
+  readonly project: ProjectResponse;
+  readonly shown: ShownFrame;
+  /** The result is of an older draft than the one there is now. */
+  readonly stale: boolean;
+  readonly consistent: Solved;
+  readonly lumped: Solved | null;
+}
+
+/** The sheet: the moving frame fills it, or two side by side, the small pictures, or the table. */
+export function ModesSheet({ project, shown, stale, consistent, lumped }: ModesSheetProps) {
+  const [search, setSearch] = useSearchParams();
+  const [exaggeration, setExaggeration] = useState(1);
+  const [playback] = useState(() => createPlayback());
+  const [camera] = useState(() => createCameraStore());
+  const still = useReducedMotion();
+  const { summary, shapes } = consistent;
+
+  const look: Look = LOOKS.find((one) => one.value === search.get('look'))?.value ?? 'one';
+  const asked = Number(search.get('mode') ?? 1);
+  const mode = summary.modes.find((one) => one.number === asked) ?? summary.modes[0];
+
+  const set = (name: string, value: string): void =>
+    setSearch(
+      (before) => {
+        const next = new URLSearchParams(before);
+        next.set(name, value);
+        return next;
+      },
+      { replace: true },
+    );
+  const choose = (number: number): void => set('mode', String(number));
+
+  useEffect(() => {
+    if (still) playback.pause();
+    else playback.play();
+    return () => playback.pause();
+  }, [playback, still]);
+
+  const pairing = useMemo(
+    () =>
+      lumped
+        ? pairModes(
+            { shapes, frequenciesHz: summary.modes.map((one) => one.frequencyHz) },
+            {
+              shapes: lumped.shapes,
+              frequenciesHz: lumped.summary.modes.map((one) => one.frequencyHz),
+            },
+          )
+        : null,
+    [shapes, summary, lumped],
+  );
+
+  if (!mode) {
+    return (
+      <div className="p-6">
+        <Notice kind="plain">
+          This frame has no modes: nothing in it has both mass and freedom.
+        </Notice>
+      </div>
+    );
+  }
+  const partner = pairing?.pairs.find((pair) => summary.modes[pair.a]?.number === mode.number);
+  const partnerMode = partner ? lumped?.summary.modes[partner.b] : undefined;
+  const moving = { document: shown.document, camera, playback, exaggeration };
+
+  return (
+    <div className="relative flex h-full min-h-0 flex-col">
+      <ModeStrip
+        modes={summary.modes}
+        mode={mode}
+        look={look}
+        states={shown.document.states}
+        stateId={shown.state?.id ?? null}
+        playback={playback}
+        exaggeration={exaggeration}
+        onExaggeration={setExaggeration}
+        onMode={choose}
+        onLook={(value) => set('look', value)}
+        onState={(value) => set('state', value)}
+      />
+      {(stale || !summary.complete) && (
+        <div className="px-4 py-1">
+          {stale && (
+            <Notice kind="caution" word="Stale">
+              The draft has changed since this was solved. Solve again at Frame for its own modes.
+            </Notice>
+          )}
+          {!summary.complete && (
+            <Notice kind="signal" word="Incomplete">
+              Modes may be missing: the none-missed count finds {summary.count.below}, the solver{' '}
+              {summary.count.found}.
+            </Notice>
+          )}
+        </div>
+      )}
+      {look === 'one' && (
+        <div className="relative flex min-h-0 flex-1 flex-col md:block">
+          <MovingFrame {...moving} solved={consistent} mode={mode} label="consistent mass" />
+          <div className="border-rule bg-sheet/90 p-4 max-md:max-h-56 max-md:overflow-y-auto max-md:border-t md:absolute md:top-2 md:left-2 md:w-64 md:border">
+            <ModeDetails mode={mode} summary={summary} document={shown.document} />
+          </div>
+        </div>
+      )}
+      {look === 'beside' && (
+        <div className="min-h-0 flex-1 overflow-y-auto">
+          <div className="grid h-[46%] min-h-72 grid-cols-2 divide-x divide-rule border-b border-rule">
+            <MovingFrame {...moving} solved={consistent} mode={mode} label="consistent mass" />
+            {lumped && partnerMode ? (
+              <MovingFrame {...moving} solved={lumped} mode={partnerMode} label="lumped mass" />
+            ) : (
+              <p className="self-center p-6 text-ink-soft">
+                {lumped
+                  ? 'No lumped mode has this shape within ±30 % of its frequency.'
+                  : 'Lumped mass is not solved for this document and state yet. Solve at Frame.'}
+              </p>
+            )}
+          </div>
+          <div className="p-4 sm:px-6">
+            {pairing && lumped && (
+              <MethodComparison
+                consistent={summary.modes}
+                lumped={lumped.summary.modes}
+                pairing={pairing}
+                selectedMode={mode.number}
+                onChoose={choose}
+              />
+            )}
+          </div>
+        </div>
+      )}
+      {look === 'sheet' && (
+        <div className="min-h-0 flex-1 overflow-y-auto p-4">
+          <ModeSheet
+            modes={summary.modes}
+            shapes={shapes}
+            selectedMode={mode.number}
+            playback={playback}
+            onChoose={choose}
+          />
+          <p className="mt-2 text-sm text-ink-soft">A shape is not an amplitude.</p>
+        </div>
+      )}
+      {look === 'table' && (
+        <div className="min-h-0 flex-1 overflow-y-auto p-4">
+          <ModeTable summary={summary} selectedMode={mode.number} onChoose={choose} />
+        </div>
+      )}
+      {look === 'one' && <ModeTitleBlock project={project} shown={shown} summary={summary} />}
+    </div>
+  );
+}
