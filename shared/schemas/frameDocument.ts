@@ -41,7 +41,7 @@ const positive = finite
   .positive('Must be greater than zero.')
   .refine((value) => value <= 0 || value >= SMALLEST, 'This number is too small.');
 const nonNegative = finite.nonnegative('Must not be negative.');
-const vector3 = z.tuple([finite, finite, finite]);
+const vector3 = z.tuple([finite, finite, finite], 'This must be a list of three numbers.');
 export type Vector3 = z.infer<typeof vector3>;
 
 const perDisplacement = <T extends z.ZodType>(value: T) =>

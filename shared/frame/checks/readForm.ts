@@ -1,4 +1,4 @@
-import { z } from 'zod';
+import type { z } from 'zod';
 
 import type { Issue } from '../../errors/AppError.ts';
 import {
