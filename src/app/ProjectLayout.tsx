@@ -1,0 +1,72 @@
+import { NavLink, Outlet, useParams } from 'react-router-dom';
+import { Link } from 'react-router-dom';
+import { Button } from '#src/components/Button.tsx';
+import { ErrorNote } from '#src/components/ErrorNote.tsx';
+import { Loading } from '#src/components/Loading.tsx';
+import { PageHeading } from '#src/components/PageHeading.tsx';
+import { useProject } from '#src/hooks/useProject.ts';
+import { useProjectEvents } from '#src/hooks/useProjectEvents.ts';
+import { SheetHeader } from './SheetHeader.tsx';
+
+/** The places of a project, in the order of the work. */
+const PLACES = [
+  { to: 'frame', name: 'Frame' },
+  { to: 'modes', name: 'Modes' },
+  { to: 'release', name: 'Release' },
+] as const;
+
+/** A drawing sheet: a slim strip, the view filling everything, the frequency line along the foot. */
+export function ProjectLayout() {
+  const { projectId = '' } = useParams();
+  const project = useProject(projectId);
+  useProjectEvents(projectId);
+  return (
+    <div className="flex h-dvh flex-col">
+      <SheetHeader>
+        <p className="min-w-0 truncate">
+          <span className="font-medium">{project.data?.name}</span>
+          {project.data?.machine && (
+            <span className="ml-2 hidden text-ink-soft lg:inline">{project.data.machine}</span>
+          )}
+        </p>
+        <Places className="hidden shrink-0 sm:flex" />
+      </SheetHeader>
+      <main id="main" className="relative min-h-0 flex-1 overflow-auto">
+        {project.data && <Outlet />}
+        {project.isPending && (
+          <div className="p-6">
+            <Loading what="the project" />
+          </div>
+        )}
+        {project.isError && !project.data && (
+          <div className="max-w-xl space-y-4 p-6">
+            <PageHeading title="Project" />
+            <ErrorNote error={project.error}>
+              <Button onClick={() => void project.refetch()}>Try again</Button>
+              <Button asChild>
+                <Link to="/projects">Projects</Link>
+              </Button>
+            </ErrorNote>
+          </div>
+        )}
+      </main>
+      <Places className="flex justify-around border-t border-pencil sm:hidden" />
+    </div>
+  );
+}
+
+function Places({ className }: { className: string }) {
+  return (
+    <nav aria-label="Project" className={className}>
+      {PLACES.map((place) => (
+        <NavLink
+          key={place.to}
+          to={place.to}
+          className="inline-flex min-h-10 items-center border-b-2 border-transparent px-3 no-underline hover:border-rule aria-[current=page]:border-ink aria-[current=page]:font-medium sm:min-h-8"
+        >
+          {place.name}
+        </NavLink>
+      ))}
+    </nav>
+  );
+}
