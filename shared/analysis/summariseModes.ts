@@ -1,0 +1,168 @@
+import type { FrameModel } from '../frame/assembly/FrameModel.ts';
+import { displacements } from '../frame/freedoms/Combination.ts';
+import { backwardError } from '../numerics/eigen/backwardError.ts';
+import type { ModesResult } from '../numerics/eigen/ModesResult.ts';
+import type { SymmetricCsc } from '../numerics/sparse/SymmetricCsc.ts';
+import type { Vector3 } from '../schemas/frameDocument.ts';
+import type { EnergyShare, ModeSummary, SolveSummary } from '../schemas/solveResult.ts';
+import { attainableMass } from './attainableMass.ts';
+import { rigidInertia } from './massProperties.ts';
+import type { RigidInertia, Six } from './massProperties.ts';
+import { modeEnergies } from './modeEnergies.ts';
+import type { ModeEnergies } from './modeEnergies.ts';
+import { nameModes } from './nameModes.ts';
+import type { ModeCharacter } from './nameModes.ts';
+
+/** Most digits shown: element properties are never known better. */
+const MOST_DIGITS = 9;
+
+export interface SolvedModes {
+  readonly model: FrameModel;
+  readonly K: SymmetricCsc;
+  readonly M: SymmetricCsc;
+  readonly found: ModesResult;
+  /** Number of rigid-body modes, which come first. */
+  readonly rigid: number;
+  readonly totalMass: number;
+  readonly centre: Vector3;
+}
+
+/** Names, participation, effective mass and energies of the modes found. */
+export function summariseModes(solved: SolvedModes): Pick<SolveSummary, 'modes' | 'effectiveMass'> {
+  const { model, M, found, centre } = solved;
+  const inertia = rigidInertia(model, centre);
+  const scratch = new Float64Array(2 * model.free);
+  const details = found.phi.map((phi, i) => {
+    const participation = six((direction) => product(phi, inertia.forces[direction]!));
+    return {
+      participation,
+      effectiveMass: six((direction) => participation[direction]! ** 2),
+      energies: modeEnergies(model, phi),
+      eta: backwardError(solved.K, M, phi, found.lambda[i]!, scratch),
+    };
+  });
+  const names = nameModes(
+    details.map(({ effectiveMass, energies }, i) =>
+      character(solved, i, effectiveMass, energies, inertia),
+    ),
+  );
+  const modes: ModeSummary[] = details.map(
+    ({ participation, effectiveMass, energies, eta }, i) => ({
+      number: i + 1,
+      frequencyHz: Math.sqrt(Math.max(found.lambda[i]!, 0)) / (2 * Math.PI),
+      digits: digitsOf(eta, model.free),
+      backwardError: eta,
+      ...names[i]!,
+      participation,
+      effectiveMass,
+      ...energyShares(model, energies, i < solved.rigid),
+    }),
+  );
+  const attainable = six((direction) => attainableMass(M, inertia.forces[direction]!));
+  const onFixed = ([0, 1, 2] as const).map((direction) =>
+    Math.max(0, inertia.total[direction] - attainable[direction]),
+  );
+  return {
+    modes,
+    effectiveMass: {
+      sum: six((direction) =>
+        details.reduce((sum, mode) => sum + mode.effectiveMass[direction]!, 0),
+      ),
+      attainable,
+      total: inertia.total,
+      onFixed: [onFixed[0]!, onFixed[1]!, onFixed[2]!],
+    },
+  };
+}
+
+function six(value: (direction: number) => number): Six {
+  return [value(0), value(1), value(2), value(3), value(4), value(5)];
+}
+
+function product(a: Float64Array, b: Float64Array): number {
+  let sum = 0;
+  for (let i = 0; i < a.length; i++) sum += a[i]! * b[i]!;
+  return sum;
+}
+
+/**
+ * Significant digits of a frequency that its backward error η supports. λ is a Rayleigh quotient of element energies, whose error
+ * is of second order in the shape's; 10 √n η bounds what orderings and machines were seen to change.
+ */
+function digitsOf(eta: number, n: number): number {
+  const relative = 10 * Math.sqrt(n) * Math.max(eta, Number.EPSILON);
+  return Math.min(Math.max(Math.floor(-Math.log10(relative)), 1), MOST_DIGITS);
+}
+
+/** Shares of the strain and the kinetic energy; a rigid-body mode stores no strain, so its strain shares are empty. */
+function energyShares(
+  model: FrameModel,
+  energies: ModeEnergies,
+  rigid: boolean,
+): Pick<ModeSummary, 'strainShares' | 'kineticShares'> {
+  const { members, masses } = model.document;
+  const byMember = (values: Float64Array, total: number) =>
+    members.map(({ id }, i) => ({ id, share: values[i]! / total }));
+  const ties = (owner: 'joint' | 'support' | 'spring'): EnergyShare[] => {
+    const byId = new Map<string, number>();
+    model.ties.forEach((tie, i) => {
+      if (tie.owner !== owner) return;
+      byId.set(tie.id, (byId.get(tie.id) ?? 0) + energies.ties[i]!);
+    });
+    return [...byId].map(([id, energy]) => ({ id, share: energy / energies.strain }));
+  };
+  return {
+    strainShares: rigid
+      ? { members: [], joints: [], supports: [], springs: [] }
+      : {
+          members: byMember(energies.members, energies.strain),
+          joints: ties('joint'),
+          supports: ties('support'),
+          springs: ties('spring'),
+        },
+    kineticShares: {
+      members: byMember(energies.kineticMembers, energies.kinetic),
+      masses: masses.map(({ id }, i) => ({
+        id,
+        share: energies.kineticMasses[i]! / energies.kinetic,
+      })),
+    },
+  };
+}
+
+function character(
+  { model, found, rigid, totalMass }: SolvedModes,
+  mode: number,
+  effectiveMass: Six,
+  energies: ModeEnergies,
+  { total }: RigidInertia,
+): ModeCharacter {
+  const meanSquares: [number, number, number] = [0, 0, 0];
+  const meanTurns: [number, number, number] = [0, 0, 0];
+  const d = new Float64Array(12);
+  const phi = found.phi[mode]!;
+  const size = model.scale * model.scale;
+  for (const { part, motion } of model.segments) {
+    displacements(motion, phi, d);
+    const { x, y, z } = part.axes;
+    const inGlobal = (from: number, k: 0 | 1 | 2) =>
+      x[k] * d[from]! + y[k] * d[from + 1]! + z[k] * d[from + 2]!;
+    for (const k of [0, 1, 2] as const) {
+      meanSquares[k] += inGlobal(motion.rows / 2, k) ** 2;
+      if (motion.rows === 12) meanTurns[k] += size * inGlobal(9, k) ** 2;
+    }
+  }
+  return {
+    rigid: mode < rigid,
+    effectiveShares: six((direction) =>
+      total[direction]! > 0 ? effectiveMass[direction]! / total[direction]! : 0,
+    ),
+    memberShares: model.parts.map(({ member, properties, axes, index }) => ({
+      name: member.name ?? member.id,
+      energy: energies.kineticMembers[index]! / energies.kinetic,
+      mass: ((properties.rho * properties.A + properties.massPerLength) * axes.length) / totalMass,
+    })),
+    meanSquares,
+    meanTurns,
+  };
+}
