@@ -1,9 +1,153 @@
-import type { SymmetricCsc } from '../sparse/SymmetricCsc.ts';
-import type { ModesOptions, ModesResult } from './ModesResult.ts';
+import { analyse } from '../factor/analyse.ts';
+import { multiplySymmetric, type SymmetricCsc } from '../sparse/SymmetricCsc.ts';
+import { clearGap } from './clearGap.ts';
+import { ModeSearch } from './ModeSearch.ts';
+import type { ModesOptions, ModesResult, ModesTiming } from './ModesResult.ts';
 
-/** Lowest eigenpairs of K φ = λ M φ; see ModesOptions and ModesResult. */
-export declare function lowestModes(
+/** Shifts that may be tried to lower a count check that takes in far more than was asked for. */
+const MOST_LOWERINGS = 4;
+
+/**
+ * Lowest eigenpairs of  K φ = λ M φ,  none missed:  φᵀMφ = 1, λ ascending.
+ *   K        n×n, symmetric positive semidefinite [N/m, N, N·m]
+ *   M        n×n, symmetric positive semidefinite, may be singular [kg, kg·m, kg·m²]
+ *   options  how many or up to which λ [rad²/s²], null vectors of K, seed, hooks
+ * All modes up to the first clear gap above the wanted ones are found by shift-invert Lanczos; the
+ * negative pivots of K − σM at a σ in that gap count the eigenvalues below it (Sylvester). Where
+ * the count says that some are missing (several equal frames in one), they are looked for with
+ * wider blocks, orthogonal to those found. A run that cannot find them, or is stopped, returns what
+ * it has with complete = false.
+ * Throws ZeroPivotError when K has a null vector that is not among `nullVectors` (its `motion` is
+ * that vector) or K and M have one in common; RangeError for impossible options.
+ * Source: Ericsson and Ruhe 1980, Math. Comp. 35, 1251–1268; Grimes, Lewis and Simon 1994, SIAM J.
+ * Matrix Anal. Appl. 15(1), 228–272; Bathe, Finite Element Procedures, section 11.3 (Sturm check).
+ */
+export function lowestModes(K: SymmetricCsc, M: SymmetricCsc, options: ModesOptions): ModesResult {
+  const { count, upToLambda, clock } = options;
+  if ((count === undefined) === (upToLambda === undefined)) {
+    throw new RangeError('Give either count or upToLambda.');
+  }
+  if (count !== undefined && !(Number.isInteger(count) && count >= 1)) {
+    throw new RangeError(`count must be a whole number from 1, not ${count}.`);
+  }
+  if (upToLambda !== undefined && !(upToLambda >= 0 && upToLambda < Infinity)) {
+    throw new RangeError(`upToLambda must be a finite number from 0, not ${upToLambda}.`);
+  }
+  const symbolic = options.symbolic ?? analyse(K, M, clock);
+  const timing: ModesTiming = {
+    order: options.symbolic ? 0 : symbolic.timing.order,
+    symbolic: options.symbolic ? 0 : symbolic.timing.symbolic,
+    factor: 0,
+    iterate: 0,
+    finish: 0,
+    certify: 0,
+  };
+  const search = new ModeSearch(K, M, options, symbolic, timing);
+  const floor = upToLambda ?? -Infinity;
+  let wanted = Math.min(count ?? 0, K.n);
+  if (upToLambda !== undefined) {
+    // How many there are is known before any is found; an eigenvalue at the limit itself is settled
+    // by the gap above it.
+    wanted = search.inertia(upToLambda) ?? search.inertia(upToLambda * (1 + 1e-6)) ?? search.rigid;
+  }
+  search.findLowest(wanted, floor);
+
+  let sigma = search.pencil().sigma;
+  let below = search.negativePivots;
+  let certain = false;
+  if (!search.stopped) {
+    const lambda = search.ascending();
+    let gap = clearGap(lambda, wanted, floor);
+    const atEnd = gap < 0 && search.exhausted;
+    if (atEnd) gap = lambda.length;
+    let check = gap >= 0 ? search.certify(gap, floor) : null;
+    if (check !== null) {
+      check = lower(search, lambda, wanted, floor, gap, check);
+      sigma = check.sigma;
+      below = check.negativePivots;
+      const missing = below - search.countBelow(sigma);
+      certain = missing === 0 || (missing > 0 && search.recover(missing, sigma));
+    }
+  }
+  return finish(K, search, options, wanted, { sigma, below, certain });
+}
+
+/**
+ * Where each eigenvalue is multiple, the modes found reach much higher than the wanted count needs:
+ * a lower gap then does with fewer to recover.
+ */
+function lower(
+  search: ModeSearch,
+  lambda: Float64Array,
+  wanted: number,
+  floor: number,
+  gap: number,
+  check: { sigma: number; negativePivots: number },
+): { sigma: number; negativePivots: number } {
+  let best = check;
+  let high = gap;
+  let low = 0;
+  for (let k = 0; k < MOST_LOWERINGS && best.negativePivots > 2 * wanted; k++) {
+    if (best.negativePivots === search.countBelow(best.sigma)) break;
+    const aim = Math.ceil((high * wanted) / best.negativePivots);
+    const middle = clearGap(lambda, Math.max(low + 1, aim), floor);
+    if (middle < 0 || middle >= high) break;
+    const tried = search.certify(middle, floor);
+    if (tried === null) break;
+    if (tried.negativePivots >= wanted) {
+      best = tried;
+      high = middle;
+    } else {
+      low = middle;
+    }
+  }
+  return best;
+}
+
+/** Rayleigh quotients, order, and the modes asked for. */
+function finish(
   K: SymmetricCsc,
-  M: SymmetricCsc,
+  search: ModeSearch,
   options: ModesOptions,
-): ModesResult;
+  wanted: number,
+  check: { sigma: number; below: number; certain: boolean },
+): ModesResult {
+  const clock = options.clock ?? (() => 0);
+  const begin = clock();
+  const { modes, timing } = search;
+  const Kphi = new Float64Array(K.n);
+  const quotient = new Float64Array(modes.count);
+  for (let r = search.rigid; r < modes.count; r++) {
+    const phi = modes.vectors[r]!;
+    if (options.refineLambda === undefined) {
+      multiplySymmetric(K, phi, Kphi);
+      let sum = 0;
+      for (let i = 0; i < K.n; i++) sum += phi[i]! * Kphi[i]!;
+      quotient[r] = sum;
+    } else {
+      quotient[r] = options.refineLambda(phi);
+    }
+  }
+  const order = Int32Array.from(quotient, (_, r) => r).sort(
+    (a, b) => quotient[a]! - quotient[b]! || a - b,
+  );
+  const found = search.countBelow(check.sigma);
+  const limit = options.upToLambda ?? Infinity;
+  const most = options.count === undefined ? modes.count : wanted;
+  const returned = Array.from(order)
+    .filter((r) => !check.certain || search.lambda[r]! < check.sigma)
+    .filter((r) => quotient[r]! <= limit)
+    .slice(0, most);
+  timing.finish += clock() - begin;
+  options.onProgress?.(1);
+  return {
+    lambda: Float64Array.from(returned, (r) => quotient[r]!),
+    phi: returned.map((r) => modes.vectors[r]!),
+    sigma: check.sigma,
+    below: check.below,
+    found,
+    complete: check.certain,
+    status: check.certain ? 'complete' : 'partial',
+    timing,
+  };
+}
