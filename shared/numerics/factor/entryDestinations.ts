@@ -14,7 +14,7 @@ export function entryDestinations(symbolic: SymbolicFactor, pattern: SymmetricPa
     throw new RangeError(`A matrix of order ${pattern.n} was given to a factor of order ${n}.`);
   }
   const nodeOf = new Int32Array(n);
-  for (let s = 0; s < supernodes; s++) nodeOf.fill(s, first[s]!, first[s + 1]!);
+  for (let s = 0; s < supernodes; s++) nodeOf.fill(s, first[s], first[s + 1]);
   const { colPtr, rowIdx } = pattern;
   const result = new Int32Array(colPtr[n]!);
   for (let j = 0; j < n; j++) {

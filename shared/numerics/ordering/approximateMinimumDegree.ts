@@ -175,7 +175,7 @@ export function approximateMinimumDegree(graph: AdjacencyGraph, weight: Int32Arr
         for (let v = i; v >= 0; v = memberNext[v]!) order[ordered++] = v;
         continue;
       }
-      if (elements + keptElements === variables && variableCount[i]! > 0) {
+      if (elements + keptElements === variables && variableCount[i] > 0) {
         buffer[variables + keptVariables] = buffer[variables]!;
         variableAt[i] = variables + 1;
       }
