@@ -8,10 +8,10 @@ import {
   type Sequelize,
 } from 'sequelize';
 import { ROLES, type Role } from '#shared/schemas/common.ts';
-import { UNIT_SYSTEMS, type Theme } from '#shared/schemas/session.ts';
+import type { Theme } from '#shared/schemas/session.ts';
+import { UNIT_SYSTEMS, type UnitSystem } from '#shared/units/displayUnits.ts';
 import { Team } from './Team.ts';
 
-export type UnitSystem = (typeof UNIT_SYSTEMS)[number];
 
 export class Person extends Model<InferAttributes<Person>, InferCreationAttributes<Person>> {
   declare id: CreationOptional<string>;

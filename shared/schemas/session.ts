@@ -1,8 +1,8 @@
 import { z } from 'zod';
+import { UNIT_SYSTEMS } from '../units/displayUnits.ts';
 import { emailAddress, newPassword, noContent, nothing, personName, role, uuid } from './common.ts';
 import { endpoint } from './endpoint.ts';
 
-export const UNIT_SYSTEMS = ['m-kg-N', 'mm-kg-N', 'in-lbm-lbf'] as const;
 export const unitSystem = z.enum(UNIT_SYSTEMS);
 export const theme = z.enum(['paper', 'chalk', 'system']);
 export type Theme = z.infer<typeof theme>;
