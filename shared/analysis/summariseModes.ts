@@ -31,7 +31,7 @@ export interface SolvedModes {
 export function summariseModes(solved: SolvedModes): Pick<SolveSummary, 'modes' | 'effectiveMass'> {
   const { model, M, found, centre } = solved;
   const inertia = rigidInertia(model, centre);
-  const scratch = new Float64Array(2 * model.free);
+  const scratch = new Float64Array(4 * model.free);
   const details = found.phi.map((phi, i) => {
     const participation = six((direction) => product(phi, inertia.forces[direction]!));
     return {

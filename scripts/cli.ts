@@ -1,0 +1,29 @@
+import { AppError } from '#shared/errors/AppError.ts';
+import { reportFailure } from './cli/reportFailure.ts';
+import { solve } from './cli/solve.ts';
+import type { Streams } from './cli/Streams.ts';
+
+/** Every verb of the command line; each returns the exit code. */
+const VERBS = new Map<string, (args: string[], streams: Streams) => Promise<number>>([
+  ['solve', solve],
+]);
+
+async function run(args: string[], streams: Streams): Promise<number> {
+  const [verb, ...rest] = args;
+  try {
+    const command = VERBS.get(verb ?? '');
+    if (!command) {
+      const wrong = verb === undefined ? 'Say what to do' : `There is no command “${verb}”`;
+      throw new AppError('invalid-request', `${wrong}. Commands: ${[...VERBS.keys()].join(', ')}.`);
+    }
+    return await command(rest, streams);
+  } catch (error) {
+    return reportFailure(error, args.includes('--json'), streams);
+  }
+}
+
+process.exitCode = await run(process.argv.slice(2), {
+  input: process.stdin,
+  out: (text) => process.stdout.write(text),
+  err: (text) => process.stderr.write(text),
+});
