@@ -12,7 +12,6 @@ import type { Theme } from '#shared/schemas/session.ts';
 import { UNIT_SYSTEMS, type UnitSystem } from '#shared/units/displayUnits.ts';
 import { Team } from './Team.ts';
 
-
 export class Person extends Model<InferAttributes<Person>, InferCreationAttributes<Person>> {
   declare id: CreationOptional<string>;
   declare teamId: string;
