@@ -1,7 +1,7 @@
 import type { DividedPart, FrameModel } from '../frame/assembly/FrameModel.ts';
 import { displacements } from '../frame/freedoms/Combination.ts';
 import { add, scale } from '../frame/vector3.ts';
-import type { ModeShapes } from './ModeShapes.ts';
+import type { ModeShapes } from './shapesFile.ts';
 
 /**
  * Displacements of every node, then of every member's stations from start to end, in each mode.

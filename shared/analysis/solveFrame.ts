@@ -13,7 +13,7 @@ import { DEFAULT_SOLVE_SETTINGS } from '../schemas/solveResult.ts';
 import type { Method, ModelWarning, SolveSettings, SolveSummary } from '../schemas/solveResult.ts';
 import { massProperties } from './massProperties.ts';
 import { lambdaFromEnergies } from './modeEnergies.ts';
-import type { ModeShapes } from './ModeShapes.ts';
+import type { ModeShapes } from './shapesFile.ts';
 import { shapesAtPoints } from './shapesAtPoints.ts';
 import { summariseModes } from './summariseModes.ts';
 import { SOLVER_VERSION } from './solverVersion.ts';

@@ -8,10 +8,13 @@ import { queryKeys } from '#src/lib/queryKeys.ts';
 export const useSolveShapes = (solveId: string | null) =>
   useQuery({
     queryKey: queryKeys.solveShapes(solveId ?? ''),
-    queryFn: async ({ signal }) =>
-      decodeShapes(
-        await callBinary(readSolveShapes, { params: { solveId: solveId ?? '' }, signal }),
-      ),
+    queryFn: async ({ signal }) => {
+      const bytes = await callBinary(readSolveShapes, {
+        params: { solveId: solveId ?? '' },
+        signal,
+      });
+      return decodeShapes(new Uint8Array(bytes));
+    },
     enabled: solveId !== null,
     staleTime: Infinity,
   });
