@@ -27,6 +27,8 @@ export type QueueName = keyof JobData;
  * the run-time role may not make.
  */
 export const queues: readonly (PgBoss.Queue & { readonly name: QueueName })[] = [
-  { name: 'solve' },
+  // The row of the solve decides whether there is anything to do, so a job is never tried twice; it may last
+  // as long as the longest time limit.
+  { name: 'solve', retryLimit: 0, expireInSeconds: 21_600 },
   { name: 'mail', retryLimit: 10, retryDelay: 15, retryBackoff: true, expireInSeconds: 120 },
 ];

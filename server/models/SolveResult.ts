@@ -6,7 +6,23 @@ import {
   type InferCreationAttributes,
   type Sequelize,
 } from 'sequelize';
+import { fingerprint } from '#shared/frame/fingerprint.ts';
 import type { Method, SolveSettings, SolveSummary } from '#shared/schemas/solveResult.ts';
+
+/** What a result depends on, and nothing else. */
+export interface ResultSubject {
+  readonly documentFingerprint: string;
+  readonly stateId: string | null;
+  readonly method: Method;
+  readonly settings: SolveSettings;
+  readonly solverVersion: string;
+}
+
+/** The key under which a team stores the result. */
+export const resultKey = (subject: ResultSubject): string => {
+  const { documentFingerprint, stateId, method, settings, solverVersion } = subject;
+  return fingerprint({ documentFingerprint, stateId, method, settings, solverVersion });
+};
 
 /** What a solver returned, by key; never changed. The shapes are only loaded where they are asked for. */
 export class SolveResult extends Model<

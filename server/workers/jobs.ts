@@ -70,9 +70,14 @@ export async function enqueue<Q extends QueueName>(
 ): Promise<void> {
   await running().send(queue, data, { ...options, db: inside(transaction) });
   transaction.afterCommit(() => {
-    const worker = workers.get(queue);
-    if (worker !== undefined) boss?.notifyWorker(worker);
+    nudge(queue);
   });
+}
+
+/** Lets this process's worker on the queue look for a job now. */
+export function nudge(queue: QueueName): void {
+  const worker = workers.get(queue);
+  if (worker !== undefined) boss?.notifyWorker(worker);
 }
 
 /** The transaction's connection as pg-boss wants it. */

@@ -1,0 +1,83 @@
+import { fileURLToPath } from 'node:url';
+import { MessageChannel } from 'node:worker_threads';
+import { Piscina } from 'piscina';
+import type { SolveReply } from '#shared/analysis/runSolve.ts';
+import type { SolveRequest } from '#shared/analysis/solveFrame.ts';
+import { AppError, type ErrorCode } from '#shared/errors/AppError.ts';
+import type { Config } from '#server/config/config.ts';
+import { memoryLimit, type SolveProgress, type SolveTask } from './solveWorker.ts';
+
+const MEGABYTE = 1024 * 1024;
+
+/** From sources the thread runs TypeScript as its parent does; bundled, it lies in a folder beside the two programs. */
+const fromSources = import.meta.url.endsWith('.ts');
+const file = fromSources ? './solveWorker.ts' : './workers/solveWorker.js';
+
+export interface SolverThread {
+  /** Resolves when everything the solver needs is loaded. */
+  readonly warm: () => Promise<void>;
+  /**
+   * Solves in the thread. Aborting terminates the thread at once, whatever it is doing; a fresh one takes
+   * its place.
+   *
+   * @throws the signal's reason when aborted
+   */
+  readonly solve: (
+    request: SolveRequest,
+    signal: AbortSignal,
+    onProgress: (progress: SolveProgress) => void,
+  ) => Promise<SolveReply>;
+  readonly close: () => Promise<void>;
+}
+
+/** One worker thread that solves, with limits on the memory and the time of each solve. */
+export function startSolverThread(
+  config: Pick<Config, 'solveTimeLimitMs' | 'solveMemoryLimitMb'>,
+): SolverThread {
+  const { solveTimeLimitMs, solveMemoryLimitMb } = config;
+  const pool = new Piscina<SolveTask | undefined, unknown>({
+    filename: fileURLToPath(new URL(file, import.meta.url)),
+    execArgv: fromSources ? ['--import', 'tsx'] : [],
+    minThreads: 1,
+    maxThreads: 1,
+    resourceLimits: { maxOldGenerationSizeMb: solveMemoryLimitMb },
+  });
+  return {
+    warm: async () => {
+      await pool.run(undefined, { name: 'warm' });
+    },
+    solve: async (request, signal, onProgress) => {
+      const { port1, port2 } = new MessageChannel();
+      port1.on('message', onProgress);
+      const timeLimit = AbortSignal.timeout(solveTimeLimitMs);
+      const either = AbortSignal.any([signal, timeLimit]);
+      try {
+        const task = { request, port: port2, memoryLimitBytes: solveMemoryLimitMb * MEGABYTE };
+        return (await pool.run(task, { transferList: [port2], signal: either })) as SolveReply;
+      } catch (error) {
+        if (signal.aborted) throw signal.reason;
+        if (timeLimit.aborted) return failed('time-limit', timeLimitMessage(solveTimeLimitMs));
+        if (isOutOfMemory(error)) return { kind: 'failed', error: memoryLimit().toWire() };
+        throw error;
+      } finally {
+        port1.close();
+      }
+    },
+    close: () => pool.destroy(),
+  };
+}
+
+const failed = (code: ErrorCode, message: string): SolveReply => ({
+  kind: 'failed',
+  error: new AppError(code, message).toWire(),
+});
+
+const timeLimitMessage = (ms: number): string =>
+  `The solve took longer than the ${ms / 1000} s that a solve may take: fewer divisions or modes make it faster.`;
+
+/** The thread's heap limit, or a typed array that could not be had. */
+function isOutOfMemory(error: unknown): boolean {
+  if (!(error instanceof Error)) return false;
+  if ('code' in error && error.code === 'ERR_WORKER_OUT_OF_MEMORY') return true;
+  return error.name === 'RangeError' && error.message.includes('Array buffer allocation failed');
+}
