@@ -1,3 +1,4 @@
+import { setMaxListeners } from 'node:events';
 import cookieParser from 'cookie-parser';
 import express, { type Express } from 'express';
 import pg from 'pg';
@@ -21,6 +22,8 @@ export interface App {
   readonly express: Express;
   /** What is mounted, in order. */
   readonly routes: readonly Route[];
+  /** Ends the event streams, which would otherwise keep the server from stopping. */
+  readonly closeStreams: () => void;
   /** Lets go of the database connections of sessions and rate limits. */
   readonly close: () => Promise<void>;
 }
@@ -42,7 +45,11 @@ export function createApp(config: Config, log: Log, solverIsReady: () => boolean
   const limits = rateLimits(pool, config.rateLimitScale);
   const csrf = csrfTokens(config);
   const sessions = authentication(config, pool, verifyCredentials);
-  const routes = endpoints({ config, log, limits, csrf, solverIsReady });
+  const closing = new AbortController();
+  // One listener per open event stream is no leak.
+  setMaxListeners(0, closing.signal);
+  const services = { config, log, limits, csrf, solverIsReady, closing: closing.signal };
+  const routes = endpoints(services);
 
   const app = express();
   app.disable('x-powered-by');
@@ -59,5 +66,8 @@ export function createApp(config: Config, log: Log, solverIsReady: () => boolean
     sessions.close();
     await pool.end();
   };
-  return { express: app, routes, close };
+  const closeStreams = () => {
+    closing.abort();
+  };
+  return { express: app, routes, closeStreams, close };
 }

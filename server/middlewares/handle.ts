@@ -31,13 +31,16 @@ interface Call<P extends z.ZodType, Q extends z.ZodType, B extends z.ZodType, Wh
   readonly response: Response;
 }
 
+/** Nothing where the contract answers nothing. */
+type Answer<R extends z.ZodType> = [z.output<R>] extends [undefined] ? void : z.output<R>;
+
 type Handler<
   P extends z.ZodType,
   Q extends z.ZodType,
   B extends z.ZodType,
   R extends z.ZodType,
   Who,
-> = (call: Call<P, Q, B, Who>) => Promise<z.output<R>> | z.output<R>;
+> = (call: Call<P, Q, B, Who>) => Promise<Answer<R>> | Answer<R>;
 
 /**
  * Serves an endpoint that needs a sign-in: reads and checks the input by the contract, calls `work`, sends

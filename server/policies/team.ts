@@ -10,7 +10,8 @@ export interface TeamSubjects {
   /** Name, settings, invitations. */
   readonly 'administer-team': TeamSubject;
   readonly 'read-sent-mail': TeamSubject;
-  readonly 'read-activity': TeamSubject;
+  /** Who joined, whose role changed; what happens in a project goes by `read-project`. */
+  readonly 'read-team-activity': TeamSubject;
   readonly 'create-project': TeamSubject;
 }
 
@@ -26,7 +27,10 @@ export const teamRules: Rules<TeamSubjects> = {
   'read-team': belongs,
   'administer-team': administers,
   'read-sent-mail': administers,
-  'read-activity': belongs,
+  'read-team-activity': (actor, team) => {
+    if (actor.teamId !== team.id) return hidden;
+    return actor.role === 'guest' ? forbidden('Guests see their projects only.') : allowed;
+  },
   'create-project': (actor, team) => {
     if (actor.teamId !== team.id) return hidden;
     return actor.role === 'designer' ? allowed : forbidden('Only designers make projects.');

@@ -1,6 +1,20 @@
 import type { Route } from '#server/middlewares/handle.ts';
+import { accountRoutes } from './account.ts';
+import { activityRoutes } from './activity.ts';
 import { healthRoutes } from './health.ts';
+import { openApiRoute } from './openapi.ts';
 import type { Services } from './services.ts';
+import { sessionRoutes } from './session.ts';
+import { teamRoutes } from './team.ts';
 
 /** Every endpoint of the product: mounted, listed in the OpenAPI document, held against the access table. */
-export const endpoints = (services: Services): readonly Route[] => [...healthRoutes(services)];
+export function endpoints(services: Services): readonly Route[] {
+  const routes = [
+    ...healthRoutes(services),
+    ...sessionRoutes(services),
+    ...accountRoutes(services),
+    ...teamRoutes(services),
+    ...activityRoutes(),
+  ];
+  return [...routes, openApiRoute(services, routes)];
+}

@@ -11,4 +11,6 @@ export interface Services {
   readonly csrf: CsrfTokens;
   /** Whether the solver thread is warm; true where no runner works inside the server. */
   readonly solverIsReady: () => boolean;
+  /** Aborted when the server stops: event streams end then, since nothing else would end them. */
+  readonly closing: AbortSignal;
 }
