@@ -1,0 +1,81 @@
+import { useCallback, useEffect, useRef, type RefObject } from 'react';
+import type { Vector3 } from '#shared/schemas/frameDocument.ts';
+import type { CameraStore, ViewSize } from '../camera/cameraStore.ts';
+import { makeProjection, type Projection } from '../camera/projection.ts';
+import { drawSheet, type Sheet } from './drawSheet.ts';
+import { placeBeside } from './placeBeside.ts';
+
+interface Anchored {
+  readonly at: Vector3;
+  readonly element: RefObject<HTMLElement | null>;
+}
+
+/**
+ * Draws the inked layer whenever what it shows, the camera or the size changes, at most once per screen frame, and
+ * keeps the anchored element beside its point. Returns the ref of its canvas.
+ */
+export function useOverlay(
+  camera: CameraStore,
+  size: ViewSize,
+  anchored: Anchored | undefined,
+  content: Omit<Sheet, 'projection'>,
+): RefObject<HTMLCanvasElement | null> {
+  const canvas = useRef<HTMLCanvasElement>(null);
+  const draw = useRef<() => void>(() => {});
+  const handle = useRef<number | null>(null);
+
+  const request = useCallback(() => {
+    handle.current ??= requestAnimationFrame(() => {
+      handle.current = null;
+      draw.current();
+    });
+  }, []);
+
+  useEffect(() => {
+    draw.current = () => {
+      const projection = makeProjection(camera.get(), size);
+      drawOn(canvas.current, { ...content, projection });
+      placeAnchored(anchored, projection);
+    };
+    request();
+  });
+  useEffect(() => camera.subscribe(request), [camera, request]);
+  // Names are drawn in the application's own type, which may arrive after the first drawing.
+  useEffect(() => {
+    void document.fonts?.ready.then(request);
+  }, [request]);
+  useEffect(
+    () => () => {
+      if (handle.current !== null) cancelAnimationFrame(handle.current);
+      handle.current = null;
+    },
+    [],
+  );
+  return canvas;
+}
+
+function drawOn(canvas: HTMLCanvasElement | null, sheet: Sheet): void {
+  const pen = canvas?.getContext('2d');
+  if (!canvas || !pen) return;
+  const { width, height } = sheet.projection.size;
+  const density = window.devicePixelRatio || 1;
+  const across = Math.round(width * density);
+  const down = Math.round(height * density);
+  // Setting either clears the canvas and its state, so only when it differs.
+  if (canvas.width !== across) canvas.width = across;
+  if (canvas.height !== down) canvas.height = down;
+  pen.setTransform(density, 0, 0, density, 0, 0);
+  drawSheet(pen, sheet);
+}
+
+function placeAnchored(anchored: Anchored | undefined, projection: Projection): void {
+  const element = anchored?.element.current;
+  if (!anchored || !element) return;
+  const spot = projection.project(anchored.at);
+  const { x, y } = placeBeside(
+    spot,
+    { width: element.offsetWidth, height: element.offsetHeight },
+    projection.size,
+  );
+  element.style.transform = `translate(${Math.round(x)}px, ${Math.round(y)}px)`;
+}
