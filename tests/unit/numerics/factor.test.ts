@@ -1,5 +1,5 @@
 import fc from 'fast-check';
-import { describe, expect, it } from 'vitest';
+import { describe, expect, it, vi } from 'vitest';
 import { analyse } from '#shared/numerics/factor/analyse.ts';
 import { factorise } from '#shared/numerics/factor/factorise.ts';
 import { solveLdlt } from '#shared/numerics/factor/solve.ts';
@@ -16,6 +16,9 @@ import {
   type Triplet,
 } from './pencils.ts';
 import { rackPair } from './rackPair.ts';
+
+// Properties run a hundred cases each; a busy machine takes its time.
+vi.setConfig({ testTimeout: 60_000 });
 
 function zeroPivotOf(run: () => unknown): ZeroPivotError {
   try {

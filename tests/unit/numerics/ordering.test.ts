@@ -30,7 +30,7 @@ function inverse(order: Int32Array): Int32Array {
 function eliminate(graph: AdjacencyGraph, order: Int32Array): number[][] {
   const place = inverse(order);
   const later = Array.from(order, (v, k) => {
-    const all = graph.adjacent.subarray(graph.ptr[v]!, graph.ptr[v + 1]!);
+    const all = graph.adjacent.subarray(graph.ptr[v], graph.ptr[v + 1]);
     return new Set(Array.from(all, (u) => place[u]!).filter((q) => q > k));
   });
   for (const column of later) {

@@ -102,7 +102,7 @@ export function arbitraryPencil(massless: boolean): fc.Arbitrary<RandomPencil> {
         const triplets = spring(0, -1, ground);
         ties.forEach(([to, k], i) => triplets.push(...spring(i + 1, (to % (i + 2)) - 1, k)));
         for (const [i, j, k] of extra) if (i !== j) triplets.push(...spring(i, j, k));
-        const mass = drawn.map((m) => Math.max(m, 0) / 10);
+        const mass: number[] = drawn.map((m) => Math.max(m, 0) / 10);
         if (mass.every((m) => m === 0)) mass[0] = 1;
         return { n, mass, triplets, K: sparse(n, triplets), M: diagonal(mass) };
       }),
@@ -110,4 +110,4 @@ export function arbitraryPencil(massless: boolean): fc.Arbitrary<RandomPencil> {
 }
 
 /** Fixed seed of every property here. */
-export const PROPERTY = { seed: 1852, numRuns: 150 };
+export const PROPERTY = { seed: 1852, numRuns: 100 };

@@ -136,3 +136,18 @@ export function rackPair(size: RackSize): RackPair {
     unknowns,
   };
 }
+
+/** The six rigid-body motions of an unclamped rack: along and about X, Y, Z. */
+export function rigidMotions(pair: RackPair): Float64Array[] {
+  return [0, 1, 2, 3, 4, 5].map((motion) =>
+    Float64Array.from(pair.unknowns, ({ at: [x, y, z], displacement }) => {
+      if (motion < 3) return displacement === motion ? 1 : 0;
+      const moved = [
+        [0, -z, y, 1, 0, 0],
+        [z, 0, -x, 0, 1, 0],
+        [-y, x, 0, 0, 0, 1],
+      ];
+      return moved[motion - 3]![displacement]!;
+    }),
+  );
+}
