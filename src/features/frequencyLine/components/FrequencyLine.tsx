@@ -1,5 +1,6 @@
 import { useState } from 'react';
 import type { ModeSummary, SolveSummary } from '#shared/schemas/solveResult.ts';
+import { formatFrequency } from '#shared/units/formatFrequency.ts';
 import { useElementWidth } from '#src/hooks/useElementWidth.ts';
 import { frequencyScale, type ScaleKind } from '../state/frequencyScale.ts';
 import { layOutMarks } from '../state/layOutMarks.ts';
@@ -19,12 +20,10 @@ export interface FrequencyLineProps {
 /** Space at both ends, so that the first and last labels do not run off the sheet. */
 const SIDE_PX = 36;
 
-const formatHz = (mode: ModeSummary): string => `${significant(mode.frequencyHz)} Hz`;
+/** More than four digits no support condition of a machine warrants on a line. */
+const DIGITS = 4;
 
-/** Four significant digits: more than that no support condition of a machine warrants on a line. */
-function significant(hz: number): string {
-  return hz >= 1000 ? hz.toFixed(0) : hz.toPrecision(4);
-}
+const formatHz = (mode: ModeSummary): string => formatFrequency(mode.frequencyHz, DIGITS);
 
 const describe = (mode: ModeSummary): string =>
   `Mode ${mode.number}, ${formatHz(mode)}, ${mode.name}`;

@@ -20,7 +20,7 @@ export function ModeTitleBlock({ project, shown, summary }: ModeTitleBlockProps)
         ['Machine', project.machine === '' ? project.name : project.machine],
         ['Revision', shown.label],
         ['State', shown.state?.name ?? 'as drawn'],
-        ['Mass', units.format(summary.totalMassKg, 'mass')],
+        ['Mass', units.quantity(summary.totalMassKg, 'mass')],
         ['Mass kind', `${summary.method}, ${summary.freeDof.toLocaleString('en')} unknowns`],
         [
           'None missed',

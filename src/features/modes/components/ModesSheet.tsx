@@ -121,8 +121,14 @@ export function ModesSheet({ project, shown, stale, consistent, lumped }: ModesS
       )}
       {look === 'one' && (
         <div className="relative flex min-h-0 flex-1 flex-col md:block">
-          <MovingFrame {...moving} solved={consistent} mode={mode} label="consistent mass" />
-          <div className="border-rule bg-sheet/90 p-4 max-md:max-h-56 max-md:overflow-y-auto max-md:border-t md:absolute md:top-2 md:left-2 md:w-64 md:border">
+          <MovingFrame
+            {...moving}
+            shapes={shapes}
+            index={summary.modes.indexOf(mode)}
+            mode={mode}
+            label="consistent mass"
+          />
+          <div className="border-rule bg-sheet/90 p-4 max-md:max-h-56 max-md:overflow-y-auto max-md:border-t md:absolute md:top-12 md:left-2 md:w-64 md:border">
             <ModeDetails mode={mode} summary={summary} document={shown.document} />
           </div>
         </div>
@@ -130,9 +136,21 @@ export function ModesSheet({ project, shown, stale, consistent, lumped }: ModesS
       {look === 'beside' && (
         <div className="min-h-0 flex-1 overflow-y-auto">
           <div className="grid h-[46%] min-h-72 grid-cols-2 divide-x divide-rule border-b border-rule">
-            <MovingFrame {...moving} solved={consistent} mode={mode} label="consistent mass" />
-            {lumped && partnerMode ? (
-              <MovingFrame {...moving} solved={lumped} mode={partnerMode} label="lumped mass" />
+            <MovingFrame
+              {...moving}
+              shapes={shapes}
+              index={summary.modes.indexOf(mode)}
+              mode={mode}
+              label="consistent mass"
+            />
+            {lumped && partner && partnerMode ? (
+              <MovingFrame
+                {...moving}
+                shapes={lumped.shapes}
+                index={partner.b}
+                mode={partnerMode}
+                label="lumped mass"
+              />
             ) : (
               <p className="self-center p-6 text-ink-soft">
                 {lumped

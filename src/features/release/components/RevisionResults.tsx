@@ -51,7 +51,9 @@ export function RevisionResults({ revision }: { readonly revision: RevisionRespo
                     const first = summary?.modes.find((mode) => mode.kind !== 'rigid');
                     return (
                       <td key={index} className="num py-1.5 pr-4 text-right">
-                        {first ? formatFrequency(first.frequencyHz, first.digits) : 'none'}
+                        {first
+                          ? formatFrequency(first.frequencyHz, Math.min(5, first.digits))
+                          : 'none'}
                       </td>
                     );
                   })}
