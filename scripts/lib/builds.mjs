@@ -22,11 +22,7 @@ import { StepError } from './steps.mjs';
  * @property {() => Promise<void>} make
  */
 
-const SERVER_ENTRIES = [
-  'server/main.ts',
-  'server/workers/solveWorker.ts',
-  'server/workers/runner.ts',
-];
+const SERVER_ENTRIES = ['server/main.ts', 'server/workers/solveWorker.ts', 'server/runner.ts'];
 
 /** @type {Build} */
 export const clientBuild = {

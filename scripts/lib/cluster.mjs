@@ -83,7 +83,7 @@ export function initCluster(bin, base, superuserPassword) {
   ]);
   rmSync(passwordFile);
   if (made.status !== 0) {
-    throw new StepError(`PostgreSQL cannot make its files in ${base}: ${lastLine(made.output)}`);
+    throw new StepError(`PostgreSQL cannot make its files in ${base}: ${mainLine(made.output)}`);
   }
   renameSync(unfinished, data);
   return true;
@@ -161,7 +161,7 @@ export function runSql(cluster, database, sql) {
     ],
     { input: sql, env: { PGPASSWORD: cluster.superuserPassword } },
   );
-  if (done.status !== 0) throw new StepError(`PostgreSQL refused: ${lastLine(done.output)}`);
+  if (done.status !== 0) throw new StepError(`PostgreSQL refused: ${mainLine(done.output)}`);
   return done.output;
 }
 
@@ -198,7 +198,11 @@ function removeIfEmpty(folder) {
   if (readdirSync(folder).length === 0) rmdirSync(folder);
 }
 
-/** @param {string} text */
-function lastLine(text) {
-  return text.split('\n').at(-1) ?? '';
+/**
+ * @param {string} output
+ * @returns {string} the line that says what went wrong, else the last one
+ */
+function mainLine(output) {
+  const lines = output.split('\n');
+  return lines.find((line) => /\b(error|FATAL|ERROR):/.test(line)) ?? lines.at(-1) ?? '';
 }

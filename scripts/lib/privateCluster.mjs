@@ -1,7 +1,7 @@
 import { createHash } from 'node:crypto';
 import { join } from 'node:path';
 import { initCluster, startCluster, usableFolder } from './cluster.mjs';
-import { root, stateFolder } from './folders.mjs';
+import { stateFolder } from './folders.mjs';
 import { postgresAccount } from './postgres.mjs';
 import { databaseAddress, makeDatabase, makeRoles, OWNER, RUN_TIME } from './roles.mjs';
 import { provideSecrets } from './secrets.mjs';
@@ -30,7 +30,7 @@ function rememberedCluster() {
 export async function startPrivateCluster(bin) {
   const secrets = provideSecrets();
   const remembered = rememberedCluster();
-  const name = `ringstead-${createHash('sha256').update(root).digest('hex').slice(0, 8)}`;
+  const name = `ringstead-${createHash('sha256').update(stateFolder).digest('hex').slice(0, 8)}`;
   const base = usableFolder(
     remembered ? [remembered.base] : [join(stateFolder, 'postgres'), join('/var/lib', name)],
     postgresAccount(),

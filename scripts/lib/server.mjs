@@ -13,7 +13,7 @@ const START_PATIENCE_MS = 60_000;
 export const serverProgram = join(root, 'dist/server/main.js');
 
 /** The built runner. */
-export const runnerProgram = join(root, 'dist/server/workers/runner.js');
+export const runnerProgram = join(root, 'dist/server/runner.js');
 
 /** What a request under way may take to finish when the server is told to stop. */
 const STOP_PATIENCE_MS = 20_000;

@@ -38,12 +38,16 @@ export function isShuttingDown() {
   return stopping !== undefined;
 }
 
-/** Ctrl-C, SIGTERM and a closed terminal stop everything, then the script. */
-export function shutDownOnSignals() {
+/**
+ * Ctrl-C, SIGTERM and a closed terminal stop everything, then the script.
+ *
+ * @param {number} [status] exit status then: 0 where stopping is how the work ends
+ */
+export function shutDownOnSignals(status = 0) {
   for (const signal of /** @type {const} */ (['SIGINT', 'SIGTERM', 'SIGHUP'])) {
     process.on(signal, () => {
-      if (!isShuttingDown()) console.log('\n  Stopping; requests under way finish first.');
-      void shutDown().then(() => process.exit(0));
+      if (!isShuttingDown()) console.log('\n  Stopping what was started');
+      void shutDown().then(() => process.exit(status));
     });
   }
 }
