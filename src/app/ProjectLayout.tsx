@@ -1,9 +1,9 @@
-import { NavLink, Outlet, useParams } from 'react-router-dom';
-import { Link } from 'react-router-dom';
+import { Link, NavLink, Outlet, useParams } from 'react-router-dom';
 import { Button } from '#src/components/Button.tsx';
 import { ErrorNote } from '#src/components/ErrorNote.tsx';
 import { Loading } from '#src/components/Loading.tsx';
 import { PageHeading } from '#src/components/PageHeading.tsx';
+import { FrequencyLineHost } from '#src/features/frequencyLine/components/FrequencyLineHost.tsx';
 import { useProject } from '#src/hooks/useProject.ts';
 import { useProjectEvents } from '#src/hooks/useProjectEvents.ts';
 import { SheetHeader } from './SheetHeader.tsx';
@@ -50,7 +50,8 @@ export function ProjectLayout() {
           </div>
         )}
       </main>
-      <Places className="flex justify-around border-t border-pencil sm:hidden" />
+      {project.data && <FrequencyLineHost />}
+      <Places className="flex shrink-0 justify-around border-t border-pencil sm:hidden" />
     </div>
   );
 }

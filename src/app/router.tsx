@@ -28,10 +28,38 @@ const gate: RouteObject[] = [
   },
 ];
 
-const workspace: RouteObject[] = [{ path: '*', Component: NotFoundPage }];
+const workspace: RouteObject[] = [
+  {
+    path: 'projects',
+    lazy: screen(() => import('#src/features/projects/components/ProjectsPage.tsx')),
+  },
+  {
+    path: 'projects/new',
+    lazy: screen(() => import('#src/features/projects/components/NewProjectPage.tsx')),
+  },
+  {
+    path: 'activity',
+    lazy: screen(() => import('#src/features/activity/components/ActivityPage.tsx')),
+  },
+  { path: 'team', lazy: screen(() => import('#src/features/team/components/TeamPage.tsx')) },
+  {
+    path: 'team/mail',
+    lazy: screen(() => import('#src/features/team/components/SentMailPage.tsx')),
+  },
+  {
+    path: 'account',
+    lazy: screen(() => import('#src/features/account/components/AccountPage.tsx')),
+  },
+  { path: '*', Component: NotFoundPage },
+];
 
 const project: RouteObject[] = [
   { index: true, element: <Navigate to="frame" replace /> },
+  { path: 'modes', lazy: screen(() => import('#src/features/modes/components/ModesPage.tsx')) },
+  {
+    path: 'release',
+    lazy: screen(() => import('#src/features/release/components/ReleasePage.tsx')),
+  },
   { path: '*', element: <Navigate to="../frame" replace /> },
 ];
 

@@ -87,7 +87,7 @@ export function DataTable<Row extends object>({
   const table = useTable({
     features,
     columns: definitions,
-    data: rows as Row[],
+    data: rows,
     getRowId: rowKey,
     enableSortingRemoval: false,
     ...(initialSort ? { initialState: { sorting: [initialSort] } } : {}),

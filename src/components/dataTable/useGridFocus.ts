@@ -83,7 +83,7 @@ export function useGridFocus(
   };
 
   const onFocus = (event: FocusEvent<HTMLElement>) => {
-    const cell = (event.target as HTMLElement).closest<HTMLElement>('[data-row]');
+    const cell = event.target.closest<HTMLElement>('[data-row]');
     if (cell) setPlace(placeOf(cell));
   };
 
