@@ -23,8 +23,11 @@ const SHIFT = 1e-11;
 const STIFFNESS_FREE = 1e-11;
 /** More independent motions are not looked for: naming so many already says where to begin. */
 const MOST = 48;
-/** Part of a vector outside a basis under which it counts as inside it. */
-const DEPENDENT = 1e-9;
+/**
+ * Part of a vector outside a basis under which it is dropped as rounding. Small, for one solve turns every
+ * vector towards a motion without stiffness by the inverse of the shift; the little left over is the next start.
+ */
+const DEPENDENT = 1e-14;
 
 /**
  * Motions of a frame that deform nothing, beyond the known ones, over the model's free unknowns.
@@ -57,6 +60,7 @@ export function stiffnessFreeMotions(
       fillRandom(y, state);
       return y;
     });
+    block = orthonormalise(block, [...basis]);
     for (let step = 0; step < ITERATIONS; step++) {
       for (const y of block) solveLdlt(ldlt, y);
       block = orthonormalise(block, [...basis]);
