@@ -9,7 +9,8 @@ const MOST_DECIMALS = 4;
 export function formatFrequency(hz: number, digits: number): string {
   if (!Number.isFinite(hz)) return '–';
   if (hz === 0) return '0 Hz';
-  const before = Math.floor(Math.log10(Math.abs(hz))) + 1;
+  // The exponent after rounding: 9.996 to three digits is 10.0.
+  const before = Number(hz.toExponential(Math.max(1, digits) - 1).split('e')[1]) + 1;
   const decimals = Math.min(MOST_DECIMALS, Math.max(0, digits - before));
   return `${hz.toFixed(decimals)} Hz`;
 }
