@@ -2,7 +2,8 @@ import { factorise } from '../factor/factorise.ts';
 import type { Ldlt } from '../factor/Ldlt.ts';
 import type { SymbolicFactor } from '../factor/SymbolicFactor.ts';
 import { ZeroPivotError } from '../factor/ZeroPivotError.ts';
-import type { SymmetricCsc } from '../sparse/SymmetricCsc.ts';
+import { multiplySymmetric, type SymmetricCsc } from '../sparse/SymmetricCsc.ts';
+import { withoutZeros } from '../sparse/withoutZeros.ts';
 import { bandLanczos, type RitzPairs } from './bandLanczos.ts';
 import { clearGap } from './clearGap.ts';
 import type { ModesOptions, ModesTiming } from './ModesResult.ts';
@@ -45,6 +46,8 @@ export class ModeSearch {
 
   readonly #K: SymmetricCsc;
   readonly #M: SymmetricCsc;
+  /** M again, lean, for products. */
+  readonly #mass: SymmetricCsc;
   readonly #options: ModesOptions;
   readonly #symbolic: SymbolicFactor;
   readonly #clock: () => number;
@@ -61,14 +64,15 @@ export class ModeSearch {
   ) {
     this.#K = K;
     this.#M = M;
+    this.#mass = withoutZeros(M);
     this.#options = options;
     this.#symbolic = symbolic;
     this.#clock = options.clock ?? (() => 0);
     this.timing = timing;
     this.random = Uint32Array.of((options.seed ^ 0x9e3779b9) >>> 0 || 1);
-    this.modes = new OrthonormalSet(M);
+    this.modes = new OrthonormalSet(this.#mass);
     for (const motion of options.nullVectors ?? []) {
-      if (this.modes.add(motion.slice(), null, null) > 0) this.lambda.push(0);
+      if (this.modes.add(motion.slice(), null) > 0) this.lambda.push(0);
     }
     this.rigid = this.modes.count;
   }
@@ -171,7 +175,7 @@ export class ModeSearch {
       this.#sigma = this.#ldlt.sigma;
     }
     this.timing.factor += this.#clock() - begin;
-    return new ShiftedPencil(this.#M, this.#ldlt);
+    return new ShiftedPencil(this.#mass, this.#ldlt);
   }
 
   get negativePivots(): number {
@@ -231,7 +235,7 @@ export class ModeSearch {
     const converged = convergedPairs(theta, pairs.residual);
     const n = pencil.n;
     const y = new Float64Array(n);
-    const keep = new OrthonormalSet(this.#M);
+    const image = new Float64Array(n);
     let count = 0;
     for (let i = 0; i < converged; i++) {
       const lambda = this.#lambdaOf(theta[i]!);
@@ -239,11 +243,10 @@ export class ModeSearch {
       ritzVector(pairs, i, y);
       // One step of A takes out what an M that is singular lets in (Ericsson and Ruhe 1980,
       // section 4: purification) and shrinks the higher modes in y.
-      const single = new OrthonormalSet(this.#M);
-      if (single.add(y.slice(), null, null) === 0) continue;
+      multiplySymmetric(this.#mass, y, image);
       const pure = new Float64Array(n);
-      pencil.apply(single.images[0]!, pure);
-      if (this.modes.add(pure, keep, null) === 0) continue;
+      pencil.apply(image, pure);
+      if (this.modes.add(pure, null) === 0) continue;
       this.lambda.push(lambda);
       count += 1;
     }

@@ -7,7 +7,7 @@ import { projectOut } from './projectOut.ts';
  * lying in the span: what is left of it is mostly rounding.
  */
 const DEPENDENT_TOL = 1e-12;
-/** Left over from a second orthogonalisation; less says that the first left only rounding. */
+/** Share left over by the second pass; less says that the first has left only rounding. */
 const TWICE_TOL = 0.5;
 
 /** An M-orthonormal set of vectors that grows one by one, with their images under M. */
@@ -27,33 +27,38 @@ export class OrthonormalSet {
   /**
    * Takes in v after orthogonalising it against `others` and this set.
    *   v             n; becomes part of the set (the caller gives it away), or is scratch if refused
+   *   first         the last `first` vectors of this set are those that v has large components in:
+   *                 they are taken out in a pass of their own, then all of them in a second one
    *   coefficients  products with this set are added to it; null when they are not wanted
    * Returns its M-norm once orthogonal, or 0 when v depends on the sets: then it is left out.
+   * Source: Parlett, The Symmetric Eigenvalue Problem, sections 6.9 (twice is enough) and 13.7.
    */
-  add(v: Float64Array, others: OrthonormalSet | null, coefficients: Float64Array | null): number {
+  add(
+    v: Float64Array,
+    others: OrthonormalSet | null,
+    first: number = this.count,
+    coefficients: Float64Array | null = null,
+  ): number {
+    const { vectors, images, count } = this;
+    let rough = 0;
+    if (others !== null && first === count) {
+      rough += projectOut(v, others.vectors, others.images, 0, others.count, null);
+    }
+    rough += projectOut(v, vectors, images, Math.max(0, count - first), count, coefficients);
+    let fine = 0;
+    if (others !== null) {
+      fine += projectOut(v, others.vectors, others.images, 0, others.count, null);
+    }
+    fine += projectOut(v, vectors, images, 0, count, coefficients);
     const image = new Float64Array(v.length);
     multiplySymmetric(this.#M, v, image);
-    const before = norm(v, image);
-    if (before === 0) return 0;
-    let once = 0;
-    let twice = 0;
-    for (let pass = 0; pass < 2; pass++) {
-      once = twice;
-      if (others !== null) projectOut(v, others.vectors, others.images, others.count, null);
-      projectOut(v, this.vectors, this.images, this.count, coefficients);
-      multiplySymmetric(this.#M, v, image);
-      twice = norm(v, image);
-    }
-    if (twice <= DEPENDENT_TOL * before || twice < TWICE_TOL * once) return 0;
-    normalise(v, image);
-    this.vectors.push(v);
-    this.images.push(image);
-    return twice;
+    const norm = normalise(v, image);
+    // Pythagoras gives the norms before the last pass and before both.
+    const once = Math.sqrt(norm * norm + fine);
+    const before = Math.sqrt(norm * norm + fine + rough);
+    if (norm <= DEPENDENT_TOL * before || norm < TWICE_TOL * once) return 0;
+    vectors.push(v);
+    images.push(image);
+    return norm;
   }
-}
-
-function norm(v: Float64Array, image: Float64Array): number {
-  let square = 0;
-  for (let i = 0; i < v.length; i++) square += v[i]! * image[i]!;
-  return square > 0 ? Math.sqrt(square) : 0;
 }

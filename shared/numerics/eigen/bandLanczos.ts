@@ -50,7 +50,7 @@ export function bandLanczos(
   for (let b = 0; b < block; b++) {
     const v = startVector(pencil, locked, random);
     if (v === null) break;
-    basis.add(v, locked, null);
+    basis.add(v, locked);
   }
   if (basis.count === 0) return null;
 
@@ -63,7 +63,8 @@ export function bandLanczos(
     const w = new Float64Array(n);
     pencil.apply(basis.images[j]!, w);
     column.fill(0);
-    const beta = basis.add(w, locked, column);
+    // T is a band: w has large components in the last 2b + 1 vectors, rounding in the others.
+    const beta = basis.add(w, locked, Math.min(basis.count, 2 * block + 1), column);
     if (beta > 0) column[basis.count - 1] = beta;
     for (let i = 0; i < basis.count; i++) {
       T[j * stride + i] = column[i]!;
@@ -95,7 +96,7 @@ function startVector(
   const start = new Float64Array(pencil.n);
   fillRandom(start, random);
   const fresh = new OrthonormalSet(pencil.M);
-  if (fresh.add(start, locked, null) === 0) return null;
+  if (fresh.add(start, locked) === 0) return null;
   const v = new Float64Array(pencil.n);
   pencil.apply(fresh.images[0]!, v);
   return v;

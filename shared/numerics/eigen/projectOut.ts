@@ -1,23 +1,25 @@
 /**
- * w ← w − Σ_j v_j (M v_j)ᵀ w  for an M-orthonormal set.
+ * w ← w − Σ_j v_j (M v_j)ᵀ w  for part of an M-orthonormal set.
  *   w             n, overwritten
  *   vectors       v_j, n each            images   M v_j, n each
- *   count         how many of them
- *   coefficients  count, the products (M v_j)ᵀ w are added to it; null when they are not wanted
+ *   from, to      j runs from … to − 1
+ *   coefficients  at least `to`, the products (M v_j)ᵀ w are added to it; null when not wanted
+ * Returns the sum of the squares of the products: by so much ‖w‖²_M has fallen.
  * Four vectors at a time, the next four against what is left (block Gram-Schmidt): one sweep of w
- * serves four products. To orthogonalise to working precision call it twice (Parlett, The
- * Symmetric Eigenvalue Problem, section 6.9: twice is enough).
+ * serves four products.
  */
 export function projectOut(
   w: Float64Array,
   vectors: readonly Float64Array[],
   images: readonly Float64Array[],
-  count: number,
+  from: number,
+  to: number,
   coefficients: Float64Array | null,
-): void {
+): number {
   const n = w.length;
-  for (let j = 0; j < count; j += 4) {
-    const here = count - j < 4 ? count - j : 4;
+  let taken = 0;
+  for (let j = from; j < to; j += 4) {
+    const here = to - j < 4 ? to - j : 4;
     // Short of four, the last vector stands in with a product of zero.
     const j1 = here > 1 ? j + 1 : j;
     const j2 = here > 2 ? j + 2 : j1;
@@ -47,6 +49,7 @@ export function projectOut(
     for (let i = 0; i < n; i++) {
       w[i]! -= h0 * v0[i]! + h1 * v1[i]! + h2 * v2[i]! + h3 * v3[i]!;
     }
+    taken += h0 * h0 + h1 * h1 + h2 * h2 + h3 * h3;
     if (coefficients !== null) {
       coefficients[j]! += h0;
       if (here > 1) coefficients[j + 1]! += h1;
@@ -54,4 +57,5 @@ export function projectOut(
       if (here > 3) coefficients[j + 3]! += h3;
     }
   }
+  return taken;
 }

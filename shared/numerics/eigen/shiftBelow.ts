@@ -81,7 +81,7 @@ function estimateLowest(
   for (let step = 0; step <= ESTIMATE_STEPS; step++) {
     const set = new OrthonormalSet(pencil.M);
     // ‖A v‖_M for ‖v‖_M = 1 is at most the largest θ.
-    theta = set.add(v, rigid, null);
+    theta = set.add(v, rigid);
     if (theta === 0) return null;
     if (step === ESTIMATE_STEPS) break;
     v = new Float64Array(pencil.n);
