@@ -12,6 +12,10 @@ const LOCAL_MEMBERS = 0.25;
 const LOCAL_MASS = 0.3;
 /** Effective mass in every direction under which a mode can be local. */
 const LOCAL_EFFECTIVE = 0.05;
+/** Mean square shift, over the turn, under which points stay where they are. */
+const STAYS = 1e-6;
+/** Mean square turn, over the shift, above which a rigid motion counts as turning. */
+const TURNS = 1e-6;
 /** Members named in a local mode; the rest are counted. */
 const MOST_NAMED = 2;
 
@@ -43,8 +47,8 @@ const largestIndex = (values: readonly number[]) =>
 
 /**
  * Plain names of modes, in order. The rule:
- *  - a rigid-body mode is "rigid: moves along …" or "rigid: turns about …", whichever of its effective
- *    masses (over the rigid whole) is largest;
+ *  - a rigid-body mode that turns anything is "rigid: turns about …", one that only shifts "rigid: moves along …",
+ *    by the axis in which its points do so most;
  *  - "local: …" names the members that hold three quarters of the kinetic energy, where they are at most a
  *    quarter of the members and 30 % of the mass and no direction has 5 % effective mass;
  *  - else the largest translational effective mass of 10 % or more names it: "sways along X" (or Y, or both),
@@ -69,9 +73,7 @@ function nameMode(mode: ModeCharacter): ModeName {
   const direction = largestIndex(along);
   const axis = largestIndex(about);
   if (mode.rigid) {
-    const moves = along[direction]! >= about[axis]!;
-    const text = moves ? `moves along ${AXES[direction]!}` : `turns about ${AXES[axis]!}`;
-    return { name: `rigid: ${text}`, kind: 'rigid' };
+    return { name: `rigid: ${rigidMotion(mode)}`, kind: 'rigid' };
   }
   const local = localMembers(mode);
   if (local !== null) return { name: `local: ${local}`, kind: 'local' };
@@ -79,13 +81,26 @@ function nameMode(mode: ModeCharacter): ModeName {
     return { name: translation(along, direction), kind: 'global' };
   }
   if (about[axis]! >= NAMES_ROTATION) {
-    return { name: axis === 2 ? 'twists about Z' : `rocks about ${AXES[axis]!}`, kind: 'global' };
+    const verb = axis === 2 || onlyTurns(mode) ? 'twists' : 'rocks';
+    return { name: `${verb} about ${AXES[axis]!}`, kind: 'global' };
   }
   const most = largestIndex(mode.meanSquares);
-  const turn = largestIndex(mode.meanTurns);
-  return mode.meanSquares[most]! >= 1e-6 * mode.meanTurns[turn]!
-    ? { name: `bends along ${AXES[most]!}`, kind: 'global' }
-    : { name: `twists about ${AXES[turn]!}`, kind: 'global' };
+  return onlyTurns(mode)
+    ? { name: `twists about ${AXES[largestIndex(mode.meanTurns)]!}`, kind: 'global' }
+    : { name: `bends along ${AXES[most]!}`, kind: 'global' };
+}
+
+/** A straight shaft in torsion: its points stay where they are. */
+function onlyTurns({ meanSquares, meanTurns }: ModeCharacter): boolean {
+  return Math.max(...meanSquares) < STAYS * Math.max(...meanTurns);
+}
+
+function rigidMotion({ meanSquares, meanTurns }: ModeCharacter): string {
+  const turn = largestIndex(meanTurns);
+  const shift = largestIndex(meanSquares);
+  return meanTurns[turn]! > TURNS * meanSquares[shift]!
+    ? `turns about ${AXES[turn]!}`
+    : `moves along ${AXES[shift]!}`;
 }
 
 function translation(along: readonly number[], direction: number): string {

@@ -98,8 +98,17 @@ export function solveFrame(request: SolveRequest, hooks: SolveHooks = {}): Solve
 
   progress(0.9, 'summing energies');
   const beforeSummary = clock();
-  const summary = summariseModes({ model, K, M, found, rigid: rigid.length, totalMass, centre });
   const shapes = shapesAtPoints(model, found.phi);
+  const summary = summariseModes({
+    model,
+    K,
+    M,
+    found,
+    shapes,
+    rigid: rigid.length,
+    totalMass,
+    centre,
+  });
   const ended = clock();
   progress(1, 'done');
   return {

@@ -1,5 +1,4 @@
 import type { FrameModel } from '../frame/assembly/FrameModel.ts';
-import { displacements } from '../frame/freedoms/Combination.ts';
 import { backwardError } from '../numerics/eigen/backwardError.ts';
 import type { ModesResult } from '../numerics/eigen/ModesResult.ts';
 import type { SymmetricCsc } from '../numerics/sparse/SymmetricCsc.ts';
@@ -12,6 +11,8 @@ import { modeEnergies } from './modeEnergies.ts';
 import type { ModeEnergies } from './modeEnergies.ts';
 import { nameModes } from './nameModes.ts';
 import type { ModeCharacter } from './nameModes.ts';
+import { VALUES_PER_POINT } from './shapesFile.ts';
+import type { ModeShapes } from './shapesFile.ts';
 
 /** Most digits shown: element properties are never known better. */
 const MOST_DIGITS = 9;
@@ -21,6 +22,8 @@ export interface SolvedModes {
   readonly K: SymmetricCsc;
   readonly M: SymmetricCsc;
   readonly found: ModesResult;
+  /** Of the modes found. */
+  readonly shapes: ModeShapes;
   /** Number of rigid-body modes, which come first. */
   readonly rigid: number;
   readonly totalMass: number;
@@ -131,7 +134,7 @@ function energyShares(
 }
 
 function character(
-  { model, found, rigid, totalMass }: SolvedModes,
+  { model, shapes, rigid, totalMass }: SolvedModes,
   mode: number,
   effectiveMass: Six,
   energies: ModeEnergies,
@@ -139,17 +142,12 @@ function character(
 ): ModeCharacter {
   const meanSquares: [number, number, number] = [0, 0, 0];
   const meanTurns: [number, number, number] = [0, 0, 0];
-  const d = new Float64Array(12);
-  const phi = found.phi[mode]!;
   const size = model.scale * model.scale;
-  for (const { part, motion } of model.segments) {
-    displacements(motion, phi, d);
-    const { x, y, z } = part.axes;
-    const inGlobal = (from: number, k: 0 | 1 | 2) =>
-      x[k] * d[from]! + y[k] * d[from + 1]! + z[k] * d[from + 2]!;
+  const from = mode * shapes.points * VALUES_PER_POINT;
+  for (let at = from; at < from + shapes.points * VALUES_PER_POINT; at += VALUES_PER_POINT) {
     for (const k of [0, 1, 2] as const) {
-      meanSquares[k] += inGlobal(motion.rows / 2, k) ** 2;
-      if (motion.rows === 12) meanTurns[k] += size * inGlobal(9, k) ** 2;
+      meanSquares[k] += shapes.shapes[at + k]! ** 2;
+      meanTurns[k] += size * shapes.shapes[at + 3 + k]! ** 2;
     }
   }
   return {
