@@ -41,7 +41,7 @@ export function coolantPumpStand(): FrameDocument {
       basis: 'Levelling foot M20, figures of a comparable foot; not measured here.',
     })),
     states: [
-      { id: 'as expected', name: 'Feet as expected' },
+      { id: 'feet as expected', name: 'Feet as expected' },
       { id: 'feet soft', name: 'Feet soft', supports: 'soft' },
       { id: 'feet stiff', name: 'Feet stiff', supports: 'stiff' },
     ],

@@ -68,9 +68,10 @@ function supportAt(node: string, feet: Feet): Partial<Support> & { node: string 
   };
 }
 
-/** Feet are the least known stiffness of a frame: both ends of their range are states from the start. */
+/** Feet are the least known stiffness of a frame: the expected value and both ends of its range, from the start. */
 function feetStates(): OperatingState[] {
   return [
+    { id: 'feet as expected', name: 'Feet as expected', masses: {}, supports: 'expected' },
     { id: 'feet soft', name: 'Feet soft', masses: {}, supports: 'soft' },
     { id: 'feet stiff', name: 'Feet stiff', masses: {}, supports: 'stiff' },
   ];
