@@ -13,13 +13,6 @@ export async function up({ context }: Migration): Promise<void> {
     await context.sequelize.query(
       `CREATE DOMAIN sha256_hex AS text CHECK (VALUE ~ '^[0-9a-f]{64}$');
 
-      CREATE FUNCTION keep_as_written() RETURNS trigger LANGUAGE plpgsql
-      SET search_path = public, pg_temp AS $$
-      BEGIN
-        RAISE EXCEPTION 'Rows of % are never changed or deleted.', TG_TABLE_NAME
-          USING ERRCODE = 'restrict_violation';
-      END $$;
-
       CREATE TABLE frame_documents (
         team_id uuid NOT NULL REFERENCES teams (id),
         fingerprint sha256_hex NOT NULL,
@@ -29,7 +22,7 @@ export async function up({ context }: Migration): Promise<void> {
         CHECK (fingerprint = encode(sha256(convert_to(document, 'UTF8')), 'hex'))
       );
       CREATE TRIGGER frame_documents_kept BEFORE UPDATE OR DELETE OR TRUNCATE ON frame_documents
-        FOR EACH STATEMENT EXECUTE FUNCTION keep_as_written();
+        FOR EACH STATEMENT EXECUTE FUNCTION forbid_change();
       GRANT SELECT, INSERT ON frame_documents TO ringstead_app;`,
       { transaction },
     );
@@ -38,9 +31,8 @@ export async function up({ context }: Migration): Promise<void> {
 
 export async function down({ context }: Migration): Promise<void> {
   await context.sequelize.transaction(async (transaction) => {
-    await context.sequelize.query(
-      `DROP TABLE frame_documents; DROP FUNCTION keep_as_written(); DROP DOMAIN sha256_hex`,
-      { transaction },
-    );
+    await context.sequelize.query(`DROP TABLE frame_documents; DROP DOMAIN sha256_hex`, {
+      transaction,
+    });
   });
 }

@@ -35,7 +35,7 @@ export async function up({ context }: Migration): Promise<void> {
         FOREIGN KEY (team_id, fingerprint) REFERENCES frame_documents (team_id, fingerprint)
       );
       CREATE TRIGGER draft_versions_kept BEFORE UPDATE OR DELETE OR TRUNCATE ON draft_versions
-        FOR EACH STATEMENT EXECUTE FUNCTION keep_as_written();
+        FOR EACH STATEMENT EXECUTE FUNCTION forbid_change();
       GRANT SELECT, INSERT ON draft_versions TO ringstead_app;
 
       CREATE FUNCTION check_draft_step() RETURNS trigger LANGUAGE plpgsql

@@ -34,7 +34,7 @@ export async function up({ context }: Migration): Promise<void> {
       );
       CREATE INDEX solve_results_of_document ON solve_results (team_id, document_fingerprint);
       CREATE TRIGGER solve_results_kept BEFORE UPDATE OR DELETE OR TRUNCATE ON solve_results
-        FOR EACH STATEMENT EXECUTE FUNCTION keep_as_written();
+        FOR EACH STATEMENT EXECUTE FUNCTION forbid_change();
       GRANT SELECT, INSERT ON solve_results TO ringstead_app;`,
       { transaction },
     );

@@ -109,7 +109,7 @@ export async function up({ context }: Migration): Promise<void> {
       CREATE TRIGGER revisions_step BEFORE UPDATE ON revisions
         FOR EACH ROW EXECUTE FUNCTION check_revision_step();
       CREATE TRIGGER revisions_kept BEFORE DELETE OR TRUNCATE ON revisions
-        FOR EACH STATEMENT EXECUTE FUNCTION keep_as_written();`,
+        FOR EACH STATEMENT EXECUTE FUNCTION forbid_change();`,
       { transaction },
     );
   });

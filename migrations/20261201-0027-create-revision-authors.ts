@@ -14,7 +14,7 @@ export async function up({ context }: Migration): Promise<void> {
         PRIMARY KEY (revision_id, person_id)
       );
       CREATE TRIGGER revision_authors_kept BEFORE UPDATE OR DELETE OR TRUNCATE ON revision_authors
-        FOR EACH STATEMENT EXECUTE FUNCTION keep_as_written();
+        FOR EACH STATEMENT EXECUTE FUNCTION forbid_change();
       GRANT SELECT, INSERT ON revision_authors TO ringstead_app;
 
       CREATE FUNCTION check_frozen_at_submission() RETURNS trigger LANGUAGE plpgsql

@@ -18,7 +18,7 @@ export async function up({ context }: Migration): Promise<void> {
         FOREIGN KEY (team_id, result_key) REFERENCES solve_results (team_id, key)
       );
       CREATE TRIGGER revision_solves_kept BEFORE UPDATE OR DELETE OR TRUNCATE ON revision_solves
-        FOR EACH STATEMENT EXECUTE FUNCTION keep_as_written();
+        FOR EACH STATEMENT EXECUTE FUNCTION forbid_change();
       GRANT SELECT, INSERT ON revision_solves TO ringstead_app;
       CREATE TRIGGER revision_solves_frozen BEFORE INSERT ON revision_solves
         FOR EACH ROW EXECUTE FUNCTION check_frozen_at_submission();

@@ -24,7 +24,7 @@ export async function up({ context }: Migration): Promise<void> {
         WHERE verdict = 'accept';
       CREATE UNIQUE INDEX reviews_return_once ON reviews (revision_id) WHERE verdict = 'return';
       CREATE TRIGGER reviews_kept BEFORE UPDATE OR DELETE OR TRUNCATE ON reviews
-        FOR EACH STATEMENT EXECUTE FUNCTION keep_as_written();
+        FOR EACH STATEMENT EXECUTE FUNCTION forbid_change();
       GRANT SELECT, INSERT ON reviews TO ringstead_app;
 
       CREATE FUNCTION check_review() RETURNS trigger LANGUAGE plpgsql

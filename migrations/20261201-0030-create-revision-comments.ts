@@ -17,7 +17,7 @@ export async function up({ context }: Migration): Promise<void> {
       );
       CREATE INDEX revision_comments_in_order ON revision_comments (revision_id, created_at);
       CREATE TRIGGER revision_comments_kept BEFORE UPDATE OR DELETE OR TRUNCATE ON revision_comments
-        FOR EACH STATEMENT EXECUTE FUNCTION keep_as_written();
+        FOR EACH STATEMENT EXECUTE FUNCTION forbid_change();
       GRANT SELECT, INSERT ON revision_comments TO ringstead_app;`,
       { transaction },
     );

@@ -20,7 +20,7 @@ export async function up({ context }: Migration): Promise<void> {
         CHECK (fingerprint = encode(sha256(convert_to(content, 'UTF8')), 'hex'))
       );
       CREATE TRIGGER lock_records_kept BEFORE UPDATE OR DELETE OR TRUNCATE ON lock_records
-        FOR EACH STATEMENT EXECUTE FUNCTION keep_as_written();
+        FOR EACH STATEMENT EXECUTE FUNCTION forbid_change();
       GRANT SELECT, INSERT ON lock_records TO ringstead_app;
 
       CREATE FUNCTION check_lock_record() RETURNS trigger LANGUAGE plpgsql

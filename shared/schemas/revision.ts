@@ -83,7 +83,9 @@ export const revisionResponse = revisionBrief.extend({
   lock: lockRecord.nullable(),
   abilities: z.object({
     recall: z.boolean(),
+    /** Accept it; returning is possible longer, until it is approved. */
     review: z.boolean(),
+    return: z.boolean(),
     approve: z.boolean(),
     withdraw: z.boolean(),
     comment: z.boolean(),

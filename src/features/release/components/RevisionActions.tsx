@@ -27,6 +27,7 @@ export function RevisionActions({ projectId, revision }: RevisionActionsProps) {
   const nothingToDo = !(
     abilities.recall ||
     abilities.review ||
+    abilities.return ||
     abilities.approve ||
     abilities.withdraw
   );
@@ -43,18 +44,16 @@ export function RevisionActions({ projectId, revision }: RevisionActionsProps) {
     <section aria-label="What you can do" className="border-y border-rule py-4">
       <div className="flex flex-wrap gap-2">
         {abilities.review && (
-          <>
-            <Button look="primary" onClick={() => setOpen('accept')}>
-              Accept …
-            </Button>
-            <Button onClick={() => setOpen('return')}>Return …</Button>
-          </>
+          <Button look="primary" onClick={() => setOpen('accept')}>
+            Accept …
+          </Button>
         )}
         {abilities.approve && (
           <Button look="primary" onClick={() => setOpen('approve')}>
             Approve and lock …
           </Button>
         )}
+        {abilities.return && <Button onClick={() => setOpen('return')}>Return …</Button>}
         {abilities.recall && <Button onClick={() => setOpen('recall')}>Recall …</Button>}
         {abilities.withdraw && (
           <Button look="signal" onClick={() => setOpen('withdraw')}>
