@@ -1,8 +1,8 @@
 import { multiplySymmetric } from '../numerics/sparse/SymmetricCsc.ts';
 import type { SymmetricCsc } from '../numerics/sparse/SymmetricCsc.ts';
 
-/** Residual over right-hand side at which the iteration ends: the sum is then good to about its square. */
-const TOLERANCE = 1e-10;
+/** Residual over right-hand side at which the iteration ends: the sum's error is of its square. */
+const TOLERANCE = 1e-7;
 /** Diagonally scaled element mass matrices are so well conditioned that some tens of steps suffice. */
 const MOST_STEPS = 1000;
 

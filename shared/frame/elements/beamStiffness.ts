@@ -96,18 +96,21 @@ export function beamStiffness(rigidity: BeamRigidity, length: number): Float64Ar
   const { axial, torsion, bending, sway } = rigidity;
   const k = new Float64Array(144);
   for (let i = 0; i < 12; i++) {
+    // Forces of the six deformations that displacement i causes.
+    const extension = axial * G[i]!;
+    const twist = torsion * G[12 + i]!;
+    const bendV = bending.vv * G[24 + i]! + bending.vw * G[36 + i]!;
+    const bendW = bending.vw * G[24 + i]! + bending.ww * G[36 + i]!;
+    const swayV = sway.vv * G[48 + i]! + sway.vw * G[60 + i]!;
+    const swayW = sway.vw * G[48 + i]! + sway.ww * G[60 + i]!;
     for (let j = 0; j < 12; j++) {
-      const gi = (row: number) => G[row * 12 + i]!;
-      const gj = (row: number) => G[row * 12 + j]!;
       k[i * 12 + j] =
-        axial * gi(0) * gj(0) +
-        torsion * gi(1) * gj(1) +
-        bending.vv * gi(2) * gj(2) +
-        bending.vw * (gi(2) * gj(3) + gi(3) * gj(2)) +
-        bending.ww * gi(3) * gj(3) +
-        sway.vv * gi(4) * gj(4) +
-        sway.vw * (gi(4) * gj(5) + gi(5) * gj(4)) +
-        sway.ww * gi(5) * gj(5);
+        extension * G[j]! +
+        twist * G[12 + j]! +
+        bendV * G[24 + j]! +
+        bendW * G[36 + j]! +
+        swayV * G[48 + j]! +
+        swayW * G[60 + j]!;
     }
   }
   return k;
