@@ -106,7 +106,7 @@ async function dependencies() {
     args,
     { quiet: true },
   );
-  const modules = /\((\d+) modules/.exec(output)?.[1] ?? 'no';
+  const modules = /(\d+) modules/.exec(output)?.[1] ?? 'no';
   return { ok: status === 0, count: `${modules} modules` };
 }
 
