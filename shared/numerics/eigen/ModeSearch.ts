@@ -21,8 +21,8 @@ const CONVERGED_TOL = 1e-10;
 const NEIGHBOUR_TOL = 1e-4;
 /** Dimension of one Krylov space: room for the wanted and their convergence, memory for the rest. */
 const LEAST_DIMENSION = 100;
-const MOST_DIMENSION = 300;
-/** Runs of the search and of the recovery; each that finds nothing widens the next one's block. */
+const MOST_DIMENSION = 1000;
+/** Runs of the search and of the recovery; each that finds nothing makes the next one larger. */
 const MOST_RUNS = 60;
 const MOST_BARREN_RUNS = 3;
 const LEAST_BLOCK = 4;
@@ -104,7 +104,7 @@ export class ModeSearch {
         this.#report(Math.min(this.lambda.length + c, wanted) / (wanted + 1));
         return clearGap(Float64Array.from(lambda).sort(), wanted, floor) >= 0;
       };
-      const found = this.#run(1, missing, isEnough, Infinity);
+      const found = this.#run(1, missing, barren, isEnough, Infinity);
       if (this.exhausted || this.stopped) return;
       barren = found === 0 ? barren + 1 : 0;
     }
@@ -126,7 +126,7 @@ export class ModeSearch {
           residual[below]! <= NEIGHBOUR_TOL * theta[below]!
         );
       };
-      const found = this.#run(block, left, isEnough, sigma);
+      const found = this.#run(block, left, barren, isEnough, sigma);
       left -= found;
       if (left <= 0) return left === 0;
       if (this.exhausted || this.stopped) return false;
@@ -206,6 +206,7 @@ export class ModeSearch {
   #run(
     block: number,
     missing: number,
+    barren: number,
     isEnough: (converged: number, theta: Float64Array, residual: Float64Array) => boolean,
     limit: number,
   ): number {
@@ -215,7 +216,10 @@ export class ModeSearch {
     const pairs = bandLanczos(pencil, this.modes, this.random, {
       block,
       firstCheck: 2 * missing + 4 + 4 * block,
-      maxDimension: Math.min(MOST_DIMENSION, Math.max(LEAST_DIMENSION, 2 * missing + 12 * block)),
+      maxDimension: Math.min(
+        MOST_DIMENSION,
+        2 ** barren * Math.max(LEAST_DIMENSION, 3 * missing + 12 * block),
+      ),
       accept: (theta, residual) => isEnough(convergedPairs(theta, residual), theta, residual),
       shouldStop,
     });

@@ -75,7 +75,8 @@ export function bandLanczos(
     const invariant = basis.count === m;
     const stopped = shouldStop();
     if (m < nextCheck && m < maxDimension && !invariant && !stopped) continue;
-    nextCheck = m + Math.max(3, m >> 3);
+    // Solving for T costs m³: looked at less often as it grows.
+    nextCheck = m + Math.max(3, m < 100 ? m >> 3 : m >> 2);
     const eigen = denseEigen(T, stride, m);
     const residual = residuals(T, stride, m, basis.count, eigen);
     if (invariant || stopped || m === maxDimension || accept(eigen.values, residual)) {

@@ -265,6 +265,14 @@ describe('lowestModes of frames', () => {
     );
   });
 
+  it('finds a hundred modes in a crowded spectrum', () => {
+    const pair = rackPair({ bays: [2, 1], storeys: 3, divisions: 3 });
+    const result = lowestModes(pair.K, pair.M, { count: 100, seed: 22 });
+    expect(result.complete).toBe(true);
+    expect(result.lambda.length).toBe(100);
+    expectModes(pair, result);
+  });
+
   it('solves 3 000 unknowns and 12 modes well within a second', () => {
     const pair = rackPair({ bays: [4, 3], storeys: 4, divisions: 3 });
     expect(pair.K.n).toBeGreaterThan(2900);

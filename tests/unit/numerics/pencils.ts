@@ -102,8 +102,8 @@ export function arbitraryPencil(massless: boolean): fc.Arbitrary<RandomPencil> {
         const triplets = spring(0, -1, ground);
         ties.forEach(([to, k], i) => triplets.push(...spring(i + 1, (to % (i + 2)) - 1, k)));
         for (const [i, j, k] of extra) if (i !== j) triplets.push(...spring(i, j, k));
-        const mass: number[] = drawn.map((m) => Math.max(m, 0) / 10);
-        if (mass.every((m) => m === 0)) mass[0] = 1;
+        const mass = drawn.map((m) => Math.max(m, 0) / 10);
+        if (!mass.some((m) => m > 0)) mass[0] = 1;
         return { n, mass, triplets, K: sparse(n, triplets), M: diagonal(mass) };
       }),
   );
