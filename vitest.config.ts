@@ -25,6 +25,7 @@ export default defineConfig({
           name: 'client',
           include: ['tests/client/**/*.test.{ts,tsx}'],
           environment: 'happy-dom',
+          testTimeout: 20_000,
           setupFiles: ['tests/client/setup.ts'],
         },
       },

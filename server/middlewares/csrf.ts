@@ -38,6 +38,8 @@ export function csrfTokens(config: Config): CsrfTokens {
           throw new AppError(
             'forbidden',
             'The X-CSRF-Token header is missing or of another session: read /api/session for a new one.',
+            // By this the client knows to fetch the present token and to try once more.
+            { reason: 'csrf' },
           );
         }
       }

@@ -1,7 +1,7 @@
 import { useMutation, useQueryClient } from '@tanstack/react-query';
 import { ChevronDown } from 'lucide-react';
 import { Link, useNavigate } from 'react-router-dom';
-import { toast } from 'sonner';
+import { toast } from '#src/lib/toast.ts';
 import { signOut } from '#shared/schemas/session.ts';
 import { Button } from '#src/components/Button.tsx';
 import { Menu, MenuHeading, MenuItem, MenuRule } from '#src/components/Menu.tsx';

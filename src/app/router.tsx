@@ -55,6 +55,7 @@ const workspace: RouteObject[] = [
 
 const project: RouteObject[] = [
   { index: true, element: <Navigate to="frame" replace /> },
+  { path: 'frame', lazy: screen(() => import('#src/features/frame/components/FramePage.tsx')) },
   { path: 'modes', lazy: screen(() => import('#src/features/modes/components/ModesPage.tsx')) },
   {
     path: 'release',

@@ -14,7 +14,7 @@ export function ErrorNote({ error, children }: ErrorNoteProps) {
   const account = error instanceof ApiError ? error.problem : null;
   return (
     <div role="alert">
-      <Notice kind="signal" word={account?.title ?? 'Error'}>
+      <Notice kind="signal" word="Error">
         {messageOf(error)}
         {account?.errors && account.errors.length > 0 && <IssueList issues={account.errors} />}
         {children !== undefined && <div className="mt-2 flex gap-2">{children}</div>}

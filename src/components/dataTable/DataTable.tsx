@@ -100,7 +100,6 @@ export function DataTable<Row extends object>({
     getScrollElement: () => frame.current,
     estimateSize: () => ROW_PX,
     getItemKey: (index) => sorted[index]?.id ?? index,
-    initialRect: { width: 800, height: 600 },
     overscan: 8,
   });
   const press = (row: Row | undefined) => {

@@ -1,6 +1,6 @@
 import { zodResolver } from '@hookform/resolvers/zod';
 import { useForm } from 'react-hook-form';
-import { toast } from 'sonner';
+import { toast } from '#src/lib/toast.ts';
 import { z } from 'zod';
 import { personName } from '#shared/schemas/common.ts';
 import type { SignedInPerson } from '#shared/schemas/session.ts';

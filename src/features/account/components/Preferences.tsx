@@ -1,4 +1,4 @@
-import { toast } from 'sonner';
+import { toast } from '#src/lib/toast.ts';
 import type { SignedInPerson, Theme } from '#shared/schemas/session.ts';
 import { ErrorNote } from '#src/components/ErrorNote.tsx';
 import { Select, type SelectOption } from '#src/components/Select.tsx';

@@ -13,10 +13,7 @@ export function SignOutEverywhere() {
   const navigate = useNavigate();
   const confirm = () =>
     leave.mutate(undefined, {
-      onSuccess: async () => {
-        await navigate('/sign-in');
-        client.clear();
-      },
+      onSuccess: () => void Promise.resolve(navigate('/sign-in')).then(() => client.clear()),
       onError: () => setAsking(false),
     });
   return (

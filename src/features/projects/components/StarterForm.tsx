@@ -73,12 +73,11 @@ export function StarterForm({ starter }: { starter: Starter }) {
 function StarterOutline({ starter }: { starter: Starter }) {
   const values = useWatch<StarterFormInput>();
   const document = useMemo(() => {
-    const { machineName: _machineName, ...rest } = values;
-    const name = rest.name === '' ? starter.name : rest.name;
+    const { name, length, width, height, section, material, feet, machine } = values;
     const parsed = starter.parameters.safeParse({
-      ...rest,
-      name,
-      feet: rest.feet ?? { kind: 'fixed' },
+      ...{ length, width, height, section, material, machine },
+      name: name === '' ? starter.name : name,
+      feet: feet ?? { kind: 'fixed' },
     });
     return parsed.success ? starter.build(parsed.data) : null;
   }, [values, starter]);

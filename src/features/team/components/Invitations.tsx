@@ -1,5 +1,5 @@
 import { useState } from 'react';
-import { toast } from 'sonner';
+import { toast } from '#src/lib/toast.ts';
 import type { Invitation } from '#shared/schemas/team.ts';
 import { Button } from '#src/components/Button.tsx';
 import { ErrorNote } from '#src/components/ErrorNote.tsx';

@@ -1,6 +1,6 @@
 import { zodResolver } from '@hookform/resolvers/zod';
 import { Controller, useForm } from 'react-hook-form';
-import { toast } from 'sonner';
+import { toast } from '#src/lib/toast.ts';
 import { z } from 'zod';
 import { emailAddress, role, ROLES } from '#shared/schemas/common.ts';
 import { Button } from '#src/components/Button.tsx';

@@ -1,5 +1,5 @@
 import { useMemo, useState } from 'react';
-import { toast } from 'sonner';
+import { toast } from '#src/lib/toast.ts';
 import { ROLES } from '#shared/schemas/common.ts';
 import type { TeamPerson } from '#shared/schemas/team.ts';
 import { Button } from '#src/components/Button.tsx';

@@ -1,4 +1,4 @@
-import { toast } from 'sonner';
+import { toast } from '#src/lib/toast.ts';
 import type { TeamSettings } from '#shared/schemas/team.ts';
 import { ErrorNote } from '#src/components/ErrorNote.tsx';
 import { Select } from '#src/components/Select.tsx';
