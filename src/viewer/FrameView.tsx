@@ -58,6 +58,8 @@ interface FrameViewProps {
   readonly tools?: ReactNode;
   /** Leaves the strip out, for views beside a locked one that has it. */
   readonly bare?: boolean;
+  /** Stands on the view: title block, details. */
+  readonly children?: ReactNode;
 }
 
 /**
@@ -80,6 +82,7 @@ export function FrameView({
   description,
   tools,
   bare = false,
+  children,
 }: FrameViewProps) {
   const [ownCamera] = useState(() => createCameraStore());
   const camera = sharedCamera ?? ownCamera;
@@ -188,6 +191,7 @@ export function FrameView({
         <p aria-live="polite" className="sr-only">
           {hovered ? nameIn(model, hovered) : ''}
         </p>
+        {children}
       </div>
     </div>
   );

@@ -1,5 +1,6 @@
 import { DropdownMenu } from 'radix-ui';
 import type { ReactNode } from 'react';
+import { BAR_WORD } from './barWord.ts';
 import { ZOOM_STEP } from './camera/cameraKeys.ts';
 import type { CameraStore, ViewSize } from './camera/cameraStore.ts';
 import { CORNER_VIEWS, STRAIGHT_VIEWS, type NamedView } from './camera/namedViews.ts';
@@ -14,10 +15,6 @@ interface ViewBarProps {
 
 const STEP_PX = 60;
 const STEP_TURN = Math.PI / 12;
-
-/** One word of the strip above the view. */
-export const BAR_WORD =
-  'inline-flex min-h-8 cursor-pointer items-center gap-1 whitespace-nowrap rounded border border-transparent px-2 text-[0.9rem] hover:border-rule disabled:cursor-not-allowed disabled:text-ink-soft/70 aria-pressed:border-ink aria-pressed:font-medium data-[state=open]:border-ink';
 
 /** The quiet strip above the view: tools handed in, and the view's own words. Every drag has a word here. */
 export function ViewBar({ camera, bounds, size, tools }: ViewBarProps) {

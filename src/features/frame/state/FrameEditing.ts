@@ -10,12 +10,12 @@ export interface FrameEditing {
   readonly readOnly: boolean;
   readonly problems: readonly Problem[];
   readonly chosen: readonly Chosen[];
-  choose(entries: readonly Chosen[]): void;
+  readonly choose: (entries: readonly Chosen[]) => void;
   /** Changes the document; a refusal is said in a message. Returns whether it was carried out. */
-  run(command: FrameCommand, label: string): boolean;
+  readonly run: (command: FrameCommand, label: string) => boolean;
   /** Makes an entry of the list with plain first values and opens its details. */
-  add(list: DocumentList): void;
-  remove(entries: readonly Chosen[]): void;
+  readonly add: (list: DocumentList) => void;
+  readonly remove: (entries: readonly Chosen[]) => void;
 }
 
 export const FrameEditingContext = createContext<FrameEditing | null>(null);

@@ -31,23 +31,23 @@ export interface Saved {
 export interface AutosaveParts {
   readonly store: FrameStore;
   readonly draft: Pick<DraftResponse, 'version' | 'document'>;
-  write(version: number, document: FrameDocument): Promise<Saved>;
-  read(): Promise<DraftResponse>;
+  readonly write: (version: number, document: FrameDocument) => Promise<Saved>;
+  readonly read: () => Promise<DraftResponse>;
   /** Called with every document the server has taken. */
-  onSaved(saved: Saved, document: FrameDocument): void;
+  readonly onSaved: (saved: Saved, document: FrameDocument) => void;
 }
 
 export interface Autosave {
   readonly status: StoreApi<SaveStatus>;
   /** Version of the draft that the changes on screen are made on. */
-  version(): number;
+  readonly version: () => number;
   /** Writes what is unsaved; true when the server then has what is on screen. */
-  flush(): Promise<boolean>;
+  readonly flush: () => Promise<boolean>;
   /** Takes a newer draft from the server when nothing here is unsaved. */
-  offer(draft: DraftResponse): void;
-  takeTheirs(): Promise<void>;
-  keepMine(): Promise<boolean>;
-  start(): () => void;
+  readonly offer: (draft: DraftResponse) => void;
+  readonly takeTheirs: () => Promise<void>;
+  readonly keepMine: () => Promise<boolean>;
+  readonly start: () => () => void;
 }
 
 /** Pause after the last change before the draft is written. */

@@ -18,15 +18,15 @@ export interface FrameState {
   readonly past: readonly HistoryEntry[];
   readonly future: readonly HistoryEntry[];
   /** Applies a command and remembers how to take it back. Throws what `apply` throws, changing nothing. */
-  run(command: FrameCommand, label: string, group?: string): void;
+  readonly run: (command: FrameCommand, label: string, group?: string) => void;
   /** Closes the open group: the next change is a step of its own. */
-  closeGroup(): void;
+  readonly closeGroup: () => void;
   /** Takes the open group back without leaving a trace (Escape during a drag). */
-  cancelGroup(group: string): void;
-  undo(): void;
-  redo(): void;
+  readonly cancelGroup: (group: string) => void;
+  readonly undo: () => void;
+  readonly redo: () => void;
   /** Takes a document from the server as the new beginning; the history ends here. */
-  load(document: FrameDocument): void;
+  readonly load: (document: FrameDocument) => void;
 }
 
 export type FrameStore = StoreApi<FrameState>;

@@ -2,7 +2,7 @@ import { DISPLACEMENTS, type Displacement, type Joint } from '#shared/schemas/fr
 import { QuantityInput } from '#src/components/QuantityInput.tsx';
 import { Select } from '#src/components/Select.tsx';
 import { orNothing, withField } from '../../state/withField.ts';
-import { above0, isRotation } from './fields.tsx';
+import { above0, isRotation } from './checks.ts';
 
 interface JointFieldProps {
   readonly label: string;

@@ -3,7 +3,8 @@ import type { QuantityKind } from '#shared/units/quantities.ts';
 import { QuantityInput } from '#src/components/QuantityInput.tsx';
 import type { FieldProblems } from '../../state/problems.ts';
 import { withField } from '../../state/withField.ts';
-import { above0, FieldGrid, not0Below } from './fields.tsx';
+import { above0, not0Below } from './checks.ts';
+import { FieldGrid } from './fields.tsx';
 
 interface ShapeFieldsProps {
   readonly shape: SectionShape;

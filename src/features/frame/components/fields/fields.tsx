@@ -3,6 +3,7 @@ import { DISPLACEMENTS, type Displacement, type Vector3 } from '#shared/schemas/
 import type { QuantityKind } from '#shared/units/quantities.ts';
 import { QuantityInput } from '#src/components/QuantityInput.tsx';
 import { orNothing, withField } from '../../state/withField.ts';
+import { isRotation } from './checks.ts';
 
 /** Rows of narrow fields. */
 export function FieldGrid({ children, columns = 2 }: { children: ReactNode; columns?: 2 | 3 }) {
@@ -34,11 +35,6 @@ export function FormPart({
     </details>
   );
 }
-
-export const above0 = (value: number): string | null =>
-  value > 0 ? null : 'Must be greater than zero.';
-export const not0Below = (value: number): string | null =>
-  value >= 0 ? null : 'Must not be negative.';
 
 interface VectorFieldProps {
   readonly label: string;
@@ -131,5 +127,3 @@ export function SixField<Values extends PerDisplacement>({
     </fieldset>
   );
 }
-
-export const isRotation = (displacement: Displacement): boolean => displacement.startsWith('r');

@@ -4,7 +4,8 @@ import { Checkbox } from '#src/components/Checkbox.tsx';
 import { QuantityInput } from '#src/components/QuantityInput.tsx';
 import { Select } from '#src/components/Select.tsx';
 import { withField } from '../../state/withField.ts';
-import { above0, FieldGrid, FormPart, not0Below, VectorField } from '../fields/fields.tsx';
+import { above0, not0Below } from '../fields/checks.ts';
+import { FieldGrid, FormPart, VectorField } from '../fields/fields.tsx';
 import { IdField, ReferenceField, TextField } from '../fields/textFields.tsx';
 import type { EntryFormProps } from './EntryFormProps.ts';
 

@@ -2,7 +2,8 @@ import { poissonRatio, shearModulus } from '#shared/frame/materialProperties.ts'
 import { Quantity } from '#src/components/Quantity.tsx';
 import { QuantityInput } from '#src/components/QuantityInput.tsx';
 import { withField } from '../../state/withField.ts';
-import { above0, FieldGrid, not0Below } from '../fields/fields.tsx';
+import { above0, not0Below } from '../fields/checks.ts';
+import { FieldGrid } from '../fields/fields.tsx';
 import { IdField, TextField } from '../fields/textFields.tsx';
 import type { EntryFormProps } from './EntryFormProps.ts';
 

@@ -1,5 +1,6 @@
 import { withField } from '../../state/withField.ts';
-import { above0, FieldGrid, FormPart, not0Below, SixField } from '../fields/fields.tsx';
+import { above0, not0Below } from '../fields/checks.ts';
+import { FieldGrid, FormPart, SixField } from '../fields/fields.tsx';
 import { IdField, ReferenceField, TextField } from '../fields/textFields.tsx';
 import type { EntryFormProps } from './EntryFormProps.ts';
 

@@ -4,15 +4,8 @@ import { QuantityInput } from '#src/components/QuantityInput.tsx';
 import { Select } from '#src/components/Select.tsx';
 import { useUnits } from '#src/hooks/useUnits.ts';
 import { orNothing, withField } from '../../state/withField.ts';
-import {
-  above0,
-  FieldGrid,
-  FormPart,
-  isRotation,
-  SixField,
-  not0Below,
-  VectorField,
-} from '../fields/fields.tsx';
+import { above0, isRotation, not0Below } from '../fields/checks.ts';
+import { FieldGrid, FormPart, SixField, VectorField } from '../fields/fields.tsx';
 import { ReferenceField, TextField } from '../fields/textFields.tsx';
 import type { EntryFormProps } from './EntryFormProps.ts';
 

@@ -29,7 +29,7 @@ export function PartsDrawer({ tab, onTab, open, onOpen }: PartsDrawerProps) {
 
   const tabs = [
     ...LIST_TITLES.map(({ list, title }) => ({
-      value: list as PartsTab,
+      value: list,
       label: <Counted title={title} count={frame[list].length} />,
     })),
     { value: 'frame' as const, label: 'Frame' },
@@ -79,22 +79,15 @@ export function PartsDrawer({ tab, onTab, open, onOpen }: PartsDrawerProps) {
           tabs={tabs}
           className="[&>[role=tablist]]:pr-24"
         >
-          {open && (
-            <TabPanel
-              value={tab}
-              tabIndex={-1}
-              className="overflow-hidden px-3 max-md:h-[60dvh] md:h-[var(--parts)]"
-              style={{ ['--parts' as string]: `${height}px` }}
-            >
-              {tab === 'frame' && (
-                <div className="h-full overflow-auto py-3">
-                  <FrameForm />
-                </div>
-              )}
-              {tab === 'problems' && <ProblemList />}
-              {tab !== 'frame' && tab !== 'problems' && <PartsTable key={tab} list={tab} />}
-            </TabPanel>
-          )}
+          <TabPanel
+            value={tab}
+            tabIndex={-1}
+            hidden={!open}
+            className="overflow-hidden px-3 max-md:h-[60dvh] md:h-[var(--parts)]"
+            style={{ ['--parts' as string]: `${height}px` }}
+          >
+            {open && <TabContent tab={tab} />}
+          </TabPanel>
         </Tabs>
         <button
           type="button"
@@ -112,6 +105,16 @@ export function PartsDrawer({ tab, onTab, open, onOpen }: PartsDrawerProps) {
         </button>
       </div>
     </section>
+  );
+}
+
+function TabContent({ tab }: { tab: PartsTab }) {
+  if (tab === 'problems') return <ProblemList />;
+  if (tab !== 'frame') return <PartsTable key={tab} list={tab} />;
+  return (
+    <div className="h-full overflow-auto py-3">
+      <FrameForm />
+    </div>
   );
 }
 
