@@ -1,4 +1,4 @@
-import { Link, NavLink, Outlet, useParams } from 'react-router-dom';
+import { Link, NavLink, Outlet, useLocation, useParams, useSearchParams } from 'react-router-dom';
 import { Button } from '#src/components/Button.tsx';
 import { ErrorNote } from '#src/components/ErrorNote.tsx';
 import { Loading } from '#src/components/Loading.tsx';
@@ -56,13 +56,29 @@ export function ProjectLayout() {
   );
 }
 
+/**
+ * What stays in the address from place to place: the operating state, and the revision that is looked at. Release
+ * opens a revision by itself, so leaving it leads back to the draft.
+ */
+function useKeptSearch(): string {
+  const [search] = useSearchParams();
+  const { pathname } = useLocation();
+  const names = pathname.endsWith('/release') ? ['state'] : ['state', 'revision'];
+  const kept = names.flatMap((name) => {
+    const value = search.get(name);
+    return value === null ? [] : [[name, value]];
+  });
+  return new URLSearchParams(kept).toString();
+}
+
 function Places({ className }: { className: string }) {
+  const search = useKeptSearch();
   return (
     <nav aria-label="Project" className={className}>
       {PLACES.map((place) => (
         <NavLink
           key={place.to}
-          to={place.to}
+          to={{ pathname: place.to, search }}
           className="inline-flex min-h-10 items-center border-b-2 border-transparent px-3 no-underline hover:border-rule aria-[current=page]:border-ink aria-[current=page]:font-medium sm:min-h-8"
         >
           {place.name}

@@ -78,32 +78,25 @@ export function FrequencyMarks({ marks, selectedMode, describe, hrefFor }: Frequ
   );
 }
 
-/** Hollow head: only the expected supports are computed. A double head says that several modes share the mark. */
+/**
+ * Hollow head: only the expected supports are computed. A second head says that several modes share the mark; a
+ * frame around the head marks the mode that is open.
+ */
 function MarkFigure({ mark, selected }: { mark: FrequencyMark; selected: boolean }) {
-  const fill = selected ? 'currentColor' : 'var(--sheet)';
   return (
     <>
-      <span className="whitespace-nowrap font-mono text-[11px] leading-4 tabular-nums">
+      <span
+        className={`whitespace-nowrap font-mono text-[11px] leading-4 tabular-nums ${selected ? 'font-semibold' : ''}`}
+      >
         {mark.label}
       </span>
-      <svg width="16" height="26" viewBox="0 0 16 26" aria-hidden="true" className="shrink-0">
-        <line
-          x1="8"
-          y1="8"
-          x2="8"
-          y2="26"
-          stroke="currentColor"
-          strokeWidth={selected ? 2.5 : 1.25}
-        />
-        {mark.modes.length > 1 && (
-          <path d="M3 6 L8 1 L13 6" fill="none" stroke="currentColor" strokeWidth="1.25" />
-        )}
-        <path
-          d="M8 3.5 L12.5 8 L8 12.5 L3.5 8 Z"
-          fill={fill}
-          stroke="currentColor"
-          strokeWidth="1.25"
-        />
+      <svg width="20" height="26" viewBox="0 0 20 26" aria-hidden="true" className="shrink-0">
+        <g fill="none" stroke="currentColor" strokeWidth="1.25">
+          <path d="M10 12.5V26" strokeWidth={selected ? 3 : 1.25} />
+          {mark.modes.length > 1 && <path d="M5 6 L10 1 L15 6" />}
+          <path d="M10 3.5 L14.5 8 L10 12.5 L5.5 8 Z" strokeWidth={selected ? 2.25 : 1.25} />
+          {selected && <path d="M2 4V1h4M18 4V1h-4M2 12v3h4M18 12v3h-4" />}
+        </g>
       </svg>
     </>
   );

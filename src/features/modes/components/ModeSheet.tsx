@@ -14,7 +14,7 @@ interface ModeSheetProps {
   readonly onChoose: (mode: number) => void;
 }
 
-const PICTURE = { width: 168, height: 126 };
+const PICTURE = { width: 148, height: 112 };
 /** Above this many lines per frame only the picture pointed at moves; the rest stand at their extreme. */
 const SEGMENTS_THAT_MOVE = 12_000;
 
@@ -26,10 +26,10 @@ export function ModeSheet({ modes, shapes, selectedMode, playback, onChoose }: M
   return (
     <ul
       aria-label="Mode sheet"
-      className="grid grid-cols-[repeat(auto-fill,minmax(168px,1fr))] gap-px border border-rule bg-rule"
+      className="grid grid-cols-[repeat(auto-fill,minmax(150px,1fr))] border-t border-l border-rule"
     >
       {modes.map((mode, index) => (
-        <li key={mode.number} className="bg-sheet">
+        <li key={mode.number} className="border-r border-b border-rule bg-sheet">
           <button
             type="button"
             aria-pressed={mode.number === selectedMode}
@@ -38,7 +38,7 @@ export function ModeSheet({ modes, shapes, selectedMode, playback, onChoose }: M
             onPointerLeave={() => setPointedAt(null)}
             onFocus={() => setPointedAt(mode.number)}
             onBlur={() => setPointedAt(null)}
-            className="flex h-full w-full cursor-pointer flex-col items-center border-t-2 border-transparent px-2 pt-1 pb-2 text-left hover:bg-ground aria-pressed:border-ink"
+            className="flex h-full w-full cursor-pointer flex-col items-center border-t-2 border-transparent px-1.5 pt-1 pb-2 text-left hover:bg-ground aria-pressed:border-ink"
           >
             <ModePictureCanvas
               shapes={shapes}

@@ -1,12 +1,11 @@
 import { ChevronLeft, ChevronRight } from 'lucide-react';
+import type { ReactNode } from 'react';
 import type { OperatingState } from '#shared/schemas/frameDocument.ts';
 import type { ModeSummary } from '#shared/schemas/solveResult.ts';
 import { Button } from '#src/components/Button.tsx';
 import { Select } from '#src/components/Select.tsx';
 import { formatModeFrequency } from '../state/formatMode.ts';
 import { LOOKS, type Look } from '../state/looks.ts';
-import type { Playback } from '../state/playback.ts';
-import { PlaybackBar } from './PlaybackBar.tsx';
 
 interface ModeStripProps {
   readonly modes: readonly ModeSummary[];
@@ -14,9 +13,8 @@ interface ModeStripProps {
   readonly look: Look;
   readonly states: readonly OperatingState[];
   readonly stateId: string | null;
-  readonly playback: Playback;
-  readonly exaggeration: number;
-  readonly onExaggeration: (value: number) => void;
+  /** Stands here where no view has a strip of its own. */
+  readonly playbackBar: ReactNode;
   readonly onMode: (number: number) => void;
   readonly onLook: (look: Look) => void;
   readonly onState: (stateId: string) => void;
@@ -30,14 +28,18 @@ export function ModeStrip(props: ModeStripProps) {
   const after = modes[at + 1];
   return (
     <div className="flex flex-wrap items-center gap-x-5 gap-y-1 border-b border-rule px-3 py-1.5">
-      <div role="group" aria-label="Ways of looking" className="flex flex-wrap gap-1">
+      <div
+        role="group"
+        aria-label="Ways of looking"
+        className="flex max-w-full gap-1 overflow-x-auto"
+      >
         {LOOKS.map((one) => (
           <button
             key={one.value}
             type="button"
             aria-pressed={one.value === look}
             onClick={() => onLook(one.value)}
-            className="min-h-8 cursor-pointer border-b-2 border-transparent px-2 text-ink-soft hover:text-ink aria-pressed:border-ink aria-pressed:text-ink"
+            className="min-h-8 shrink-0 cursor-pointer border-b-2 border-transparent px-2 text-ink-soft hover:text-ink aria-pressed:border-ink aria-pressed:text-ink"
           >
             {one.label}
           </button>
@@ -78,13 +80,7 @@ export function ModeStrip(props: ModeStripProps) {
           />
         </div>
       )}
-      {look !== 'table' && (
-        <PlaybackBar
-          playback={props.playback}
-          exaggeration={props.exaggeration}
-          onExaggeration={props.onExaggeration}
-        />
-      )}
+      {look === 'sheet' && props.playbackBar}
     </div>
   );
 }

@@ -17,6 +17,7 @@ import { ModeStrip } from './ModeStrip.tsx';
 import { ModeTable } from './ModeTable.tsx';
 import { ModeTitleBlock } from './ModeTitleBlock.tsx';
 import { MovingFrame } from './MovingFrame.tsx';
+import { PlaybackBar } from './PlaybackBar.tsx';
 
 export interface Solved {
   readonly summary: SolveSummary;
@@ -88,18 +89,19 @@ export function ModesSheet({ project, shown, stale, consistent, lumped }: ModesS
   const partner = pairing?.pairs.find((pair) => summary.modes[pair.a]?.number === mode.number);
   const partnerMode = partner ? lumped?.summary.modes[partner.b] : undefined;
   const moving = { document: shown.document, camera, playback, exaggeration };
+  const playbackBar = (
+    <PlaybackBar playback={playback} exaggeration={exaggeration} onExaggeration={setExaggeration} />
+  );
 
   return (
-    <div className="relative flex h-full min-h-0 flex-col">
+    <div className="relative flex h-full min-h-0 flex-col max-md:overflow-y-auto">
       <ModeStrip
         modes={summary.modes}
         mode={mode}
         look={look}
         states={shown.document.states}
         stateId={shown.state?.id ?? null}
-        playback={playback}
-        exaggeration={exaggeration}
-        onExaggeration={setExaggeration}
+        playbackBar={playbackBar}
         onMode={choose}
         onLook={(value) => set('look', value)}
         onState={(value) => set('state', value)}
@@ -120,15 +122,16 @@ export function ModesSheet({ project, shown, stale, consistent, lumped }: ModesS
         </div>
       )}
       {look === 'one' && (
-        <div className="relative flex min-h-0 flex-1 flex-col md:block">
+        <div className="relative flex min-h-0 flex-1 flex-col max-md:min-h-max md:block">
           <MovingFrame
             {...moving}
             shapes={shapes}
             index={summary.modes.indexOf(mode)}
             mode={mode}
             label="consistent mass"
+            tools={playbackBar}
           />
-          <div className="border-rule bg-sheet/90 p-4 max-md:max-h-56 max-md:overflow-y-auto max-md:border-t md:absolute md:top-12 md:left-2 md:w-64 md:border">
+          <div className="border-rule bg-sheet p-4 max-md:border-t md:absolute md:top-14 md:left-3 md:w-64 md:border">
             <ModeDetails mode={mode} summary={summary} document={shown.document} />
           </div>
         </div>
@@ -142,6 +145,7 @@ export function ModesSheet({ project, shown, stale, consistent, lumped }: ModesS
               index={summary.modes.indexOf(mode)}
               mode={mode}
               label="consistent mass"
+              tools={playbackBar}
             />
             {lumped && partner && partnerMode ? (
               <MovingFrame
@@ -150,6 +154,7 @@ export function ModesSheet({ project, shown, stale, consistent, lumped }: ModesS
                 index={partner.b}
                 mode={partnerMode}
                 label="lumped mass"
+                bare
               />
             ) : (
               <p className="self-center p-6 text-ink-soft">

@@ -1,4 +1,4 @@
-import { useMemo } from 'react';
+import { useMemo, type ReactNode } from 'react';
 import type { ModeShapes } from '#shared/analysis/shapesFile.ts';
 import type { FrameDocument } from '#shared/schemas/frameDocument.ts';
 import type { ModeSummary } from '#shared/schemas/solveResult.ts';
@@ -19,7 +19,9 @@ interface MovingFrameProps {
   readonly camera: CameraStore;
   readonly playback: Playback;
   readonly exaggeration: number;
-  /** Leaves the strip of views out: the view beside it has it. */
+  /** More words for the strip above the view. */
+  readonly tools?: ReactNode;
+  /** Leaves that strip out: the view beside it has it. */
   readonly bare?: boolean;
 }
 
@@ -28,7 +30,7 @@ const USUAL_SWING = 0.08;
 
 /** The frame moving in one mode, with the undeformed frame in pencil. */
 export function MovingFrame(props: MovingFrameProps) {
-  const { document, shapes, index, mode, label, camera, playback, exaggeration, bare } = props;
+  const { document, shapes, index, mode, label, camera, playback, exaggeration } = props;
   const size = useMemo(
     () => sizeOf(boundsOf(document.nodes.map(({ x, y, z }) => [x, y, z]))),
     [document],
@@ -44,15 +46,16 @@ export function MovingFrame(props: MovingFrameProps) {
   );
   const said = `Mode ${mode.number}, ${formatModeFrequency(mode)}, ${mode.name}`;
   return (
-    <figure className="relative h-full min-h-0 min-w-0">
+    <figure className="relative h-full min-h-0 min-w-0 flex-1">
       <FrameView
         document={document}
         camera={camera}
         deformation={deformation}
         description={`${said}, by ${label}. The frame swings about the undeformed frame, which is drawn in pencil.`}
-        bare={bare ?? false}
+        tools={props.tools}
+        bare={props.bare ?? false}
       />
-      <figcaption className="pointer-events-none absolute bottom-2 left-3 bg-sheet/80 px-1 text-sm">
+      <figcaption className="pointer-events-none absolute right-3 bottom-2 bg-sheet px-1 text-sm">
         <span className="num">{formatModeFrequency(mode)}</span>
         <span className="text-ink-soft"> {label}</span>
       </figcaption>

@@ -35,7 +35,7 @@ export function PlaybackBar({ playback, exaggeration, onExaggeration }: Playback
   };
 
   return (
-    <div className="flex flex-wrap items-center gap-x-5 gap-y-1 text-sm">
+    <div className="flex shrink-0 items-center gap-x-4 text-sm">
       {still ? (
         <div role="group" aria-label="Extremes" className="flex gap-1">
           <Button look="quiet" onClick={() => playback.setPhase(0)}>

@@ -1,3 +1,4 @@
+import { useEffect } from 'react';
 import { useParams, useSearchParams } from 'react-router-dom';
 import { EmptyState } from '#src/components/EmptyState.tsx';
 import { ErrorNote } from '#src/components/ErrorNote.tsx';
@@ -12,9 +13,18 @@ import { SubmitDraft } from './SubmitDraft.tsx';
 /** Release: what may be submitted, the revisions, and the one that is open. */
 export default function ReleasePage() {
   const { projectId = '' } = useParams();
-  const [search] = useSearchParams();
+  const [search, setSearch] = useSearchParams();
   const project = useProject(projectId);
   const revisions = useRevisions(projectId);
+  const wanted = search.get('revision');
+  const newest = revisions.data?.[0]?.number;
+
+  // The address names what is open, so that the frequency line below speaks of the same revision.
+  useEffect(() => {
+    if (wanted === null && newest !== undefined) {
+      setSearch({ revision: String(newest) }, { replace: true });
+    }
+  }, [wanted, newest, setSearch]);
 
   if (project.error ?? revisions.error) {
     return (
@@ -33,11 +43,7 @@ export default function ReleasePage() {
     );
   }
 
-  const wanted = search.get('revision');
-  const open =
-    wanted === null
-      ? revisions.data[0]
-      : revisions.data.find((revision) => String(revision.number) === wanted);
+  const open = revisions.data.find((revision) => String(revision.number) === wanted);
 
   return (
     <div className="h-full overflow-y-auto">
