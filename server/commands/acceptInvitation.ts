@@ -2,7 +2,7 @@ import { Op, type Transaction } from 'sequelize';
 import { AppError } from '#shared/errors/AppError.ts';
 import { inTransaction } from '#server/models/database.ts';
 import { Invitation } from '#server/models/Invitation.ts';
-import { Person } from '#server/models/Person.ts';
+import type { Person } from '#server/models/Person.ts';
 import { Team } from '#server/models/Team.ts';
 import { createPerson } from './createPerson.ts';
 import { tokenHash } from './token.ts';

@@ -46,9 +46,10 @@ export async function startLocalMailServer(): Promise<LocalMailServer> {
 
 async function store(stream: SMTPServerDataStream): Promise<void> {
   const mail = await simpleParser(stream, { skipTextToHtml: true });
+  const teamId = mail.headers.get(TEAM_HEADER.toLowerCase());
   const to = [mail.to ?? []].flat().map((address) => address.text);
   await SentMail.create({
-    teamId: String(mail.headers.get(TEAM_HEADER.toLowerCase())),
+    teamId: typeof teamId === 'string' ? teamId : '',
     to: to.join(', '),
     subject: mail.subject ?? '',
     text: mail.text ?? '',

@@ -116,7 +116,8 @@ async function personOfSession(stored: unknown): Promise<Person | null> {
 export function checkPassword(request: Request, response: Response): Promise<Person | null> {
   return new Promise((resolve, reject) => {
     const done = (error: unknown, user: unknown) => {
-      if (error) reject(error instanceof Error ? error : new Error(String(error)));
+      if (error)
+        reject(error instanceof Error ? error : new Error('The password was not checked.'));
       else resolve(user instanceof Person ? user : null);
     };
     const strategy = passport.authenticate('local', done) as RequestHandler;

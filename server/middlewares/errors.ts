@@ -60,7 +60,7 @@ function problemOf(error: AppError, status: number, req: Request): Problem {
     status,
     detail: error.message,
     code: error.code,
-    instance: `urn:uuid:${String(req.id)}`,
+    instance: `urn:uuid:${req.id as string}`,
     ...(issues ? { errors: [...issues] } : {}),
     ...(Object.keys(details).length > 0 ? { details } : {}),
   };

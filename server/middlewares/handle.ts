@@ -87,7 +87,12 @@ function route<P extends z.ZodType, Q extends z.ZodType, B extends z.ZodType, R 
   work: Handler<P, Q, B, R, Person | null>,
   ...guards: RequestHandler[]
 ): Route {
-  const readBody = express.json({ limit: contract.maxBodyBytes ?? MAX_BODY_BYTES });
+  const readBody = express.json({
+    limit: contract.maxBodyBytes ?? MAX_BODY_BYTES,
+    verify: (_request, _response, bytes) => {
+      refuseNul(bytes.includes('\\u0000'));
+    },
+  });
   const serve: RequestHandler = async (request, response) => {
     const input = readInput(contract, request);
     // Passport's strategies read the body themselves: they get the checked one.
@@ -102,7 +107,17 @@ function route<P extends z.ZodType, Q extends z.ZodType, B extends z.ZodType, R 
   return { contract, handlers: [...guards, requireJson, readBody, serve] };
 }
 
+/** PostgreSQL stores no NUL character in text, and nobody types one. */
+function refuseNul(found: boolean): void {
+  if (found) {
+    throw new AppError('invalid-request', 'Leave out the NUL character (\\u0000).', {
+      issues: [{ path: '', message: 'Text may not contain the NUL character.' }],
+    });
+  }
+}
+
 const requireJson: RequestHandler = (request, _response, next) => {
+  refuseNul(request.originalUrl.includes('%00'));
   // `is` answers null when there is no body at all.
   if (request.is('json') === false) {
     throw new AppError('unsupported-media-type', 'Send the body as application/json.');

@@ -46,7 +46,7 @@ describe('activity', () => {
   it('tells in plain sentences who did what, newest first', async () => {
     await record();
     const client = await signedIn(app.express, tomas);
-    const { body } = await client.get('/api/activity').expect(200);
+    const body: unknown = (await client.get('/api/activity').expect(200)).body;
     const { entries } = body as Page;
     expect(entries.map(({ sentence }) => sentence)).toEqual([
       'changed the role of Tomas Quell from designer to lead',
@@ -60,7 +60,7 @@ describe('activity', () => {
     await record();
     await tomas.update({ name: 'Tomas Quell-Hask' });
     const client = await signedIn(app.express, tomas);
-    const { body } = await client.get('/api/activity');
+    const body: unknown = (await client.get('/api/activity')).body;
     expect((body as Page).entries[0]?.sentence).toContain('Tomas Quell-Hask');
     const stored = await AuditEntry.findAll({ where: { teamId: team.id } });
     expect(stored.map((entry) => entry.canonical).join()).not.toContain('Tomas');
@@ -82,7 +82,7 @@ describe('activity', () => {
   it('shows nothing of another team, and nothing of the team to guests', async () => {
     const other = await aTeam('Elsewhere');
     const stranger = await signedIn(app.express, await anAdministrator(other));
-    const { body } = await stranger.get('/api/activity').expect(200);
+    const body: unknown = (await stranger.get('/api/activity').expect(200)).body;
     expect((body as Page).entries).toHaveLength(2);
     const guest = await signedIn(app.express, await aPerson(team, { role: 'guest' }));
     const seen = await guest.get('/api/activity').expect(200);

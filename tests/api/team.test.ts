@@ -193,7 +193,7 @@ describe('an invitation', () => {
 
   it('can be taken back, and again', async () => {
     const email = newAddress();
-    const { body } = await invite(email).expect(201);
+    const body: unknown = (await invite(email).expect(201)).body;
     const token = await tokenTo(email);
     const { id } = body as { id: string };
     await administrator.delete(`/api/team/invitations/${id}`).expect(204);
@@ -203,7 +203,7 @@ describe('an invitation', () => {
 
   it('works for a week', async () => {
     const email = newAddress();
-    const { body } = await invite(email).expect(201);
+    const body: unknown = (await invite(email).expect(201)).body;
     const { id, expiresAt } = body as { id: string; expiresAt: string };
     const days = (Date.parse(expiresAt) - Date.now()) / 86_400_000;
     expect(days).toBeCloseTo(7, 2);
