@@ -1,4 +1,6 @@
 import { randomUUID } from 'node:crypto';
+import type { IncomingMessage } from 'node:http';
+import { json } from 'node:stream/consumers';
 import type { Response, Test } from 'supertest';
 import { aPortal } from '#tests/builders/aFrame.ts';
 import { PASSWORD } from '#tests/builders/aPerson.ts';
@@ -79,11 +81,23 @@ export const table: Readonly<Record<string, Row>> = {
   } satisfies Record<string, Row>,
 };
 
-/** An event stream never ends by itself: the answer's head is enough. */
+/** An event stream never ends by itself: its head is enough. A refusal is read whole. */
 const headOnly = (test: Test): Test =>
-  test.buffer(false).parse((response, done) => {
-    (response as unknown as { destroy: () => void }).destroy();
-    done(null, null);
+  test.buffer(true).parse((message, done) => {
+    const response = message as unknown as IncomingMessage;
+    if (response.statusCode === 200) {
+      response.destroy();
+      done(null, null);
+      return;
+    }
+    json(response).then(
+      (body) => {
+        done(null, body);
+      },
+      (error: unknown) => {
+        done(error as Error, null);
+      },
+    );
   });
 
 const LETTERS: Readonly<Record<string, Verdict>> = {
