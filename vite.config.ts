@@ -11,6 +11,8 @@ export default defineConfig({
     outDir: 'dist/client',
     emptyOutDir: true,
     target: 'es2022',
+    // Everything is a file of its own: the security policy lets no data: address in.
+    assetsInlineLimit: 0,
     // The viewer (three.js) and the unit parser (mathjs) are each one large chunk, loaded when needed.
     chunkSizeWarningLimit: 1200,
   },

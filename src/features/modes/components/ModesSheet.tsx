@@ -138,7 +138,7 @@ export function ModesSheet({ project, shown, stale, consistent, lumped }: ModesS
       )}
       {look === 'beside' && (
         <div className="min-h-0 flex-1 overflow-y-auto">
-          <div className="grid h-[46%] min-h-72 grid-cols-2 divide-x divide-rule border-b border-rule">
+          <div className="grid h-[46%] min-h-72 divide-rule border-b border-rule max-md:h-auto max-md:divide-y md:grid-cols-2 md:divide-x">
             <MovingFrame
               {...moving}
               shapes={shapes}

@@ -46,7 +46,7 @@ export function MovingFrame(props: MovingFrameProps) {
   );
   const said = `Mode ${mode.number}, ${formatModeFrequency(mode)}, ${mode.name}`;
   return (
-    <figure className="relative h-full min-h-0 min-w-0 flex-1">
+    <figure className="relative h-full min-h-0 min-w-0 max-md:h-[46dvh] max-md:shrink-0">
       <FrameView
         document={document}
         camera={camera}

@@ -5,16 +5,16 @@
 export interface Playback {
   /** Phase of the motion in rad; a shape is drawn with the factor cos(phase). */
   readonly phase: { current: number };
-  isPlaying(): boolean;
-  play(): void;
-  pause(): void;
-  setPhase(phase: number): void;
+  readonly isPlaying: () => boolean;
+  readonly play: () => void;
+  readonly pause: () => void;
+  readonly setPhase: (phase: number) => void;
   /** Cycles per second on screen; has nothing to do with the mode's own frequency. */
-  setSpeed(cyclesPerSecond: number): void;
+  readonly setSpeed: (cyclesPerSecond: number) => void;
   /** Called after every change of phase; returns how to stop listening. */
-  onPhase(listener: (phase: number) => void): () => void;
+  readonly onPhase: (listener: (phase: number) => void) => () => void;
   /** Called when playing starts or stops. */
-  onPlaying(listener: () => void): () => void;
+  readonly onPlaying: (listener: () => void) => () => void;
 }
 
 export const SLOWEST = 0.1;
@@ -26,8 +26,8 @@ const TURN = 2 * Math.PI;
 const LONGEST_STEP_S = 0.1;
 
 interface FrameClock {
-  request(draw: (timeMs: number) => void): number;
-  cancel(handle: number): void;
+  readonly request: (draw: (timeMs: number) => void) => number;
+  readonly cancel: (handle: number) => void;
 }
 
 /** A playback on the browser's animation frames; tests hand in a clock of their own. */

@@ -176,19 +176,8 @@ describe('in the X–Z plane', () => {
   });
 });
 
-it('takes time in proportion to the size: ten times the members, not a hundred times the time', () => {
-  const time = (input: unknown): number => {
-    const runs = Array.from({ length: 3 }, () => {
-      const start = performance.now();
-      checkDocument(input);
-      return performance.now() - start;
-    });
-    return Math.min(...runs);
-  };
-  const small = aRack({ bays: 9, storeys: 7 });
+it('accepts a large frame whole', () => {
   const large = aRack({ bays: 20, storeys: 15 });
-  const ratio = large.members.length / small.members.length;
   expect(large.members.length).toBeGreaterThan(15_000);
-  time(small);
-  expect(time(large) / time(small)).toBeLessThan(ratio * 3);
+  expect(checkDocument(large).errors).toEqual([]);
 });
