@@ -42,11 +42,15 @@ export async function stopJobs(): Promise<void> {
   workers.clear();
 }
 
-/** Serves a queue in this process, one job at a time. A job whose work throws is tried again later. */
+/**
+ * Serves a queue in this process, one job at a time. A job whose work throws is tried again later.
+ *
+ * @returns what ends it: no further job is taken
+ */
 export async function workOn<Q extends QueueName>(
   queue: Q,
   work: (data: JobData[Q]) => Promise<void>,
-): Promise<void> {
+): Promise<() => Promise<void>> {
   const id = await running().work<JobData[Q]>(
     queue,
     { batchSize: 1, pollingIntervalSeconds: POLLING_SECONDS },
@@ -55,6 +59,10 @@ export async function workOn<Q extends QueueName>(
     },
   );
   workers.set(queue, id);
+  return async () => {
+    if (workers.get(queue) === id) workers.delete(queue);
+    await boss?.offWork({ id });
+  };
 }
 
 /**

@@ -112,7 +112,7 @@ export async function startRunner(
 
   await thread.warm();
   ready = true;
-  await workOn('solve', ({ solveId }) => {
+  const takeNoMore = await workOn('solve', ({ solveId }) => {
     settled = serve(solveId);
     return settled;
   });
@@ -123,6 +123,7 @@ export async function startRunner(
       stopping = true;
       clearInterval(rescue);
       stopListening();
+      await takeNoMore();
       current?.controller.abort('stopping' satisfies Ending);
       await settled.catch(() => undefined);
       await thread.close();

@@ -8,6 +8,7 @@ import type { Config } from '#server/config/config.ts';
 import { memoryLimit, type SolveProgress, type SolveTask } from './solveWorker.ts';
 
 const MEGABYTE = 1024 * 1024;
+const MEMORY_LOOK_MS = 200;
 
 /** From sources the thread runs TypeScript as its parent does; bundled, it lies in a folder beside the two programs. */
 const fromSources = import.meta.url.endsWith('.ts');
@@ -50,20 +51,47 @@ export function startSolverThread(
       const { port1, port2 } = new MessageChannel();
       port1.on('message', onProgress);
       const timeLimit = AbortSignal.timeout(solveTimeLimitMs);
-      const either = AbortSignal.any([signal, timeLimit]);
+      const memory = watchMemory(solveMemoryLimitMb * MEGABYTE);
+      const any = AbortSignal.any([signal, timeLimit, memory.limit]);
       try {
         const task = { request, port: port2, memoryLimitBytes: solveMemoryLimitMb * MEGABYTE };
-        return (await pool.run(task, { transferList: [port2], signal: either })) as SolveReply;
+        return (await pool.run(task, { transferList: [port2], signal: any })) as SolveReply;
       } catch (error) {
         if (signal.aborted) throw signal.reason;
         if (timeLimit.aborted) return failed('time-limit', timeLimitMessage(solveTimeLimitMs));
-        if (isOutOfMemory(error)) return { kind: 'failed', error: memoryLimit().toWire() };
+        if (memory.limit.aborted || isOutOfMemory(error)) {
+          return { kind: 'failed', error: memoryLimit().toWire() };
+        }
         throw error;
       } finally {
+        memory.stop();
         port1.close();
       }
     },
     close: () => pool.destroy(),
+  };
+}
+
+interface MemoryWatch {
+  readonly limit: AbortSignal;
+  readonly stop: () => void;
+}
+
+/**
+ * Watches how much the process grows while a solve runs. The thread looks at its own arrays only where it reports
+ * progress, and a factorisation can take all the memory of the machine before that.
+ */
+function watchMemory(limitBytes: number): MemoryWatch {
+  const before = process.memoryUsage.rss();
+  const controller = new AbortController();
+  const timer = setInterval(() => {
+    if (process.memoryUsage.rss() - before > limitBytes) controller.abort();
+  }, MEMORY_LOOK_MS);
+  return {
+    limit: controller.signal,
+    stop: () => {
+      clearInterval(timer);
+    },
   };
 }
 
