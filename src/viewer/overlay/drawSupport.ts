@@ -44,16 +44,20 @@ export function drawSupport(
       if (held.has(displacement) && axis) stop(pen, spot, axis, size);
     });
   }
+  const upright = support.stiffness?.w !== undefined;
   for (const displacement of moves) {
     const axis = seen(axes[TRANSLATIONS.indexOf(displacement)]!, projection);
     if (support.stiffness?.[displacement] === undefined || !axis) continue;
-    const end = along(spot, axis, size * 1.5);
-    coil(pen, spot, end, size * 0.5);
-    hatchedLine(pen, end, unit(axis), size * 0.7);
+    // Beside a coil under the foot those across it are drawn small, so that a foot reads as a foot.
+    const share = upright && displacement !== 'w' ? 0.5 : 1;
+    const start = along(spot, unit(axis), share < 1 ? 4 : 0);
+    const end = along(start, axis, size * 1.6 * share);
+    coil(pen, start, end, size * 0.6 * share);
+    hatchedLine(pen, end, unit(axis), size * 0.8 * share);
   }
   if (turns.some((displacement) => support.stiffness?.[displacement] !== undefined)) {
     pen.beginPath();
-    pen.arc(spot.x, spot.y, size * 0.55, 0.25 * Math.PI, 1.75 * Math.PI);
+    pen.arc(spot.x, spot.y, size * 0.55, 1.05 * Math.PI, 1.95 * Math.PI);
     pen.stroke();
   }
 }

@@ -43,26 +43,24 @@ export function hatchedLine(pen: Pen, middle: Spot, towards: Spot, width: number
   }
 }
 
-/** A coil from one spot to another: straight ends, loops between. */
+/** Points on one turn of a coil as it is drawn. */
+const COIL_STEPS = 10;
+
+/** A coil from one spot to another, seen from the side: straight ends, an even wave between. */
 export function coil(pen: Pen, from: Spot, to: Spot, width: number): void {
   const direction = directionOf(from, to);
   if (!direction) return;
   const side = across(direction);
   const length = Math.hypot(to.x - from.x, to.y - from.y);
-  const lead = Math.min(length * 0.15, width);
-  const turns = Math.max(2, Math.min(7, Math.round((length - 2 * lead) / (width * 0.7))));
-  const pitch = (length - 2 * lead) / turns;
+  const lead = length * 0.14;
+  const turns = Math.max(2, Math.min(8, Math.round((length - 2 * lead) / (width * 0.55))));
+  const steps = turns * COIL_STEPS;
   pen.beginPath();
   pen.moveTo(from.x, from.y);
-  let at = along(from, direction, lead);
-  pen.lineTo(at.x, at.y);
-  for (let turn = 0; turn < turns; turn += 1) {
-    const out = along(along(at, direction, pitch * 0.75), side, width / 2);
-    const back = along(along(at, direction, pitch * 0.25), side, -width / 2);
-    const next = along(at, direction, pitch);
-    pen.bezierCurveTo(out.x, out.y, out.x - direction.x * pitch, out.y, back.x, back.y);
-    pen.lineTo(next.x, next.y);
-    at = next;
+  for (let step = 0; step <= steps; step += 1) {
+    const middle = along(from, direction, lead + ((length - 2 * lead) * step) / steps);
+    const at = along(middle, side, (width / 2) * Math.sin((2 * Math.PI * step) / COIL_STEPS));
+    pen.lineTo(at.x, at.y);
   }
   pen.lineTo(to.x, to.y);
   pen.stroke();

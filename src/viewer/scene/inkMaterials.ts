@@ -28,8 +28,8 @@ export function faceMaterial(inks: Inks): ShaderMaterial {
       varying float vChosen;
       void main() {
         float light = 0.5 + 0.5 * dot(normalize(vNormal), normalize(vec3(-0.35, -0.5, 0.8)));
-        float tone = mix(0.3, 0.04, light);
-        vec3 colour = mix(sheet, ink, tone * 0.55);
+        float tone = mix(0.36, 0.05, light);
+        vec3 colour = mix(sheet, ink, tone);
         gl_FragColor = vec4(mix(colour, focus, vChosen * 0.35), 1.0);
         #include <colorspace_fragment>
       }

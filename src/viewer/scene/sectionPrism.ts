@@ -1,6 +1,5 @@
-import type { BufferGeometry } from 'three';
 import {
-  EdgesGeometry,
+  BufferGeometry,
   ExtrudeGeometry,
   Float32BufferAttribute,
   Path,
@@ -9,8 +8,8 @@ import {
 } from 'three';
 import type { SectionOutline, SectionPoint } from '#shared/frame/sections/section.ts';
 
-/** Edges between faces flatter than this to each other are roundings and are not drawn, degrees. */
-const CREASE = 24;
+/** Sides of an outline longer than this share of its reach are flat faces; shorter ones belong to a rounding. */
+const FLAT_SHARE = 0.3;
 
 /** A section drawn out over a length of 1 along x, y and z being the section's own: faces and drawn edges. */
 export interface SectionPrism {
@@ -26,7 +25,7 @@ export function sectionPrism(outline: SectionOutline): SectionPrism {
   cycleAxes(faces, 'position');
   cycleAxes(faces, 'normal');
   faces.deleteAttribute('uv');
-  return { faces, edges: new EdgesGeometry(faces, CREASE) };
+  return { faces, edges: drawnEdges([outline.outer, ...outline.holes]) };
 }
 
 function toVectors(points: readonly SectionPoint[]): Vector2[] {
@@ -42,4 +41,28 @@ function cycleAxes(geometry: BufferGeometry, name: 'position' | 'normal'): void 
     values[3 * i + 2] = old.getY(i);
   }
   geometry.setAttribute(name, new Float32BufferAttribute(values, 3));
+}
+
+/** The outline at both ends and, along the member, where flat faces meet a corner or a rounding. */
+function drawnEdges(rings: readonly (readonly SectionPoint[])[]): BufferGeometry {
+  const points: number[] = [];
+  for (const ring of rings) {
+    const reach = Math.max(...ring.flatMap(([y, z]) => [Math.abs(y), Math.abs(z)]));
+    const long = ring.map(([y, z], i) => {
+      const [y1, z1] = ring[(i + 1) % ring.length]!;
+      return Math.hypot(y1 - y, z1 - z) > FLAT_SHARE * reach;
+    });
+    const isRound = !long.some(Boolean);
+    ring.forEach(([y, z], i) => {
+      const [y1, z1] = ring[(i + 1) % ring.length]!;
+      points.push(0, y, z, 0, y1, z1, 1, y, z, 1, y1, z1);
+      const before = long[(i + ring.length - 1) % ring.length];
+      // A round has no faces to meet: lines at its quarters stand for its outline.
+      const quarter = isRound && i % Math.max(1, Math.round(ring.length / 4)) === 0;
+      if (long[i] || before || quarter) points.push(0, y, z, 1, y, z);
+    });
+  }
+  const geometry = new BufferGeometry();
+  geometry.setAttribute('position', new Float32BufferAttribute(points, 3));
+  return geometry;
 }

@@ -117,7 +117,7 @@ describe('apply', () => {
           frame = result.frame;
         }
       }),
-      { seed: 1852, numRuns: 300 },
+      { seed: 1852, numRuns: 100 },
     );
   });
 

@@ -1,4 +1,4 @@
-import { useState } from 'react';
+import { useCallback, useState } from 'react';
 import type { FrameDocument, Vector3 } from '#shared/schemas/frameDocument.ts';
 import type { WorkPlane } from '#src/viewer/camera/projection.ts';
 import type { Pointing } from '#src/viewer/overlay/drawSheet.ts';
@@ -42,6 +42,14 @@ export function useAdding(
   const [plane, setPlane] = useState<WorkPlane>({ axis: 2, at: 0 });
   const [step, setStep] = useState(FIRST_STEP);
 
+  const start = useCallback(
+    (next: AddingWhat) => {
+      choose([]);
+      setFrom(null);
+      setWhat(next);
+    },
+    [choose],
+  );
   const stop = () => {
     setWhat(null);
     setFrom(null);
@@ -99,11 +107,7 @@ export function useAdding(
     plane,
     step,
     pointing: what ? { plane, step, from: from?.at ?? null } : null,
-    start: (next) => {
-      choose([]);
-      setFrom(null);
-      setWhat(next);
-    },
+    start,
     stop,
     setPlane,
     setStep,

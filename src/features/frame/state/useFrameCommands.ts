@@ -1,4 +1,4 @@
-import { useEffect, useMemo, useRef } from 'react';
+import { useMemo } from 'react';
 import type { DocumentList } from '#shared/frame/documentDiff.ts';
 import { useCommands } from '#src/components/commands/useCommands.ts';
 import type { AddingWhat } from './useAdding.ts';
@@ -10,32 +10,28 @@ interface Actions {
   readonly redo: () => void;
 }
 
-/** Everything the Frame screen can do, for the command palette; each acts on the document of that moment. */
-export function useFrameCommands(actions: Actions): void {
-  const latest = useRef(actions);
-  useEffect(() => {
-    latest.current = actions;
-  });
+/** Everything the Frame screen can do, for the command palette. */
+export function useFrameCommands({ start, add, undo, redo }: Actions): void {
   const commands = useMemo(() => {
-    const command = (id: string, title: string, act: (actions: Actions) => void) => ({
+    const command = (id: string, title: string, run: () => void) => ({
       id,
       title,
       group: 'Frame',
-      run: () => act(latest.current),
+      run,
     });
     return [
-      command('add-node', 'Add node', ({ start }) => start('node')),
-      command('add-member', 'Add member', ({ start }) => start('member')),
-      command('add-support', 'Add support', ({ start }) => start('support')),
-      command('add-mass', 'Add mass', ({ start }) => start('mass')),
-      command('add-section', 'Add section', ({ add }) => add('sections')),
-      command('add-material', 'Add material', ({ add }) => add('materials')),
-      command('add-spring', 'Add spring', ({ add }) => add('springs')),
-      command('add-link', 'Add rigid link', ({ add }) => add('rigidLinks')),
-      command('add-state', 'Add operating state', ({ add }) => add('states')),
-      { ...command('undo', 'Undo', ({ undo }) => undo()), keys: 'Ctrl+Z' },
-      { ...command('redo', 'Redo', ({ redo }) => redo()), keys: 'Ctrl+Shift+Z' },
+      command('add-node', 'Add node', () => start('node')),
+      command('add-member', 'Add member', () => start('member')),
+      command('add-support', 'Add support', () => start('support')),
+      command('add-mass', 'Add mass', () => start('mass')),
+      command('add-section', 'Add section', () => add('sections')),
+      command('add-material', 'Add material', () => add('materials')),
+      command('add-spring', 'Add spring', () => add('springs')),
+      command('add-link', 'Add rigid link', () => add('rigidLinks')),
+      command('add-state', 'Add operating state', () => add('states')),
+      { ...command('undo', 'Undo', () => undo()), keys: 'Ctrl+Z' },
+      { ...command('redo', 'Redo', () => redo()), keys: 'Ctrl+Shift+Z' },
     ];
-  }, []);
+  }, [start, add, undo, redo]);
   useCommands(commands);
 }

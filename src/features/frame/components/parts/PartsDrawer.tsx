@@ -68,14 +68,17 @@ export function PartsDrawer({ tab, onTab, open, onOpen }: PartsDrawerProps) {
           }}
         />
       )}
-      <div className="relative">
+      <div
+        className="relative"
+        onClickCapture={(event) => {
+          // Pressing the tab that is chosen already opens the drawer too.
+          if (event.target instanceof Element && event.target.closest('[role=tab]')) onOpen(true);
+        }}
+      >
         <Tabs
           label="Parts of the frame"
           value={tab}
-          onValueChange={(value) => {
-            onTab(value);
-            onOpen(true);
-          }}
+          onValueChange={onTab}
           tabs={tabs}
           className="[&>[role=tablist]]:pr-24"
         >
