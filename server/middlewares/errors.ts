@@ -42,7 +42,8 @@ export const sendProblem: ErrorRequestHandler = (error: unknown, req, res, next)
   }
   const known = toAppError(error);
   const status = statuses[known.code];
-  if (status >= 500) req.log.error({ err: error }, known.message);
+  // An AppError is an answer we chose; anything else of ours needs its stack in the log.
+  if (status >= 500 && !(error instanceof AppError)) req.log.error({ err: error }, known.message);
   const { retryAfterSeconds } = known.details;
   if (typeof retryAfterSeconds === 'number') res.set('Retry-After', String(retryAfterSeconds));
   res
