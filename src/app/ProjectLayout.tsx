@@ -22,7 +22,7 @@ export function ProjectLayout() {
   useProjectEvents(projectId);
   return (
     <div className="flex h-dvh flex-col">
-      <SheetHeader>
+      <SheetHeader short>
         <p className="min-w-0 truncate">
           <span className="font-medium">{project.data?.name}</span>
           {project.data?.machine && (

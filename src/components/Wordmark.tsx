@@ -17,11 +17,16 @@ export function Mark({ className }: { className?: string }) {
   );
 }
 
-export function Wordmark() {
+interface WordmarkProps {
+  /** On small screens the mark alone, where the place is needed for a project's name. */
+  short?: boolean;
+}
+
+export function Wordmark({ short = false }: WordmarkProps) {
   return (
     <span className="inline-flex items-center gap-1.5 text-lg leading-none font-semibold tracking-tight">
       <Mark className="size-6" />
-      Ringstead
+      <span className={short ? 'hidden sm:inline' : undefined}>Ringstead</span>
     </span>
   );
 }

@@ -25,8 +25,8 @@ export function ActivityList({ entries, showProject }: ActivityListProps) {
                 <time dateTime={entry.at} className="num shrink-0 pt-0.5 text-ink-soft">
                   {formatTime(entry.at)}
                 </time>
-                <p className="min-w-0 flex-1">
-                  <span className="font-medium">{entry.actor?.name ?? 'Ringstead'}</span>{' '}
+                <p className="min-w-0 flex-1 first-letter:uppercase">
+                  {entry.actor && <span className="font-medium">{entry.actor.name} </span>}
                   {entry.sentence}
                   {showProject && entry.projectId !== null && (
                     <Link

@@ -50,7 +50,7 @@ export function FeetFields({ onValidChange }: { onValidChange: ValidChange }) {
           />
           <QuantityField
             name="feet.tilting"
-            label="Against tilting, each foot"
+            label="Tilting, each foot"
             kind="rotationalStiffness"
             hint="0 for a foot that tilts freely."
             {...{ onValidChange }}

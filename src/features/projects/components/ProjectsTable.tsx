@@ -2,6 +2,7 @@ import { Link } from 'react-router-dom';
 import type { ProjectSummary } from '#shared/schemas/project.ts';
 import { formatFrequency } from '#shared/units/formatFrequency.ts';
 import { DataTable, type DataColumn } from '#src/components/dataTable/DataTable.tsx';
+import { useNarrowScreen } from '#src/hooks/useNarrowScreen.ts';
 import { formatDate } from '#src/lib/formatTime.ts';
 import { WaitsFor } from './WaitsFor.tsx';
 
@@ -21,9 +22,12 @@ const COLUMNS: readonly DataColumn<ProjectSummary>[] = [
     rowHeader: true,
     sortValue: (project) => project.name,
     cell: (project) => (
-      <Link to={`/projects/${project.id}`} className="link font-medium">
-        {project.name}
-      </Link>
+      <>
+        <Link to={`/projects/${project.id}`} className="link font-medium">
+          {project.name}
+        </Link>
+        <span className="block text-ink-soft sm:hidden">{project.machine}</span>
+      </>
     ),
   },
   {
@@ -44,7 +48,7 @@ const COLUMNS: readonly DataColumn<ProjectSummary>[] = [
   },
   {
     id: 'first',
-    header: 'First frequency',
+    header: 'First mode',
     numeric: true,
     sortValue: (project) => project.firstFrequencyHz,
     cell: (project) =>
@@ -72,14 +76,19 @@ const COLUMNS: readonly DataColumn<ProjectSummary>[] = [
   },
 ];
 
+/** What fits a phone; the machine then stands under the project's name. */
+const NARROW = new Set(['project', 'first', 'waits']);
+const NARROW_COLUMNS = COLUMNS.filter((column) => NARROW.has(column.id));
+
 /** Every project one may read: what it is, how far it is, and whose move it is. */
 export function ProjectsTable({ projects }: { projects: readonly ProjectSummary[] }) {
+  const narrow = useNarrowScreen();
   return (
     <DataTable
       caption="Projects"
       captionHidden
       rows={projects}
-      columns={COLUMNS}
+      columns={narrow ? NARROW_COLUMNS : COLUMNS}
       rowKey={(project) => project.id}
     />
   );

@@ -65,25 +65,25 @@ export function StarterFields({ starter, onValidChange }: StarterFieldsProps) {
         <QuantityField name="machine.mass" label="Mass" kind="mass" {...{ onValidChange }} />
         <QuantityField
           name="machine.centreHeight"
-          label="Centre of gravity above the frame"
+          label="Centre above frame"
           kind="length"
           {...{ onValidChange }}
         />
         <QuantityField
           name="machine.length"
-          label="Its length along X"
+          label="Size along X"
           kind="length"
           {...{ onValidChange }}
         />
         <QuantityField
           name="machine.width"
-          label="Its width along Y"
+          label="Size along Y"
           kind="length"
           {...{ onValidChange }}
         />
         <QuantityField
           name="machine.height"
-          label="Its height"
+          label="Size along Z"
           kind="length"
           {...{ onValidChange }}
         />

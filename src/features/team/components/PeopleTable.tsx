@@ -44,6 +44,7 @@ export function PeopleTable({ people, administer }: PeopleTableProps) {
       {
         id: 'role',
         header: 'Role',
+        className: 'min-w-36',
         sortValue: (person) => ROLES.indexOf(person.role),
         cell: (person) =>
           administer ? (
