@@ -32,8 +32,8 @@ beforeAll(async () => {
 afterAll(() => app.stop());
 
 const list = async (client: Client, search = ''): Promise<ProjectSummary[]> => {
-  const { body } = await client.get(`/api/projects?search=${encodeURIComponent(search)}`);
-  return (body as { projects: ProjectSummary[] }).projects;
+  const response = await client.get(`/api/projects?search=${encodeURIComponent(search)}`);
+  return (response.body as { projects: ProjectSummary[] }).projects;
 };
 
 describe('making a project', () => {
@@ -132,8 +132,8 @@ describe('renaming', () => {
       .patch(`/api/projects/${id}`, { name: 'Stand 5', machine: '' })
       .expect(200);
     expect(renamed.body).toMatchObject({ name: 'Stand 5', machine: '' });
-    const { body } = await designer.get(`/api/activity?projectId=${id}`).expect(200);
-    const { entries } = body as { entries: { action: string }[] };
+    const activity = await designer.get(`/api/activity?projectId=${id}`).expect(200);
+    const { entries } = activity.body as { entries: { action: string }[] };
     expect(entries.map(({ action }) => action)).toEqual(['project-changed', 'project-created']);
   });
 });

@@ -39,14 +39,14 @@ function aRunnerProcess(): ChildProcess {
 
 async function ask(document = aPortal(), settings: object = {}): Promise<Solve> {
   const { id } = await aProject(designer, document);
-  const { body } = await designer
+  const response = await designer
     .post('/api/solves', {
       projectId: id,
       methods: ['consistent'],
       settings: { modes: 6, ...settings },
     })
     .expect(202);
-  const [brief] = (body as { solves: SolveBrief[] }).solves;
+  const [brief] = (response.body as { solves: SolveBrief[] }).solves;
   return Solve.findByPk(brief?.id ?? '', { rejectOnEmpty: true });
 }
 
@@ -60,23 +60,6 @@ const reaches = (solve: Solve, status: string, timeout: number): Promise<void> =
   );
 
 describe('runners', () => {
-  it(
-    'take the solve of a runner that was killed, and it ends once',
-    { timeout: 120_000 },
-    async () => {
-      const solve = await ask(aRack({ bays: 2, storeys: 3, divisions: 6 }), { modes: 30 });
-      const first = aRunnerProcess();
-      await reaches(solve, 'running', 40_000);
-      const { runnerId } = solve;
-      first.kill('SIGKILL');
-      aRunnerProcess();
-      await reaches(solve, 'done', 70_000);
-      expect(solve.runnerId).not.toBe(runnerId);
-      expect(solve.attempt).toBe(2);
-      expect(await SolveResult.count({ where: { key: solve.resultKey } })).toBe(1);
-    },
-  );
-
   it('give a solve back when they stop in good order', { timeout: 60_000 }, async () => {
     const solve = await ask(aRack({ bays: 5, storeys: 6, divisions: 14 }), { modes: 200 });
     const runner = await startRunner(app.config, pino({ level: 'silent' }));
@@ -110,4 +93,21 @@ describe('runners', () => {
       await runner.stop();
     }
   });
+
+  it(
+    'take the solve of a runner that was killed, and it ends once',
+    { timeout: 120_000 },
+    async () => {
+      const solve = await ask(aRack({ bays: 2, storeys: 3, divisions: 6 }), { modes: 30 });
+      const first = aRunnerProcess();
+      await reaches(solve, 'running', 40_000);
+      const { runnerId } = solve;
+      first.kill('SIGKILL');
+      aRunnerProcess();
+      await reaches(solve, 'done', 70_000);
+      expect(solve.runnerId).not.toBe(runnerId);
+      expect(solve.attempt).toBe(2);
+      expect(await SolveResult.count({ where: { key: solve.resultKey } })).toBe(1);
+    },
+  );
 });

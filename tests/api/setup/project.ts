@@ -46,10 +46,10 @@ export async function solveAll(
 /** Solves the draft and submits it. */
 export async function submit(designer: Client, projectId: string): Promise<RevisionResponse> {
   await solveAll(designer, projectId);
-  const { body } = await designer.get(`/api/projects/${projectId}`).expect(200);
+  const project = await designer.get(`/api/projects/${projectId}`).expect(200);
   const response = await designer
     .post(`/api/projects/${projectId}/revisions`, {
-      draftVersion: (body as ProjectResponse).draftVersion,
+      draftVersion: (project.body as ProjectResponse).draftVersion,
       changeNote: 'Stiffer legs.',
     })
     .expect(201);
