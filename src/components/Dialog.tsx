@@ -19,7 +19,7 @@ export function Dialog({ open, onOpenChange, title, description, children, wide 
     <RadixDialog.Root open={open} onOpenChange={onOpenChange}>
       <RadixDialog.Portal>
         {/* Radix's own overlay locks scrolling by a style element, which the security policy refuses. */}
-        <div aria-hidden="true" className="fixed inset-0 z-40 bg-ink/30" />
+        <div aria-hidden="true" className="fixed inset-0 z-40 bg-black/40" />
         <RadixDialog.Content
           {...(description === undefined ? { 'aria-describedby': undefined } : {})}
           className={`fixed inset-x-0 bottom-0 z-50 max-h-[90dvh] overflow-y-auto border-t border-ink bg-sheet p-5 sm:inset-x-auto sm:top-1/2 sm:bottom-auto sm:left-1/2 sm:max-h-[85dvh] sm:w-[calc(100vw-3rem)] sm:-translate-x-1/2 sm:-translate-y-1/2 sm:rounded sm:border sm:p-6 ${wide ? 'sm:max-w-4xl' : 'sm:max-w-lg'}`}
