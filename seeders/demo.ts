@@ -22,7 +22,9 @@ export async function seedDemo(): Promise<void> {
   const database = connectDatabase(config.databaseUrl, config.databasePool);
   await startJobs(config, createLog(config));
   try {
-    if (!(await Team.findByPk(TEAM.id))) await createTeam(TEAM);
+    if (!(await Team.findByPk(TEAM.id))) {
+      await inTransaction((transaction) => createTeam(transaction, TEAM));
+    }
     for (const person of Object.values(PEOPLE)) {
       if (await Person.findByPk(person.id)) continue;
       await inTransaction((transaction) => createPerson(transaction, person));

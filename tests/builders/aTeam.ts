@@ -4,4 +4,4 @@ import type { Team } from '#server/models/Team.ts';
 
 /** A new team, made by the same command as everybody's. */
 export const aTeam = (name = 'Brackwell Machines'): Promise<Team> =>
-  createTeam({ id: randomUUID(), name });
+  inTransaction((transaction) => createTeam(transaction, { id: randomUUID(), name }));
