@@ -19,6 +19,9 @@ const environment = z.object({
   SMTP_URL: z.url({ protocol: /^smtps?$/ }).optional(),
   MAIL_FROM: z.string().default('Ringstead <ringstead@localhost>'),
   RUNNER_IN_SERVER: flag.default(true),
+  /** What one solve may take before it is ended and said to have failed. */
+  SOLVE_TIME_LIMIT_S: positive.max(20_000).default(600),
+  SOLVE_MEMORY_LIMIT_MB: positive.default(2_048),
   LOG_LEVEL: z.enum(['fatal', 'error', 'warn', 'info', 'debug', 'trace', 'silent']).default('info'),
   /** How many proxies stand in front: their X-Forwarded-* headers are believed. */
   TRUST_PROXY: z.coerce.number().int().min(0).max(10).default(0),
@@ -39,6 +42,8 @@ export interface Config {
   readonly smtpUrl: string | undefined;
   readonly mailFrom: string;
   readonly runnerInServer: boolean;
+  readonly solveTimeLimitMs: number;
+  readonly solveMemoryLimitMb: number;
   readonly logLevel: string;
   readonly trustProxy: number;
   readonly rateLimitScale: number;
@@ -74,6 +79,8 @@ export function readConfig(env: Readonly<Record<string, string | undefined>>): C
     smtpUrl: values.SMTP_URL,
     mailFrom: values.MAIL_FROM,
     runnerInServer: values.RUNNER_IN_SERVER,
+    solveTimeLimitMs: values.SOLVE_TIME_LIMIT_S * 1000,
+    solveMemoryLimitMb: values.SOLVE_MEMORY_LIMIT_MB,
     logLevel: values.LOG_LEVEL,
     trustProxy: values.TRUST_PROXY,
     rateLimitScale: values.RATE_LIMIT_SCALE,
