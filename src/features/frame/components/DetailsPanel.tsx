@@ -9,7 +9,14 @@ import type { Chosen } from '../state/problems.ts';
 import { EntryForm } from './EntryForm.tsx';
 
 /** The details of what is chosen, open beside it; from the lower edge on small screens. */
-export function DetailsPanel({ panel }: { panel: RefObject<HTMLElement | null> }) {
+export function DetailsPanel({
+  panel,
+  beside,
+}: {
+  panel: RefObject<HTMLElement | null>;
+  /** The thing is in the view, which keeps the panel beside it; otherwise it stands in the corner. */
+  beside: boolean;
+}) {
   const { frame, chosen, choose, readOnly, remove } = useFrameEditing();
   const [only] = chosen;
   if (!only) return null;
@@ -20,7 +27,7 @@ export function DetailsPanel({ panel }: { panel: RefObject<HTMLElement | null> }
     <section
       ref={panel}
       aria-label={`Details: ${title}`}
-      className="z-20 flex flex-col border-ink bg-sheet max-md:fixed max-md:inset-x-0 max-md:bottom-0 max-md:max-h-[70dvh] max-md:transform-none! max-md:border-t md:absolute md:top-0 md:left-0 md:max-h-[calc(100%-16px)] md:w-[23rem] md:border"
+      className={`z-20 flex flex-col border-ink bg-sheet max-md:fixed max-md:inset-x-0 max-md:bottom-0 max-md:max-h-[70dvh] max-md:transform-none! max-md:border-t md:absolute md:max-h-[calc(100%-16px)] md:w-[23rem] md:border ${beside ? 'md:top-0 md:left-0' : 'md:top-2 md:left-2'}`}
       onKeyDown={(event) => {
         if (event.key === 'Escape' && !event.defaultPrevented) close();
       }}

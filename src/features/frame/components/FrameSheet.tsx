@@ -90,7 +90,7 @@ export function FrameSheet({ adding, undo, redo, parts, onParts, titleBlock }: F
             }
           >
             {adding && <AddingBar frame={frame} adding={adding} />}
-            <DetailsPanel panel={panel} key={at ? 'beside' : 'corner'} />
+            <DetailsPanel key={at ? 'beside' : 'corner'} panel={panel} beside={at !== null} />
           </FrameView>
         </div>
         {titleBlock}
