@@ -1,6 +1,7 @@
 import { randomUUID } from 'node:crypto';
 import { parseArgs } from 'node:util';
 import { z } from 'zod';
+import { AppError } from '#shared/errors/AppError.ts';
 import { emailAddress, personName, role } from '#shared/schemas/common.ts';
 import { createPerson } from '#server/commands/createPerson.ts';
 import { createTeam } from '#server/commands/createTeam.ts';
@@ -59,5 +60,7 @@ async function main(): Promise<void> {
 }
 
 main().catch((error: unknown) => {
-  process.exitCode = reportFailure(error);
+  process.exitCode = reportFailure(
+    error instanceof AppError ? new StepError(error.message) : error,
+  );
 });

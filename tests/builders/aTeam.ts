@@ -1,5 +1,6 @@
 import { randomUUID } from 'node:crypto';
 import { createTeam } from '#server/commands/createTeam.ts';
+import { inTransaction } from '#server/models/database.ts';
 import type { Team } from '#server/models/Team.ts';
 
 /** A new team, made by the same command as everybody's. */
