@@ -28,7 +28,7 @@ export function solveTable(summary: SolveSummary): string {
     mode.name,
   ]);
   const lines = [
-    `${method} mass, ${freeDof} free unknowns, ${significant(totalMassKg, 6)} kg`,
+    `${method === 'mesh-free' ? method : `${method} mass`}, ${freeDof} free unknowns, ${significant(totalMassKg, 6)} kg`,
     '',
     ...table([['mode', 'Hz', 'X %', 'Y %', 'Z %', 'motion'], ...rows]),
     '',

@@ -36,7 +36,11 @@ const AXES: readonly Vector3[] = [
 ];
 
 /** Translation and rotation of a point in rigid motion `direction` (0–2 along, 3–5 about the centre). */
-function rigidMotionAt(direction: number, point: Vector3, centre: Vector3): [Vector3, Vector3] {
+export function rigidMotionAt(
+  direction: number,
+  point: Vector3,
+  centre: Vector3,
+): [Vector3, Vector3] {
   const axis = AXES[direction % 3]!;
   if (direction < 3) return [axis, [0, 0, 0]];
   return [cross(axis, subtract(point, centre)), axis];

@@ -1,6 +1,7 @@
 import type { DividedPart, FrameModel } from '../frame/assembly/FrameModel.ts';
 import { displacements } from '../frame/freedoms/Combination.ts';
 import { add, scale } from '../frame/vector3.ts';
+import type { FrameDocument } from '../schemas/frameDocument.ts';
 import type { ModeShapes } from './shapesFile.ts';
 
 /**
@@ -11,21 +12,7 @@ import type { ModeShapes } from './shapesFile.ts';
  */
 export function shapesAtPoints(model: FrameModel, phi: readonly Float64Array[]): ModeShapes {
   const { document, parts, segments } = model;
-  let points = document.nodes.length;
-  const members = parts.map(({ member, divisions }) => {
-    const first = points;
-    points += divisions + 1;
-    return { id: member.id, first, count: divisions + 1 };
-  });
-  const positions = new Float32Array(points * 3);
-  document.nodes.forEach((node, i) => positions.set([node.x, node.y, node.z], i * 3));
-  parts.forEach(({ start, axes, segmentLength, divisions }, i) => {
-    for (let station = 0; station <= divisions; station++) {
-      const point = add(start, scale(axes.x, station * segmentLength));
-      positions.set(point, (members[i]!.first + station) * 3);
-    }
-  });
-
+  const { points, members, positions } = shapePoints(document, parts);
   const shapes = new Float32Array(phi.length * points * 6);
   const d = new Float64Array(12);
   phi.forEach((shape, mode) => {
@@ -52,15 +39,37 @@ export function shapesAtPoints(model: FrameModel, phi: readonly Float64Array[]):
   };
 }
 
+/** Where a frame's shapes are given: its nodes, then the stations of each member as it is divided. */
+export function shapePoints(
+  document: FrameDocument,
+  parts: readonly DividedPart[],
+): Pick<ModeShapes, 'points' | 'members' | 'positions'> {
+  let points = document.nodes.length;
+  const members = parts.map(({ member, divisions }) => {
+    const first = points;
+    points += divisions + 1;
+    return { id: member.id, first, count: divisions + 1 };
+  });
+  const positions = new Float32Array(points * 3);
+  document.nodes.forEach((node, i) => positions.set([node.x, node.y, node.z], i * 3));
+  parts.forEach(({ start, axes, segmentLength, divisions }, i) => {
+    for (let station = 0; station <= divisions; station++) {
+      const point = add(start, scale(axes.x, station * segmentLength));
+      positions.set(point, (members[i]!.first + station) * 3);
+    }
+  });
+  return { points, members, positions };
+}
+
 /** From 6 translations of a bar's ends to 12 displacements, the rotations being those of the chord. */
-function spreadBar(d: Float64Array, length: number): void {
+export function spreadBar(d: Float64Array, length: number): void {
   const ry = -(d[5]! - d[2]!) / length;
   const rz = (d[4]! - d[1]!) / length;
   d.set([d[0]!, d[1]!, d[2]!, 0, ry, rz, d[3]!, d[4]!, d[5]!, 0, ry, rz]);
 }
 
 /** Six displacements in member axes, from `d[from]`, written in global axes. */
-function writeGlobal(
+export function writeGlobal(
   { axes: { x, y, z } }: DividedPart,
   d: Float64Array,
   from: number,

@@ -2,10 +2,7 @@ import type { FrameModel } from '../frame/assembly/FrameModel.ts';
 import { backwardError } from '../numerics/eigen/backwardError.ts';
 import type { ModesResult } from '../numerics/eigen/ModesResult.ts';
 import type { SymmetricCsc } from '../numerics/sparse/SymmetricCsc.ts';
-import type { Vector3 } from '../schemas/frameDocument.ts';
 import type { EnergyShare, ModeSummary, SolveSummary } from '../schemas/solveResult.ts';
-import { attainableMass } from './attainableMass.ts';
-import { rigidInertia } from './massProperties.ts';
 import type { RigidInertia, Six } from './massProperties.ts';
 import { modeEnergies } from './modeEnergies.ts';
 import type { ModeEnergies } from './modeEnergies.ts';
@@ -17,43 +14,66 @@ import type { ModeShapes } from './shapesFile.ts';
 /** Most digits shown: element properties are never known better. */
 const MOST_DIGITS = 9;
 
+/** What a summary holds of one mode before it is named and put into shares. */
+export interface ModeDetail {
+  /** ω² [rad²/s²] */
+  readonly lambda: number;
+  /** φᵀM r of the six rigid motions r. */
+  readonly participation: Six;
+  readonly energies: ModeEnergies;
+  readonly backwardError: number;
+  /** Significant digits of the frequency that its accuracy supports, not limited. */
+  readonly digits: number;
+}
+
 export interface SolvedModes {
   readonly model: FrameModel;
-  readonly K: SymmetricCsc;
-  readonly M: SymmetricCsc;
-  readonly found: ModesResult;
-  /** Of the modes found. */
+  readonly details: readonly ModeDetail[];
+  /** Of the same modes. */
   readonly shapes: ModeShapes;
   /** Number of rigid-body modes, which come first. */
   readonly rigid: number;
   readonly totalMass: number;
-  readonly centre: Vector3;
+  /** Rigid inertia, and what all modes together reach of it. */
+  readonly total: Six;
+  readonly attainable: Six;
+}
+
+/** Details of the modes of K φ = λ M φ. */
+export function meshedDetails(
+  model: FrameModel,
+  { K, M }: { readonly K: SymmetricCsc; readonly M: SymmetricCsc },
+  { lambda, phi }: ModesResult,
+  inertia: RigidInertia,
+): ModeDetail[] {
+  const scratch = new Float64Array(4 * model.free);
+  return phi.map((shape, i) => {
+    const eta = backwardError(K, M, shape, lambda[i]!, scratch);
+    return {
+      lambda: lambda[i]!,
+      participation: six((direction) => product(shape, inertia.forces[direction]!)),
+      energies: modeEnergies(model, shape),
+      backwardError: eta,
+      digits: digitsOf(eta, model.free),
+    };
+  });
 }
 
 /** Names, participation, effective mass and energies of the modes found. */
 export function summariseModes(solved: SolvedModes): Pick<SolveSummary, 'modes' | 'effectiveMass'> {
-  const { model, M, found, centre } = solved;
-  const inertia = rigidInertia(model, centre);
-  const scratch = new Float64Array(4 * model.free);
-  const details = found.phi.map((phi, i) => {
-    const participation = six((direction) => product(phi, inertia.forces[direction]!));
-    return {
-      participation,
-      effectiveMass: six((direction) => participation[direction]! ** 2),
-      energies: modeEnergies(model, phi),
-      eta: backwardError(solved.K, M, phi, found.lambda[i]!, scratch),
-    };
-  });
+  const { model, total, attainable } = solved;
+  const details = solved.details.map((detail) => ({
+    ...detail,
+    effectiveMass: six((direction) => detail.participation[direction]! ** 2),
+  }));
   const names = nameModes(
-    details.map(({ effectiveMass, energies }, i) =>
-      character(solved, i, effectiveMass, energies, inertia),
-    ),
+    details.map(({ effectiveMass, energies }, i) => character(solved, i, effectiveMass, energies)),
   );
   const modes: ModeSummary[] = details.map(
-    ({ participation, effectiveMass, energies, eta }, i) => ({
+    ({ lambda, participation, effectiveMass, energies, backwardError: eta, digits }, i) => ({
       number: i + 1,
-      frequencyHz: Math.sqrt(Math.max(found.lambda[i]!, 0)) / (2 * Math.PI),
-      digits: digitsOf(eta, model.free),
+      frequencyHz: Math.sqrt(Math.max(lambda, 0)) / (2 * Math.PI),
+      digits: Math.min(Math.max(Math.floor(digits), 1), MOST_DIGITS),
       backwardError: eta,
       ...names[i]!,
       participation,
@@ -61,9 +81,8 @@ export function summariseModes(solved: SolvedModes): Pick<SolveSummary, 'modes' 
       ...energyShares(model, energies, i < solved.rigid),
     }),
   );
-  const attainable = six((direction) => attainableMass(M, inertia.forces[direction]!));
   const onFixed = ([0, 1, 2] as const).map((direction) =>
-    Math.max(0, inertia.total[direction] - attainable[direction]),
+    Math.max(0, total[direction] - attainable[direction]),
   );
   return {
     modes,
@@ -72,13 +91,13 @@ export function summariseModes(solved: SolvedModes): Pick<SolveSummary, 'modes' 
         details.reduce((sum, mode) => sum + mode.effectiveMass[direction]!, 0),
       ),
       attainable,
-      total: inertia.total,
+      total,
       onFixed: [onFixed[0]!, onFixed[1]!, onFixed[2]!],
     },
   };
 }
 
-function six(value: (direction: number) => number): Six {
+export function six(value: (direction: number) => number): Six {
   return [value(0), value(1), value(2), value(3), value(4), value(5)];
 }
 
@@ -92,9 +111,8 @@ function product(a: Float64Array, b: Float64Array): number {
  * Significant digits of a frequency that its backward error η supports. λ is a Rayleigh quotient of element energies, whose error
  * is of second order in the shape's; 10 √n η bounds what orderings and machines were seen to change.
  */
-function digitsOf(eta: number, n: number): number {
-  const relative = 10 * Math.sqrt(n) * Math.max(eta, Number.EPSILON);
-  return Math.min(Math.max(Math.floor(-Math.log10(relative)), 1), MOST_DIGITS);
+export function digitsOf(eta: number, n: number): number {
+  return -Math.log10(10 * Math.sqrt(n) * Math.max(eta, Number.EPSILON));
 }
 
 /** Shares of the strain and the kinetic energy; a rigid-body mode stores no strain, so its strain shares are empty. */
@@ -134,11 +152,10 @@ function energyShares(
 }
 
 function character(
-  { model, shapes, rigid, totalMass }: SolvedModes,
+  { model, shapes, rigid, totalMass, total }: SolvedModes,
   mode: number,
   effectiveMass: Six,
   energies: ModeEnergies,
-  { total }: RigidInertia,
 ): ModeCharacter {
   const meanSquares: [number, number, number] = [0, 0, 0];
   const meanTurns: [number, number, number] = [0, 0, 0];

@@ -134,7 +134,7 @@ function memberEnd(
 }
 
 /** Whether displacement `i` along or about a member's axes exists in a model of a reduced set. */
-function inModel(axes: readonly Vector3[], i: number, exists: Uint8Array): boolean {
+export function inModel(axes: readonly Vector3[], i: number, exists: Uint8Array): boolean {
   const axis = axes[i % 3]!;
   const offset = isRotation(i) ? 3 : 0;
   const share = axis.reduce((sum, c, k) => sum + (exists[offset + k] ? c * c : 0), 0);
