@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { frameDocument } from '#shared/schemas/frameDocument.ts';
-import type { ModeShapes } from '#shared/analysis/ModeShapes.ts';
+import type { ModeShapes } from '#shared/analysis/shapesFile.ts';
 import { createCameraStore } from '#src/viewer/camera/cameraStore.ts';
 import { cameraKey } from '#src/viewer/camera/cameraKeys.ts';
 import { NAMED_VIEWS } from '#src/viewer/camera/namedViews.ts';
