@@ -1,9 +1,12 @@
+import { useState } from 'react';
 import { Link, NavLink, Outlet, useLocation, useParams, useSearchParams } from 'react-router-dom';
+import type { ProjectResponse } from '#shared/schemas/project.ts';
 import { Button } from '#src/components/Button.tsx';
 import { ErrorNote } from '#src/components/ErrorNote.tsx';
 import { Loading } from '#src/components/Loading.tsx';
 import { PageHeading } from '#src/components/PageHeading.tsx';
 import { FrequencyLineHost } from '#src/features/frequencyLine/components/FrequencyLineHost.tsx';
+import { ProjectDialog } from '#src/features/projects/components/ProjectDialog.tsx';
 import { useProject } from '#src/hooks/useProject.ts';
 import { useProjectEvents } from '#src/hooks/useProjectEvents.ts';
 import { SheetHeader } from './SheetHeader.tsx';
@@ -23,12 +26,7 @@ export function ProjectLayout() {
   return (
     <div className="flex h-dvh flex-col">
       <SheetHeader short>
-        <p className="min-w-0 truncate">
-          <span className="font-medium">{project.data?.name}</span>
-          {project.data?.machine && (
-            <span className="ml-2 hidden text-ink-soft lg:inline">{project.data.machine}</span>
-          )}
-        </p>
+        {project.data && <ProjectName project={project.data} />}
         <Places className="hidden shrink-0 sm:flex" />
       </SheetHeader>
       <main id="main" className="relative min-h-0 flex-1 overflow-auto">
@@ -53,6 +51,28 @@ export function ProjectLayout() {
       {project.data && <FrequencyLineHost />}
       <Places className="flex shrink-0 justify-around border-t border-pencil sm:hidden" />
     </div>
+  );
+}
+
+/** The project's name opens what is known of the project itself: names, people. */
+function ProjectName({ project }: { project: ProjectResponse }) {
+  const [open, setOpen] = useState(false);
+  return (
+    <>
+      <button
+        type="button"
+        aria-haspopup="dialog"
+        title="Names and people of the project"
+        onClick={() => setOpen(true)}
+        className="min-h-8 min-w-0 cursor-pointer truncate rounded border border-transparent px-1 text-left hover:border-rule"
+      >
+        <span className="font-medium">{project.name}</span>
+        {project.machine !== '' && (
+          <span className="ml-2 hidden text-ink-soft lg:inline">{project.machine}</span>
+        )}
+      </button>
+      <ProjectDialog project={project} open={open} onOpenChange={setOpen} />
+    </>
   );
 }
 

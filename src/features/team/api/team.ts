@@ -4,15 +4,11 @@ import {
   createInvitation,
   deleteInvitation,
   listSentMail,
-  readTeam,
   updatePerson,
   updateTeam,
 } from '#shared/schemas/team.ts';
 import { call } from '#src/lib/api.ts';
 import { queryKeys } from '#src/lib/queryKeys.ts';
-
-export const useTeam = () =>
-  useQuery({ queryKey: queryKeys.team, queryFn: ({ signal }) => call(readTeam, { signal }) });
 
 export const useSentMail = () =>
   useQuery({

@@ -3,7 +3,7 @@ import { Button } from '#src/components/Button.tsx';
 import { ErrorNote } from '#src/components/ErrorNote.tsx';
 import { Loading } from '#src/components/Loading.tsx';
 import { PageHeading } from '#src/components/PageHeading.tsx';
-import { useTeam } from '../api/team.ts';
+import { useTeam } from '#src/hooks/useTeam.ts';
 import { Invitations } from './Invitations.tsx';
 import { PeopleTable } from './PeopleTable.tsx';
 import { ReleaseSettings } from './ReleaseSettings.tsx';
