@@ -48,10 +48,10 @@ export interface Mail {
 /** Queues the same plain mail to several people, with a link to the revision. */
 export async function mailAboutRevision(
   transaction: Transaction,
-  { id, projectId }: Revision,
+  { number, projectId }: Revision,
   { to, subject, text }: Mail,
 ): Promise<void> {
-  const path = `/projects/${projectId}/release?revision=${id}`;
+  const path = `/projects/${projectId}/release?revision=${number}`;
   for (const personId of new Set(to)) {
     await enqueue(transaction, 'mail', { kind: 'notice', personId, subject, text, path });
   }

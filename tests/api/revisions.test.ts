@@ -87,7 +87,7 @@ describe('submitting', () => {
     const [mail] = await mailsTo(people.reviewer.email);
     expect(mail?.subject).toContain('R1 waits for review');
     expect(mail?.text).toContain(
-      `${app.config.publicUrl}/projects/${project.id}/release?revision=${submitted.id}`,
+      `${app.config.publicUrl}/projects/${project.id}/release?revision=${submitted.number}`,
     );
   });
 
