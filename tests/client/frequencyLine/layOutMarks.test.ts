@@ -43,7 +43,7 @@ describe('frequency scale', () => {
         fc.integer({ min: 260, max: 3000 }),
         (kind, low, ratio, width) => {
           const scale = frequencyScale(kind, [low, low * ratio], width);
-          const xs = scale.ticksHz.map(scale.toX);
+          const xs = scale.ticksHz.map((hz) => scale.toX(hz));
           for (const [i, x] of xs.entries()) {
             expect(x).toBeGreaterThanOrEqual(-1e-6);
             expect(x).toBeLessThanOrEqual(width + 1e-6);
