@@ -208,6 +208,24 @@ describe('Cowper’s shear coefficients (1966) at ν = 0.3', () => {
     expect(Math.abs(ky / kappa - 1)).toBeLessThan(1e-6);
   });
 
+  it('a narrow tube is two thin rectangles along its height, and hardly resists shear across', () => {
+    const narrow = sectionProperties(
+      { kind: 'rectangular-tube', width: 0.0021, height: 0.5, wall: 1e-6, radius: 0 },
+      0.3,
+    );
+    // m → 0 in the formula; the term left is 72m/12 − 6m, near 0, so 1 % at m = 0.0042.
+    expect(Math.abs(narrow.kz / (13 / 15.3) - 1)).toBeLessThan(0.01);
+    expect(narrow.ky).toBeLessThan(0.02);
+  });
+
+  it('a rolled I carries shear along its web by its web: κ near A_web/A (common practice)', () => {
+    const { A, ky, kz } = sectionProperties(iSection(200, 100, 5.6, 8.5, 12), 0.3);
+    const web = (0.1915 * 0.0056) / A;
+    expect(Math.abs(kz / web - 1)).toBeLessThan(0.05);
+    // Across it the flanges, 5/6 of their share of the area.
+    expect(ky).toBeCloseTo(((5 / 6) * 2 * 0.1 * 0.0085) / A, 12);
+  });
+
   it('a tube with hardly a bore is a solid round', () => {
     const bored = sectionProperties({ kind: 'round-tube', diameter: 0.1, wall: 0.0499999 }, 0.3);
     expect(Math.abs(bored.kz / (7.8 / 8.8) - 1)).toBeLessThan(1e-9);
