@@ -22,6 +22,14 @@ async function run(args: string[], streams: Streams): Promise<number> {
   }
 }
 
+// A reader that has seen enough (`| head`) closes the pipe: no failure of the solve. Unheard, the error would print a
+// stack trace.
+process.stdout.on('error', (error: NodeJS.ErrnoException) => {
+  if (error.code === 'EPIPE') return;
+  process.stderr.write(`The answer cannot be written: ${error.message}.\n`);
+  process.exit(1);
+});
+
 process.exitCode = await run(process.argv.slice(2), {
   input: process.stdin,
   out: (text) => process.stdout.write(text),

@@ -139,6 +139,67 @@ describe('solve on the command line', () => {
     },
   );
 
+  it('says so when its answer cannot be written', { timeout: PROCESS_TIME_LIMIT }, () => {
+    const into = (target: string) =>
+      spawnSync(
+        'sh',
+        [
+          '-c',
+          `"$0" --import tsx scripts/cli.ts solve "$1" --method lumped --modes 1 ${target}`,
+          process.execPath,
+          file,
+        ],
+        { encoding: 'utf8' },
+      );
+    // A pipe whose reader is gone ends the command quietly.
+    expect(into('| true').stderr).toBe('');
+    const full = into('> /dev/full');
+    expect(full.status).toBe(1);
+    expect(full.stderr).toMatch(/^The answer cannot be written: [^\n]*\n$/);
+  });
+
+  it('refuses more than 100 MB, and reads no further', async () => {
+    const megabyte = Buffer.alloc(2 ** 20, ' ');
+    let sent = 0;
+    const input = Readable.from(
+      (function* () {
+        while (sent < 1000) {
+          sent += 1;
+          yield megabyte;
+        }
+      })(),
+    );
+    const error: unknown = await solve(['-', '--method', 'lumped', '--modes', '1'], {
+      input,
+      out: () => undefined,
+      err: () => undefined,
+    }).catch((reason: unknown) => reason);
+    expect(error).toMatchObject({ code: 'too-large' });
+    expect(sent).toBeLessThan(200);
+  });
+
+  it('gives with --repeat one of its runs, the one of median time', async () => {
+    const args = [file, '--method', 'consistent', '--modes', '2', '--json'];
+    const once = report.parse(JSON.parse((await run(args)).out));
+    const often = report.parse(JSON.parse((await run([...args, '--repeat', '5'])).out));
+    expect(often.frequenciesHz).toEqual(once.frequenciesHz);
+    // `total` runs from `assemble` to `certify`, `read` apart.
+    const { read, total, ...steps } = often.timing;
+    expect(read).toBeGreaterThan(0);
+    const sum = Object.values(steps).reduce((a, b) => a + b, 0);
+    expect(sum).toBeLessThanOrEqual(total * (1 + 1e-9));
+    expect(sum).toBeGreaterThan(0);
+  });
+
+  it('takes the operating state by its id', async () => {
+    const laden = aLine({ ends: ['clamped', 'free'], divisions: 2, tipMass: 1 });
+    laden.states = [{ id: 'empty', name: 'Empty', masses: { tip: { present: false } } }];
+    const args = ['-', '--method', 'consistent', '--modes', '1', '--state', 'empty', '--json'];
+    const result = report.parse(JSON.parse((await run(args, JSON.stringify(laden))).out));
+    expect((2 * Math.PI * result.frequenciesHz[0]!).toFixed(5)).toBe('3.51772');
+    expect(result.totalMassKg).toBe(1);
+  });
+
   it('names a mechanism without a stack trace', { timeout: PROCESS_TIME_LIMIT }, () => {
     const loose = aLine({ ends: ['clamped', 'free'], divisions: 1, unknowns: ['u', 'w', 'ry'] });
     loose.members[0]!.kind = 'bar';
