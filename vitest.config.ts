@@ -4,6 +4,8 @@ import { defineConfig } from 'vitest/config';
 export default defineConfig({
   test: {
     maxWorkers: 2,
+    // Ending a solver thread that is deep in its loops takes a while on a busy machine.
+    teardownTimeout: 60_000,
     projects: [
       {
         test: { name: 'unit', include: ['tests/unit/**/*.test.ts'], environment: 'node' },
