@@ -55,6 +55,10 @@ describe('the machine frame, end to end', () => {
   it('weighs 115.28 kg without its motor, and names its modes in plain words', () => {
     const { summary } = solved(stand(2), 'consistent', { modes: 5 });
     expect(summary.totalMassKg - 120).toBeCloseTo(115.28, 2);
+    // 3.2 m of legs about z 0.4, 4.8 m of rails at 0.8, the motor at 1.1, all symmetric about (0.6, 0.4).
+    const perMetre = 18.356e-4 * 7850;
+    const height = (perMetre * (3.2 * 0.4 + 4.8 * 0.8) + 120 * 1.1) / summary.totalMassKg;
+    expect(worstError(summary.centreOfMass, [0.6, 0.4, height])).toBeLessThan(1e-12);
     expect(summary.modes.map((mode) => mode.name)).toEqual([
       'sways along X',
       'sways along Y',

@@ -133,6 +133,28 @@ describe('a beam with masses and springs', () => {
     expect((1 / omega! ** 2 - heavy) * 3).toBeCloseTo(1, 4);
   });
 
+  it.each([
+    ['consistent', 2 / 3],
+    ['lumped', 1],
+  ] as const)('two bars at right angles carry by hand, %s: %f of one’s mass', (method, share) => {
+    const frame = aLine({ ends: ['free', 'free'], divisions: 1, unknowns: ['u', 'w', 'ry'] });
+    const bar = { ...frame.members[0]!, kind: 'bar' as const, massPerLength: 3 };
+    frame.nodes = [
+      { id: 'a', x: -1, z: 0 },
+      { id: 'b', x: 1, z: 0 },
+      { id: 'top', x: 0, z: 1 },
+    ];
+    frame.members = [
+      { ...bar, id: 'left', start: 'a', end: 'top' },
+      { ...bar, id: 'right', start: 'b', end: 'top' },
+    ];
+    frame.supports = ['a', 'b'].map((node) => ({ node, fixed: ['u', 'w'] }));
+    frame.masses = [{ id: 'load', name: 'Load', node: 'top', mass: 5 }];
+    // K = EA/L in every direction; M = 5 kg + share × (ρA + 3) L.
+    const omega = Math.sqrt(1 / Math.SQRT2 / (5 + share * 4 * Math.SQRT2));
+    expect(worstError(omegas(frame, method, { modes: 2 }), [omega, omega])).toBeLessThan(1e-12);
+  });
+
   it('mass carried along slows bending and stretching as density does, and leaves twist alone', () => {
     const beam = (massPerLength: number, density: number) => {
       const line = aLine({

@@ -128,6 +128,29 @@ describe('inclined supports', () => {
     expect(worstError(turned(R, before.centreOfMass), after.centreOfMass)).toBeLessThan(SAME);
   });
 
+  it('of the global axes are none, and y is z × x', () => {
+    const stated = sprungStand();
+    const global = sprungStand();
+    global.supports = global.supports.map(({ node, fixed, stiffness }) => ({
+      node,
+      ...(fixed && { fixed }),
+      ...(stiffness && { stiffness }),
+    }));
+    const expected = frequencies(global);
+    expect(worstError(frequencies(stated), expected)).toBeLessThan(SAME);
+    // x along Y, z along X: y is X × Y = Z.
+    stated.supports = stated.supports.map(({ node, fixed, stiffness }) => {
+      const { u, v, rx, ry } = stiffness!;
+      return {
+        node,
+        fixed: fixed!.includes('ry') ? ['v', 'rx'] : ['v'],
+        stiffness: { w: u!, u: v!, rz: rx!, ...(ry !== undefined && { rx: ry }) },
+        axes: { x: [0, 1, 0], z: [1, 0, 0] },
+      };
+    });
+    expect(worstError(frequencies(stated), expected)).toBeLessThan(SAME);
+  });
+
   it('a foot that slides along its own x lets the frame slide just there', () => {
     const frame = aCantilever();
     const [cos, sin] = [Math.cos(0.5), Math.sin(0.5)];

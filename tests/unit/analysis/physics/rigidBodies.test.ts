@@ -62,10 +62,11 @@ describe.each(METHODS)('a rigid body (%s)', (method) => {
       linked.nodes.push({ id: `p${i}`, x: 1.5 + x, y, z });
       linked.masses.push({ id: `m${i}`, name: 'Part', node: `p${i}`, mass });
     });
-    // A chain of links, so that a link's main node is another's follower.
+    // A chain of links, joined by their followers, in no order.
     linked.rigidLinks = [
-      { id: 'link 1', main: 'tip', others: ['p0', 'p1'] },
-      { id: 'link 2', main: 'p1', others: ['p2', 'p3'] },
+      { id: 'link 1', main: 'p0', others: ['p1'] },
+      { id: 'link 2', main: 'p2', others: ['p3', 'p1'] },
+      { id: 'link 3', main: 'p3', others: ['tip'] },
     ];
     expect(worstError(frequencies(linked, method, { modes: 10 }), expected)).toBeLessThan(SAME);
   });
@@ -132,6 +133,29 @@ describe('rigid motion', () => {
 });
 
 describe('effective mass of one element by hand', () => {
+  // A rod about its centre, mL²/12 + ρIL; with half its mass at each end, mL²/4.
+  it.each([
+    ['consistent', 1 / 12, 1],
+    ['lumped', 1 / 4, 0],
+  ] as const)('%s: moments of inertia, which rigid modes take up whole', (method, share, own) => {
+    const [L, d, rho] = [1.4, 0.08, 7850];
+    const frame = aCantilever({
+      length: L,
+      divisions: 1,
+      shape: { kind: 'solid-round', diameter: d },
+    });
+    frame.supports = [];
+    const { summary } = solved(frame, method, { modes: 6 });
+    const m = rho * (Math.PI / 4) * d ** 2 * L;
+    const I = (Math.PI / 64) * d ** 4;
+    const across = share * m * L * L + own * rho * I * L;
+    const expected = [m, m, m, 2 * rho * I * L, across, across];
+    const { total, sum } = summary.effectiveMass;
+    // Spinning about its own axis, a round rod of lumped mass keeps ρ(Iy + Iz)L.
+    expect(worstError(total, expected)).toBeLessThan(1e-12);
+    expect(worstError(sum, expected)).toBeLessThan(SAME);
+  });
+
   /** A bar of 1 kg, fixed at one end: consistent (½)²/(⅓) = ¾ can be reached, lumped ½. */
   it.each([
     ['consistent', 0.75],
