@@ -222,8 +222,25 @@ describe('Cowper’s shear coefficients (1966) at ν = 0.3', () => {
     const { A, ky, kz } = sectionProperties(iSection(200, 100, 5.6, 8.5, 12), 0.3);
     const web = (0.1915 * 0.0056) / A;
     expect(Math.abs(kz / web - 1)).toBeLessThan(0.05);
+    // The published formula evaluated by hand: m = 1.58523, n = 0.52219.
+    expect(kz).toBeCloseTo(0.37333, 4);
     // Across it the flanges, 5/6 of their share of the area.
     expect(ky).toBeCloseTo(((5 / 6) * 2 * 0.1 * 0.0085) / A, 12);
+  });
+
+  it.each<SectionShape>([
+    { kind: 'angle', width: 0.06, height: 0.1, wall: 0.008, radius: 0 },
+    openShape('channel', 200, 80, 6, 11, 0),
+    openShape('tee', 120, 80, 8, 10, 0),
+  ])('$kind: 5/6 of the share of the parts along the shear (common practice)', (shape) => {
+    const { A, ky, kz } = sectionProperties(shape, 0.3);
+    const parts = {
+      angle: [0.06 * 0.008, 0.1 * 0.008],
+      channel: [2 * 0.08 * 0.011, 0.2 * 0.006],
+      tee: [0.08 * 0.01, 0.12 * 0.008],
+    }[shape.kind as 'angle' | 'channel' | 'tee'] as [number, number];
+    expect(ky).toBeCloseTo(((5 / 6) * parts[0]) / A, 12);
+    expect(kz).toBeCloseTo(((5 / 6) * parts[1]) / A, 12);
   });
 
   it('a tube with hardly a bore is a solid round', () => {
