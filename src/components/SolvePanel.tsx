@@ -93,6 +93,7 @@ export function SolvePanel({
         <Failure key={one.id} solve={one} onShow={onShow} />
       ))}
       {start.isError && <ErrorNote error={start.error} />}
+      {cancel.isError && <ErrorNote error={cancel.error} />}
       {done && (
         <Link to={modesHref} className="link inline-flex min-h-6 items-center font-medium">
           See the modes

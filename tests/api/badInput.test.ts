@@ -74,10 +74,15 @@ describe('bad input', () => {
 
   it('of another media type is refused as such', async () => {
     const response = await client
-      .post('/api/team/invitations', undefined)
+      .post('/api/team/invitations')
       .type('application/x-www-form-urlencoded')
       .send('email=a@example.com&role=guest');
     expect(response.status).toBe(415);
+  });
+
+  it('is no body at all where a browser sends a POST of no length', async () => {
+    const response = await client.post('/api/solves/00000000-0000-4000-8000-000000000000/cancel');
+    expect(response.status).toBe(404);
   });
 
   it.each(['/api/team/people/not-an-id', "/api/team/people/1'%20OR%201=1--"])(

@@ -5,7 +5,10 @@ import type { Person } from '#server/models/Person.ts';
 
 type Method = 'get' | 'post' | 'put' | 'patch' | 'delete';
 
-/** A browser: keeps cookies, and sends the token of the session with what changes state. */
+/**
+ * A browser: keeps cookies, and sends the token of the session with what changes state. Without a body it sends
+ * none, as the client does: `Content-Length: 0`.
+ */
 export class Client {
   readonly agent: ReturnType<typeof request.agent>;
   csrfToken = '';
@@ -37,9 +40,9 @@ export class Client {
   }
 
   get = (path: string): Test => this.send('get', path);
-  post = (path: string, body: object | string = {}): Test => this.send('post', path, body);
-  put = (path: string, body: object | string = {}): Test => this.send('put', path, body);
-  patch = (path: string, body: object | string = {}): Test => this.send('patch', path, body);
+  post = (path: string, body?: object | string): Test => this.send('post', path, body);
+  put = (path: string, body?: object | string): Test => this.send('put', path, body);
+  patch = (path: string, body?: object | string): Test => this.send('patch', path, body);
   delete = (path: string): Test => this.send('delete', path);
 }
 
