@@ -4,6 +4,19 @@ import { useUnits } from './useUnits.ts';
 
 const loadReader = () => import('#src/lib/quantityExpression.ts');
 
+/** Fetches the reader of quantities early, so that fields work on when the connection goes. */
+export function usePreloadedQuantities(): void {
+  useEffect(() => {
+    // A failure shows when a field is typed in, and is tried again then.
+    loadReader().catch(() => undefined);
+  }, []);
+}
+
+const NOT_LOADED = {
+  ok: false,
+  message: 'Units can’t be read without a connection the first time: connect, then type again.',
+} as const;
+
 export interface QuantityTextOptions {
   kind: QuantityKind;
   /** SI; `null`: nothing entered. */
@@ -41,8 +54,7 @@ export function useQuantityText(options: QuantityTextOptions): QuantityText {
   const [understood, setUnderstood] = useState<string | null>(null);
   const [error, setError] = useState<string | null>(null);
 
-  // Fetched while the person is still looking at the field.
-  useEffect(() => void loadReader(), []);
+  usePreloadedQuantities();
 
   const judge = (message: string | null) => {
     onValidChange?.(message === null);
@@ -50,8 +62,9 @@ export function useQuantityText(options: QuantityTextOptions): QuantityText {
   };
 
   const read = async (text: string) => {
-    const { readQuantity } = await loadReader();
-    const reading = readQuantity(text, kind, units.system);
+    const reader = await loadReader().catch(() => null);
+    if (reader === null) return NOT_LOADED;
+    const reading = reader.readQuantity(text, kind, units.system);
     if (!reading.ok) return reading;
     const objection = check?.(reading.value) ?? null;
     return objection === null ? reading : { ok: false as const, message: objection };

@@ -3,6 +3,7 @@ import { useSearchParams } from 'react-router-dom';
 import { useStore } from 'zustand';
 import type { DraftResponse, ProjectResponse } from '#shared/schemas/project.ts';
 import { SolvePanel } from '#src/components/SolvePanel.tsx';
+import { usePreloadedQuantities } from '#src/hooks/useQuantityText.ts';
 import type { ShownFrame } from '#src/hooks/useShownFrame.ts';
 import { FrameEditingContext } from '../state/FrameEditing.ts';
 import { createFrameStore } from '../state/frameStore.ts';
@@ -27,6 +28,7 @@ interface FrameEditorProps {
 
 /** The draft, open for changing. */
 export function FrameEditor({ project, draft, shown }: FrameEditorProps) {
+  usePreloadedQuantities();
   const [search] = useSearchParams();
   const [store] = useState(() => createFrameStore(draft.document));
   const autosave = useAutosave(store, draft);
