@@ -99,19 +99,24 @@ export function FrameView({
     if (size.width > 1) camera.fitFirst(model.bounds, size);
   }, [camera, model, size]);
 
-  const overlay = useOverlay(camera, size, anchored, {
-    model,
-    inks,
-    selected,
-    hovered,
-    names,
-    memberAxes,
-    bodies,
-    deforming: deformation !== null,
-    pointing,
-    pointer: pointing ? pointer : null,
-    formatLength,
-  });
+  const overlay = useOverlay(
+    camera,
+    size,
+    anchored,
+    {
+      model,
+      inks,
+      selected,
+      hovered,
+      names,
+      memberAxes,
+      bodies,
+      pointing,
+      pointer: pointing ? pointer : null,
+      formatLength,
+    },
+    deformation,
+  );
 
   const pickAt = (x: number, y: number): Thing | null => {
     if (!onSelect && !onHover) return null;

@@ -1,6 +1,7 @@
 import type { Vector3 } from '#shared/schemas/frameDocument.ts';
 import type { Projection, WorkPlane } from '../camera/projection.ts';
 import type { FrameModel, PlacedMember } from '../model/frameModel.ts';
+import type { MovedModel } from '../model/movedModel.ts';
 import { sameThing, type Thing } from '../Selection.ts';
 import type { Inks } from '../useInks.ts';
 import { anchorOf } from './anchorOf.ts';
@@ -38,8 +39,8 @@ export interface Sheet {
   readonly memberAxes: boolean;
   /** Members are drawn with their section by the scene beneath; otherwise as lines, here. */
   readonly bodies: boolean;
-  /** A moving mode is shown: only the undeformed frame, as a thin pencil line. */
-  readonly deforming: boolean;
+  /** What moves in a mode besides the members, at this moment; the frame at rest is then a thin pencil line. */
+  readonly moved: MovedModel | null;
   readonly pointing: Pointing | null;
   readonly pointer: Vector3 | null;
   readonly formatLength: (metres: number) => string;
@@ -47,6 +48,8 @@ export interface Sheet {
 
 /** Above this many nodes their dots would cover the drawing; those at supports and masses stay marked. */
 const MOST_NODE_DOTS = 1500;
+/** Share of the largest displacement under which a mass counts as standing. */
+const HARDLY_MOVES = 0.2;
 
 export function drawSheet(pen: Pen, sheet: Sheet): void {
   const { projection, inks } = sheet;
@@ -55,8 +58,10 @@ export function drawSheet(pen: Pen, sheet: Sheet): void {
   if (sheet.pointing) {
     drawGrid(pen, sheet.pointing.plane, sheet.pointing.step, sheet.model.bounds, projection, inks);
   }
-  if (sheet.deforming) drawPencilFrame(pen, sheet);
-  else drawFrame(pen, sheet);
+  if (sheet.moved) {
+    drawPencilFrame(pen, sheet);
+    drawMoved(pen, sheet.moved, sheet);
+  } else drawFrame(pen, sheet);
   drawPreview(pen, sheet);
   drawAxesMark(pen, projection, inks);
   drawScaleBar(pen, projection, inks, sheet.formatLength);
@@ -77,6 +82,18 @@ function drawPencilFrame(pen: Pen, { model, projection, inks, names }: Sheet): v
     })),
     inks.sheet,
   );
+}
+
+/** Arms, links, springs and masses where the mode has them now; what hardly moves is drawn in pencil. */
+function drawMoved(pen: Pen, moved: MovedModel, { projection, inks }: Sheet): void {
+  for (const placed of moved.members) drawArms(pen, placed, projection, inks);
+  for (const link of moved.document.rigidLinks) drawRigidLink(pen, link, moved, projection, inks);
+  for (const spring of moved.document.springs) drawSpring(pen, spring, moved, projection, inks);
+  for (const placed of moved.masses) {
+    const ink = placed.amount < HARDLY_MOVES ? inks.pencil : inks.ink;
+    const radius = massRadius(placed, projection.pixelsPerMetre);
+    drawMass(pen, placed, projection, radius, { ...inks, ink });
+  }
 }
 
 function drawFrame(pen: Pen, sheet: Sheet): void {

@@ -1,7 +1,9 @@
-import { useCallback, useEffect, useRef, type RefObject } from 'react';
+import { useCallback, useEffect, useMemo, useRef, type RefObject } from 'react';
 import type { Vector3 } from '#shared/schemas/frameDocument.ts';
 import type { CameraStore, ViewSize } from '../camera/cameraStore.ts';
 import { makeProjection, type Projection } from '../camera/projection.ts';
+import type { Deformation } from '../Deformation.ts';
+import { moveModel } from '../model/movedModel.ts';
 import { drawSheet, type Sheet } from './drawSheet.ts';
 import { placeBeside } from './placeBeside.ts';
 
@@ -12,13 +14,14 @@ interface Anchored {
 
 /**
  * Draws the inked layer whenever what it shows, the camera or the size changes, at most once per screen frame, and
- * keeps the anchored element beside its point. Returns the ref of its canvas.
+ * keeps the anchored element beside its point. In a moving mode it is drawn with every phase. Returns the ref of its canvas.
  */
 export function useOverlay(
   camera: CameraStore,
   size: ViewSize,
   anchored: Anchored | undefined,
-  content: Omit<Sheet, 'projection'>,
+  content: Omit<Sheet, 'projection' | 'moved'>,
+  deformation: Deformation | null,
 ): RefObject<HTMLCanvasElement | null> {
   const canvas = useRef<HTMLCanvasElement>(null);
   const draw = useRef<() => void>(() => {});
@@ -31,15 +34,20 @@ export function useOverlay(
     });
   }, []);
 
+  const { model } = content;
+  const move = useMemo(() => deformation && moveModel(model, deformation), [model, deformation]);
+
   useEffect(() => {
     draw.current = () => {
       const projection = makeProjection(camera.get(), size);
-      drawOn(canvas.current, { ...content, projection });
+      const moved = move && deformation ? move(Math.cos(deformation.clock.phase.current)) : null;
+      drawOn(canvas.current, { ...content, projection, moved });
       placeAnchored(anchored, projection);
     };
     request();
   });
   useEffect(() => camera.subscribe(request), [camera, request]);
+  useEffect(() => deformation?.clock.onPhase(request), [deformation, request]);
   // Names are drawn in the application's own type, which may arrive after the first drawing.
   useEffect(() => {
     void document.fonts?.ready.then(request);

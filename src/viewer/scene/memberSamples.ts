@@ -1,4 +1,8 @@
-import type { MemberStations, ModeShapes } from '#shared/analysis/shapesFile.ts';
+import {
+  VALUES_PER_POINT,
+  type MemberStations,
+  type ModeShapes,
+} from '#shared/analysis/shapesFile.ts';
 import { cross, norm, scale as scaled, subtract } from '#shared/frame/vector3.ts';
 import type { Vector3 } from '#shared/schemas/frameDocument.ts';
 
@@ -13,23 +17,8 @@ export interface MemberSamples {
   readonly turn: Float32Array;
 }
 
-/** u v w rx ry rz of one point. */
-const VALUES_PER_POINT = 6;
-
 /** A member is drawn with at least this many pieces, so that a bent one looks bent. */
 const LEAST_PIECES = 10;
-
-/** The largest translation of any point in one mode, in the unit of the shapes. */
-export function largestDisplacement(shapes: ModeShapes, mode: number): number {
-  const base = mode * shapes.points * VALUES_PER_POINT;
-  let largest = 0;
-  for (let p = 0; p < shapes.points; p += 1) {
-    const at = base + p * VALUES_PER_POINT;
-    const [u, v, w] = [shapes.shapes[at]!, shapes.shapes[at + 1]!, shapes.shapes[at + 2]!];
-    largest = Math.max(largest, Math.hypot(u, v, w));
-  }
-  return largest;
-}
 
 /**
  * Samples one member between its stations. Along the member displacements go straight from station to

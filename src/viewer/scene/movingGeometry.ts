@@ -4,7 +4,8 @@ import type { SectionPoint } from '#shared/frame/sections/section.ts';
 import type { Vector3 } from '#shared/schemas/frameDocument.ts';
 import type { Deformation } from '../Deformation.ts';
 import type { FrameModel } from '../model/frameModel.ts';
-import { largestDisplacement, sampleMember, type MemberSamples } from './memberSamples.ts';
+import { modeScale } from '../model/movedModel.ts';
+import { sampleMember, type MemberSamples } from './memberSamples.ts';
 
 /** More members than this are drawn as lines: their sections would be a few px wide and slow to move. */
 export const MOST_MOVING_BODIES = 400;
@@ -22,8 +23,7 @@ export function movingGeometry(
   model: FrameModel,
   { shapes, mode, amplitude }: Omit<Deformation, 'clock'>,
 ): MovingGeometry {
-  const largest = largestDisplacement(shapes, mode);
-  const scale = largest > 0 ? amplitude / largest : 0;
+  const scale = modeScale(model, { shapes, mode, amplitude });
   const bodies = shapes.members.length <= MOST_MOVING_BODIES;
   const build = new Build();
   const placed = new Map(model.members.map((entry) => [entry.member.id, entry]));

@@ -2,6 +2,7 @@ import { useEffect, useMemo, useState } from 'react';
 import { useSearchParams } from 'react-router-dom';
 import { pairModes } from '#shared/analysis/pairModes.ts';
 import type { ModeShapes } from '#shared/analysis/shapesFile.ts';
+import { applyState } from '#shared/frame/applyState.ts';
 import type { ProjectResponse } from '#shared/schemas/project.ts';
 import type { SolveSummary } from '#shared/schemas/solveResult.ts';
 import { Notice } from '#src/components/Notice.tsx';
@@ -63,6 +64,8 @@ export function ModesSheet({ project, shown, stale, consistent, lumped }: ModesS
     return () => playback.pause();
   }, [playback, still]);
 
+  const stateId = shown.state?.id ?? null;
+  const inState = useMemo(() => applyState(shown.document, stateId), [shown.document, stateId]);
   const pairing = useMemo(
     () =>
       lumped
@@ -88,7 +91,7 @@ export function ModesSheet({ project, shown, stale, consistent, lumped }: ModesS
   }
   const partner = pairing?.pairs.find((pair) => summary.modes[pair.a]?.number === mode.number);
   const partnerMode = partner ? lumped?.summary.modes[partner.b] : undefined;
-  const moving = { document: shown.document, camera, playback, exaggeration };
+  const moving = { document: inState, camera, playback, exaggeration };
   const playbackBar = (
     <PlaybackBar playback={playback} exaggeration={exaggeration} onExaggeration={setExaggeration} />
   );
