@@ -1,6 +1,7 @@
 import { describe, expect, it } from 'vitest';
+import { frameDocument } from '#shared/schemas/frameDocument.ts';
 import type { ModeShapes } from '#shared/analysis/shapesFile.ts';
-import { modePicture } from '#src/features/modes/state/modePicture.ts';
+import { modePicture, tiesOf } from '#src/features/modes/state/modePicture.ts';
 
 /** A post along Z in the X–Z plane whose tip moves along X: foot, then stations at 0, 1 and 2 m. */
 const post = (tip: number): ModeShapes => {
@@ -47,6 +48,23 @@ describe('small picture of a mode', () => {
   it('gives more ink where the frame moves more', () => {
     const { segments } = modePicture(post(1), 0, 200, 100);
     expect([segments[2], segments[5]]).toEqual([1, 3]);
+  });
+
+  it('draws links and springs too, and leaves out those that lead nowhere', () => {
+    const document = frameDocument.parse({
+      name: 'Post',
+      springs: [
+        { id: 'mount', start: 'foot', end: 'head', stiffness: { w: 1 } },
+        { id: 'loose', start: 'foot', end: 'nowhere', stiffness: { w: 1 } },
+      ],
+      rigidLinks: [{ id: 'casting', main: 'head', others: ['foot'] }],
+    });
+    const ties = tiesOf(document, { ...post(1), nodes: ['foot', 'head'] });
+    expect(ties).toEqual([
+      [0, 1],
+      [1, 0],
+    ]);
+    expect(modePicture(post(1), 0, 200, 100, ties).segments.length).toBe(3 * (2 + 2));
   });
 
   it('stands still where nothing moves', () => {

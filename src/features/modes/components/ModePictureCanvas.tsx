@@ -2,11 +2,12 @@ import { useEffect, useMemo, useRef } from 'react';
 import type { ModeShapes } from '#shared/analysis/shapesFile.ts';
 import { useTheme } from '#src/hooks/useTheme.ts';
 import { drawModePicture } from '../state/drawModePicture.ts';
-import { modePicture } from '../state/modePicture.ts';
+import { modePicture, type Tie } from '../state/modePicture.ts';
 import type { Playback } from '../state/playback.ts';
 
 interface ModePictureCanvasProps {
   readonly shapes: ModeShapes;
+  readonly ties: readonly Tie[];
   /** 0-based index into the shapes. */
   readonly mode: number;
   readonly playback: Playback;
@@ -18,12 +19,12 @@ interface ModePictureCanvasProps {
 
 /** One small moving picture of the mode sheet. Decorative: the caption beside it says the same in words. */
 export function ModePictureCanvas(props: ModePictureCanvasProps) {
-  const { shapes, mode, playback, moves, width, height } = props;
+  const { shapes, ties, mode, playback, moves, width, height } = props;
   const canvas = useRef<HTMLCanvasElement>(null);
   const theme = useTheme();
   const picture = useMemo(
-    () => modePicture(shapes, mode, width, height),
-    [shapes, mode, width, height],
+    () => modePicture(shapes, mode, width, height, ties),
+    [shapes, mode, width, height, ties],
   );
 
   useEffect(() => {

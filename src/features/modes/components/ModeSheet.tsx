@@ -1,12 +1,15 @@
-import { useState } from 'react';
+import { useMemo, useState } from 'react';
 import type { ModeShapes } from '#shared/analysis/shapesFile.ts';
+import type { FrameDocument } from '#shared/schemas/frameDocument.ts';
 import type { ModeSummary } from '#shared/schemas/solveResult.ts';
 import { useReducedMotion } from '#src/hooks/useReducedMotion.ts';
+import { tiesOf } from '../state/modePicture.ts';
 import type { Playback } from '../state/playback.ts';
 import { formatModeFrequency } from '../state/formatMode.ts';
 import { ModePictureCanvas } from './ModePictureCanvas.tsx';
 
 interface ModeSheetProps {
+  readonly document: FrameDocument;
   readonly modes: readonly ModeSummary[];
   readonly shapes: ModeShapes;
   readonly selectedMode: number;
@@ -19,7 +22,9 @@ const PICTURE = { width: 148, height: 112 };
 const SEGMENTS_THAT_MOVE = 12_000;
 
 /** All modes as small moving pictures. */
-export function ModeSheet({ modes, shapes, selectedMode, playback, onChoose }: ModeSheetProps) {
+export function ModeSheet(props: ModeSheetProps) {
+  const { document, modes, shapes, selectedMode, playback, onChoose } = props;
+  const ties = useMemo(() => tiesOf(document, shapes), [document, shapes]);
   const [pointedAt, setPointedAt] = useState<number | null>(null);
   const still = useReducedMotion();
   const allMove = shapes.points * modes.length <= SEGMENTS_THAT_MOVE;
@@ -42,6 +47,7 @@ export function ModeSheet({ modes, shapes, selectedMode, playback, onChoose }: M
           >
             <ModePictureCanvas
               shapes={shapes}
+              ties={ties}
               mode={index}
               playback={playback}
               moves={!still && (allMove || pointedAt === mode.number)}

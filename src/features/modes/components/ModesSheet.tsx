@@ -183,6 +183,7 @@ export function ModesSheet({ project, shown, stale, consistent, lumped }: ModesS
       {look === 'sheet' && (
         <div className="min-h-0 flex-1 overflow-y-auto p-4">
           <ModeSheet
+            document={inState}
             modes={summary.modes}
             shapes={shapes}
             selectedMode={mode.number}

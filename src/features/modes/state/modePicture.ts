@@ -1,4 +1,5 @@
 import type { ModeShapes } from '#shared/analysis/shapesFile.ts';
+import type { FrameDocument } from '#shared/schemas/frameDocument.ts';
 import { VALUES_PER_POINT } from '#shared/analysis/shapesFile.ts';
 
 /** Where the small pictures are looked at from: azimuth about Z and height over the horizon, rad. */
@@ -9,7 +10,10 @@ const MARGIN_PX = 14;
 /** Steps from pale to full ink; lines of one step are drawn together. */
 export const INK_STEPS = 5;
 
-/** One mode, flattened to the paper: lines through every member's stations, in px. */
+/** Two points of the shapes that are joined by something other than a member. */
+export type Tie = readonly [number, number];
+
+/** One mode, flattened to the paper: lines through every member’s stations, and ties, in px. */
 export interface ModePicture {
   readonly points: number;
   /** points × 2, undeformed. */
@@ -24,12 +28,14 @@ export interface ModePicture {
  * Flattens one mode for a picture of the given size: parallel projection from the front, left and above
  * (straight from the front where the frame lies in the X–Z plane), fitted to the picture.
  *   mode  0-based index into the shapes
+ *   ties  what is drawn besides the members
  */
 export function modePicture(
   shapes: ModeShapes,
   mode: number,
   width: number,
   height: number,
+  ties: readonly Tie[] = [],
 ): ModePicture {
   const { points, positions } = shapes;
   const flat = isFlat(positions);
@@ -62,7 +68,7 @@ export function modePicture(
     largest = Math.max(largest, amplitude[p] ?? 0);
   }
   fit(still, swing, width, height, largest);
-  return { points, still, swing, segments: inkSegments(shapes, amplitude, largest) };
+  return { points, still, swing, segments: inkSegments(shapes, ties, amplitude, largest) };
 }
 
 function isFlat(positions: Float32Array): boolean {
@@ -101,19 +107,42 @@ function fit(
   }
 }
 
-function inkSegments(shapes: ModeShapes, amplitude: Float32Array, largest: number): Int32Array {
-  const count = shapes.members.reduce((sum, member) => sum + member.count - 1, 0);
-  const segments = new Int32Array(3 * count);
+function inkSegments(
+  shapes: ModeShapes,
+  ties: readonly Tie[],
+  amplitude: Float32Array,
+  largest: number,
+): Int32Array {
+  const pieces = shapes.members.reduce((sum, member) => sum + member.count - 1, 0);
+  const segments = new Int32Array(3 * (pieces + ties.length));
   let at = 0;
-  for (const { first, count: stations } of shapes.members) {
-    for (let i = first; i < first + stations - 1; i += 1) {
-      const mean = ((amplitude[i] ?? 0) + (amplitude[i + 1] ?? 0)) / 2;
-      const share = largest > 0 ? mean / largest : 0;
-      segments[at] = i;
-      segments[at + 1] = i + 1;
-      segments[at + 2] = Math.min(INK_STEPS - 1, Math.floor(share * INK_STEPS));
-      at += 3;
-    }
+  const add = (a: number, b: number): void => {
+    const mean = ((amplitude[a] ?? 0) + (amplitude[b] ?? 0)) / 2;
+    const share = largest > 0 ? mean / largest : 0;
+    segments[at] = a;
+    segments[at + 1] = b;
+    segments[at + 2] = Math.min(INK_STEPS - 1, Math.floor(share * INK_STEPS));
+    at += 3;
+  };
+  for (const { first, count } of shapes.members) {
+    for (let i = first; i < first + count - 1; i += 1) add(i, i + 1);
   }
+  for (const [a, b] of ties) add(a, b);
   return segments;
+}
+
+/** Rigid links and springs: what ties nodes together without being a member. */
+export function tiesOf(document: FrameDocument, shapes: ModeShapes): Tie[] {
+  const point = new Map(shapes.nodes.map((id, i) => [id, i]));
+  const pairs = [
+    ...document.springs.map(({ start, end }) => [start, end] as const),
+    ...document.rigidLinks.flatMap(({ main, others }) =>
+      others.map((other) => [main, other] as const),
+    ),
+  ];
+  return pairs.flatMap(([a, b]): Tie[] => {
+    const from = point.get(a);
+    const to = point.get(b);
+    return from === undefined || to === undefined ? [] : [[from, to]];
+  });
 }
