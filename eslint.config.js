@@ -87,7 +87,7 @@ export default defineConfig(
   },
   {
     // These talk to a person at a terminal.
-    files: ['scripts/**'],
+    files: ['scripts/**', 'tests/bench/**'],
     rules: { 'no-console': 'off' },
   },
 );
