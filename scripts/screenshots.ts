@@ -63,15 +63,11 @@ const PICTURES: readonly {
   },
 ];
 
-/** The frequency line has its marks and the view its frame. */
+/** The frequency line has its marks, and the view both its layers: the members and the ink over them. */
 async function drawn(page: Page): Promise<void> {
-  await page
-    .getByRole('list', { name: 'Natural frequencies' })
-    .getByRole('listitem')
-    .first()
-    .waitFor();
-  await page.locator('canvas').first().waitFor();
-  await page.waitForLoadState('networkidle');
+  const line = page.getByRole('list', { name: 'Natural frequencies' });
+  await line.locator('a, button').first().waitFor();
+  await page.locator('canvas').nth(1).waitFor();
 }
 
 async function signIn(page: Page, role: Role): Promise<void> {
