@@ -12,7 +12,8 @@ export default defineConfig({
   fullyParallel: false,
   retries: 0,
   forbidOnly: true,
-  timeout: 120_000,
+  // A stuck test still ends; a slow machine, which draws WebGL by processor, does not fail one.
+  timeout: 300_000,
   expect: { timeout: 15_000 },
   use: {
     // The global set-up chooses the port; the processes that run tests inherit it.
