@@ -63,7 +63,7 @@ test('a machine stand goes from a starter to a locked revision', async ({ openAs
   await test.step('the designer begins with a starter', async () => {
     await designer.getByRole('link', { name: 'New project' }).click();
     await designer.getByRole('radio', { name: /^Machine stand/ }).check();
-    await designer.getByRole('combobox', { name: 'Project' }).fill(PROJECT);
+    await designer.getByLabel('Project', { exact: true }).fill(PROJECT);
     await designer.getByRole('textbox', { name: 'Machine', exact: true }).fill('RP-7 rinse pump');
     const length = designer.getByLabel('Length along X');
     await length.fill('2*');
