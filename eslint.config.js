@@ -16,6 +16,9 @@ export default defineConfig(
     '.ringstead',
     'test-results',
     'playwright-report',
+    'shared/numerics/kernels/kernels.generated.ts',
+    // AssemblyScript: its own types, checked by its own compiler.
+    'shared/numerics/kernels/assembly',
   ]),
   js.configs.recommended,
   {

@@ -10,6 +10,7 @@ import {
 } from 'node:fs';
 import { join } from 'node:path';
 import { root } from './folders.mjs';
+import { makeKernels } from './kernels.mjs';
 import { run } from './processes.mjs';
 import { StepError } from './steps.mjs';
 
@@ -23,6 +24,16 @@ import { StepError } from './steps.mjs';
  */
 
 const SERVER_ENTRIES = ['server/main.ts', 'server/workers/solveWorker.ts', 'server/runner.ts'];
+
+const KERNELS = 'shared/numerics/kernels/kernels.generated.ts';
+
+/** What every other build and every run from source stands on. @type {Build} */
+export const kernelsBuild = {
+  name: 'kernels',
+  sources: ['shared/numerics/kernels/assembly', 'scripts/lib/kernels.mjs', 'package-lock.json'],
+  result: KERNELS,
+  make: () => makeKernels(KERNELS),
+};
 
 /** @type {Build} */
 export const clientBuild = {

@@ -1,4 +1,11 @@
-import { clientBuild, isStale, makeBuild, serverBuild, sourceStamp } from './builds.mjs';
+import {
+  clientBuild,
+  isStale,
+  kernelsBuild,
+  makeBuild,
+  serverBuild,
+  sourceStamp,
+} from './builds.mjs';
 import { stopCluster } from './cluster.mjs';
 import { namedDatabase } from './environment.mjs';
 import { root } from './folders.mjs';
@@ -50,6 +57,8 @@ export async function setUpPackages() {
     await installPackages();
     note('installed');
   });
+  // Installing makes them; a change of their source since then does not.
+  if (isStale(kernelsBuild)) await makeBuild(kernelsBuild);
 }
 
 /**

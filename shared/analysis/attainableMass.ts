@@ -1,5 +1,51 @@
+import type { ChainedPencil } from '../numerics/chains/ChainedPencil.ts';
+import { ZeroPivotError } from '../numerics/factor/ZeroPivotError.ts';
 import { multiplySymmetric } from '../numerics/sparse/SymmetricCsc.ts';
 import type { SymmetricCsc } from '../numerics/sparse/SymmetricCsc.ts';
+import { six } from './massProperties.ts';
+import type { Six } from './massProperties.ts';
+
+/** What keeps a singular mass matrix factorisable, relative to its diagonal; the sums feel its square. */
+const SHIFTS = [1e-12, 1e-10, 1e-8];
+
+/**
+ * bᵀ M⁺ b for the six inertia forces b: what the effective masses of all modes add up to.
+ *   pencil  of the frame; left factored at no shift
+ *   forces  over the free unknowns, in the range of M
+ * M is singular where unknowns carry no mass; with δ diag(M) added it can be factored, and b has no part in
+ * what it lacks. The sum changes by −δ xᵀ diag(M) x in first order, which is given back.
+ */
+export function attainableMass(pencil: ChainedPencil, forces: readonly Float64Array[]): Six {
+  const { arena, n, size } = pencil;
+  const shift = factoriseMass(pencil);
+  const diagonal = pencil.diagonal('M');
+  const used = arena.used;
+  const b = pencil.vector();
+  const x = pencil.vector();
+  const result = six((direction) => {
+    arena.view(b, n).set(forces[direction]!);
+    pencil.solve(b, x);
+    const found = arena.view(x, n);
+    let given = 0;
+    for (let i = 0; i < n; i++) given += diagonal[i]! * found[i]! * found[i]!;
+    return arena.kernels.dot(size, b, x) + shift * given;
+  });
+  arena.rewind(used);
+  return result;
+}
+
+/** Factors with the least shift that rounding allows, and returns it. */
+function factoriseMass(pencil: ChainedPencil): number {
+  for (let k = 0; ; k++) {
+    const shift = SHIFTS[k]!;
+    try {
+      pencil.factoriseMass(shift);
+      return shift;
+    } catch (error) {
+      if (!(error instanceof ZeroPivotError) || k + 1 === SHIFTS.length) throw error;
+    }
+  }
+}
 
 /** Residual over right-hand side at which the iteration ends: the sum's error is of its square. */
 const TOLERANCE = 1e-7;
@@ -15,7 +61,7 @@ const MOST_STEPS = 1000;
  * value. The condition number of a diagonally scaled consistent mass matrix is bounded by that of its elements
  * (Wathen 1987).
  */
-export function attainableMass(M: SymmetricCsc, b: Float64Array): number {
+export function attainableMassOf(M: SymmetricCsc, b: Float64Array): number {
   const n = M.n;
   const inverseDiagonal = new Float64Array(n);
   for (let j = 0; j < n; j++) {

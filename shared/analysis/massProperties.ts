@@ -1,9 +1,14 @@
-import type { DividedPart, FrameModel } from '../frame/assembly/FrameModel.ts';
+import { chainMatrix, innerCount, stationPlaces } from '../frame/assembly/chainedPair.ts';
+import type { DividedPart, FrameModel, ModelChain } from '../frame/assembly/FrameModel.ts';
 import { addForces } from '../frame/freedoms/Combination.ts';
 import { add, cross, dot, scale, subtract } from '../frame/vector3.ts';
 import type { Vector3 } from '../schemas/frameDocument.ts';
 
 export type Six = [number, number, number, number, number, number];
+
+export function six(value: (direction: number) => number): Six {
+  return [value(0), value(1), value(2), value(3), value(4), value(5)];
+}
 
 export interface MassProperties {
   /** [kg] */
@@ -104,4 +109,81 @@ function addInertia(m: Float64Array, r: Float64Array, use: (f: Float64Array) => 
   }
   use(f);
   return energy;
+}
+
+/** The same as `rigidInertia` over the unknowns of a model, from what chains of one make share. */
+export function chainInertia(model: FrameModel, centre: Vector3): RigidInertia {
+  const total: Six = [0, 0, 0, 0, 0, 0];
+  const forces = total.map(() => new Float64Array(model.free));
+  const directions = [0, 1, 2, 3, 4, 5].filter((direction) => model.exists[direction]);
+  for (const chains of model.chains) {
+    const { n, MR, RMR, inner } = rigidMakeOf(chains[0]!);
+    for (const chain of chains) {
+      const { part, ends } = chain;
+      const { x, y, z } = part.axes;
+      const origin = add(part.start, scale(x, chain.from * part.segmentLength));
+      const end = new Float64Array(ends.rows);
+      for (const direction of directions) {
+        const [t, omega] = rigidMotionAt(direction, origin, centre);
+        const a = [x, y, z].map((axis) => dot(axis, t));
+        a.push(...[x, y, z].map((axis) => dot(axis, omega)));
+        const b = forces[direction]!;
+        for (let i = 0; i < n; i++) {
+          let force = 0;
+          for (let k = 0; k < 6; k++) force += MR[i * 6 + k]! * a[k]!;
+          if (i < inner) b[chain.inner + i]! += force;
+          else end[i - inner] = force;
+        }
+        addForces(ends, end, b);
+        for (let k = 0; k < 6; k++) {
+          for (let l = 0; l < 6; l++) total[direction]! += a[k]! * RMR[k * 6 + l]! * a[l]!;
+        }
+      }
+    }
+  }
+  for (const direction of directions) {
+    for (const { at, motion, mass } of model.bodies) {
+      const r = Float64Array.from(rigidMotionAt(direction, at, centre).flat());
+      total[direction]! += addInertia(mass, r, (f) => addForces(motion, f, forces[direction]!));
+    }
+  }
+  return { forces, total };
+}
+
+/**
+ * What a make of chains answers to its six rigid motions about its start, in member axes: M R over inner
+ * unknowns and ends, row by row, and RᵀMR.
+ */
+function rigidMakeOf(chain: ModelChain): {
+  n: number;
+  MR: Float64Array;
+  RMR: Float64Array;
+  inner: number;
+} {
+  const { part, ends } = chain;
+  const inner = innerCount(chain);
+  const n = inner + ends.rows;
+  const M = chainMatrix(chain, part.mass);
+  const motion = new Float64Array(n * 6);
+  stationPlaces(chain).forEach((places, station) => {
+    const along = station * part.segmentLength;
+    places.forEach((place, d) => {
+      if (place < 0) return;
+      motion[place * 6 + d] = 1;
+      // ω × (along, 0, 0) = (0, ωz along, −ωy along)
+      if (d === 1) motion[place * 6 + 5] = along;
+      if (d === 2) motion[place * 6 + 4] = -along;
+    });
+  });
+  const MR = new Float64Array(n * 6);
+  const RMR = new Float64Array(36);
+  for (let i = 0; i < n; i++) {
+    for (let k = 0; k < 6; k++) {
+      let sum = 0;
+      for (let j = 0; j < n; j++) sum += M[i * n + j]! * motion[j * 6 + k]!;
+      MR[i * 6 + k] = sum;
+      for (let l = 0; l < 6; l++) RMR[l * 6 + k]! += motion[i * 6 + l]! * sum;
+    }
+  }
+  return { n, MR, RMR, inner };
 }

@@ -1,7 +1,13 @@
 import { barStrainEnergy } from '../frame/elements/bar.ts';
-import { beamDeformations, beamStrainEnergy } from '../frame/elements/beamStiffness.ts';
-import type { FrameModel } from '../frame/assembly/FrameModel.ts';
+import {
+  BEAM_DEFORMATIONS,
+  beamDeformationRows,
+  beamStrainEnergy,
+} from '../frame/elements/beamStiffness.ts';
+import { innerCount, stationPlaces } from '../frame/assembly/chainedPair.ts';
+import type { FrameModel, ModelChain } from '../frame/assembly/FrameModel.ts';
 import { displacements } from '../frame/freedoms/Combination.ts';
+import type { ChainedPencil, PackedRows } from '../numerics/chains/ChainedPencil.ts';
 
 /** Energies of one shape, by part of the frame; all scale with the square of the shape. */
 export interface ModeEnergies {
@@ -18,76 +24,125 @@ export interface ModeEnergies {
   readonly kineticMasses: Float64Array;
 }
 
-/** Strain energy of every element from its deformations, which lose no digits where stiff members ride along. */
-function addStrain(
-  model: FrameModel,
-  phi: Float64Array,
-  members: Float64Array,
-  ties: Float64Array,
-): number {
-  const d = new Float64Array(12);
-  const g = new Float64Array(6);
-  let total = 0;
-  for (const { part, motion } of model.segments) {
-    displacements(motion, phi, d);
-    let energy: number;
-    if (part.member.kind === 'bar') {
-      energy = barStrainEnergy(part.rigidity.axial, d);
-    } else {
-      beamDeformations(d, part.segmentLength, g);
-      energy = beamStrainEnergy(part.rigidity, g);
+/** Strain and kinetic energies of shapes of one frame, from the deformations of its elements. */
+export class FrameEnergies {
+  readonly #model: FrameModel;
+  readonly #pencil: ChainedPencil;
+  readonly #deformations: PackedRows[];
+  #masses: PackedRows[] | undefined;
+  readonly #g = new Float64Array(BEAM_DEFORMATIONS);
+
+  /** `pencil`: of the model's `chainedPair`. */
+  constructor(model: FrameModel, pencil: ChainedPencil) {
+    this.#model = model;
+    this.#pencil = pencil;
+    this.#deformations = pencil.packRows(model.chains.map(([chain]) => deformationRows(chain!)));
+  }
+
+  /**
+   * λ of a shape with φᵀMφ = 1 as a Rayleigh quotient from element strain energies [rad²/s²].
+   *   phi  address over the free unknowns
+   * Extension, twist and end rotations relative to the chord are squared and summed: no terms cancel, where
+   * φᵀKφ loses as many digits as the stiffnesses of one frame differ by.
+   */
+  lambda(phi: number): number {
+    const members = new Float64Array(this.#model.parts.length);
+    return 2 * this.#addStrain(phi, members, new Float64Array(this.#model.ties.length));
+  }
+
+  /** Strain and kinetic energy of a shape by member, tie and mass; phi an address. */
+  of(phi: number): ModeEnergies {
+    const { parts, ties, bodies } = this.#model;
+    const members = new Float64Array(parts.length);
+    const strained = new Float64Array(ties.length);
+    const strain = this.#addStrain(phi, members, strained);
+    const kineticMembers = new Float64Array(parts.length);
+    const kineticMasses = new Float64Array(bodies.length);
+    let kinetic = this.#addKinetic(phi, kineticMembers);
+    const x = this.#pencil.arena.view(phi, this.#pencil.n);
+    const d = new Float64Array(6);
+    for (const { index, motion, mass } of bodies) {
+      displacements(motion, x, d);
+      let sum = 0;
+      for (let i = 0; i < 6; i++) {
+        for (let j = 0; j < 6; j++) sum += d[i]! * mass[i * 6 + j]! * d[j]!;
+      }
+      kineticMasses[index] = 0.5 * sum;
+      kinetic += kineticMasses[index];
     }
-    members[part.index]! += energy;
-    total += energy;
+    return { strain, members, ties: strained, kinetic, kineticMembers, kineticMasses };
   }
-  model.ties.forEach(({ motion, stiffness }, i) => {
-    displacements(motion, phi, d);
-    ties[i] = 0.5 * stiffness * d[0]! * d[0]!;
-    total += ties[i];
-  });
-  return total;
+
+  #addStrain(phi: number, members: Float64Array, ties: Float64Array): number {
+    const { chains, ties: all } = this.#model;
+    const g = this.#g;
+    let total = 0;
+    this.#pencil.applyRows(this.#deformations, phi, ({ classIndex, from, count, products }) => {
+      let at = 0;
+      for (let m = from; m < from + count; m++) {
+        const { part, elements } = chains[classIndex]![m]!;
+        let energy = 0;
+        if (part.member.kind === 'bar') {
+          energy = barStrainEnergy(part.rigidity.axial, products[at++]!);
+        } else {
+          for (let e = 0; e < elements; e++) {
+            for (let i = 0; i < BEAM_DEFORMATIONS; i++) g[i] = products[at++]!;
+            energy += beamStrainEnergy(part.rigidity, g);
+          }
+        }
+        members[part.index]! += energy;
+        total += energy;
+      }
+    });
+    const x = this.#pencil.arena.view(phi, this.#pencil.n);
+    const d = new Float64Array(1);
+    all.forEach(({ motion, stiffness }, i) => {
+      displacements(motion, x, d);
+      ties[i] = 0.5 * stiffness * d[0]! * d[0]!;
+      total += ties[i];
+    });
+    return total;
+  }
+
+  #addKinetic(phi: number, members: Float64Array): number {
+    const { chains } = this.#model;
+    this.#masses ??= this.#pencil.packRows(this.#pencil.pair.classes.map(({ M }) => M));
+    let total = 0;
+    this.#pencil.applyRows(this.#masses, phi, (batch) => {
+      const { classIndex, from, count, products } = batch;
+      const inner = batch.inner.length / count;
+      const ends = batch.ends.length / count;
+      let at = 0;
+      for (let m = 0; m < count; m++) {
+        let sum = 0;
+        for (let i = 0; i < inner; i++) sum += products[at++]! * batch.inner[m * inner + i]!;
+        for (let e = 0; e < ends; e++) sum += products[at++]! * batch.ends[m * ends + e]!;
+        members[chains[classIndex]![from + m]!.part.index]! += 0.5 * sum;
+        total += 0.5 * sum;
+      }
+    });
+    return total;
+  }
 }
 
-/**
- * λ of a shape with φᵀMφ = 1 as a Rayleigh quotient from element strain energies [rad²/s²].
- *   phi  over the free unknowns
- * Extension, twist and end rotations relative to the chord are squared and summed: no terms cancel, where
- * φᵀKφ loses as many digits as the stiffnesses of one frame differ by.
- */
-export function lambdaFromEnergies(model: FrameModel, phi: Float64Array): number {
-  const members = new Float64Array(model.parts.length);
-  return 2 * addStrain(model, phi, members, new Float64Array(model.ties.length));
-}
-
-function quadraticForm(m: Float64Array, d: Float64Array, rows: number): number {
-  let sum = 0;
-  for (let i = 0; i < rows; i++) {
-    let row = 0;
-    for (let j = 0; j < rows; j++) row += m[i * rows + j]! * d[j]!;
-    sum += d[i]! * row;
+/** Deformations of every element of a chain over its inner unknowns and its ends, row by row. */
+function deformationRows(chain: ModelChain): Float64Array {
+  const { part, elements, ends } = chain;
+  const width = innerCount(chain) + ends.rows;
+  const places = stationPlaces(chain);
+  const element =
+    part.member.kind === 'bar'
+      ? Float64Array.of(-1, 0, 0, 1, 0, 0)
+      : beamDeformationRows(part.segmentLength);
+  const rows = element.length / ends.rows;
+  const result = new Float64Array(elements * rows * width);
+  for (let e = 0; e < elements; e++) {
+    const at = [...places[e]!, ...places[e + 1]!];
+    for (let i = 0; i < rows; i++) {
+      at.forEach((place, j) => {
+        if (place >= 0) result[(e * rows + i) * width + place] = element[i * ends.rows + j]!;
+      });
+    }
   }
-  return sum;
-}
-
-/** Strain and kinetic energy of a shape by member, tie and mass; phi over the free unknowns. */
-export function modeEnergies(model: FrameModel, phi: Float64Array): ModeEnergies {
-  const members = new Float64Array(model.parts.length);
-  const ties = new Float64Array(model.ties.length);
-  const strain = addStrain(model, phi, members, ties);
-  const kineticMembers = new Float64Array(model.parts.length);
-  const kineticMasses = new Float64Array(model.bodies.length);
-  const d = new Float64Array(12);
-  let kinetic = 0;
-  for (const { part, motion } of model.segments) {
-    displacements(motion, phi, d);
-    const energy = 0.5 * quadraticForm(part.mass, d, motion.rows);
-    kineticMembers[part.index]! += energy;
-    kinetic += energy;
-  }
-  for (const { index, motion, mass } of model.bodies) {
-    displacements(motion, phi, d);
-    kineticMasses[index] = 0.5 * quadraticForm(mass, d, 6);
-    kinetic += kineticMasses[index];
-  }
-  return { strain, members, ties, kinetic, kineticMembers, kineticMasses };
+  return result;
 }

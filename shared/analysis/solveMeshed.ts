@@ -1,26 +1,46 @@
-import { assembleMatrices } from '../frame/assembly/assembleMatrices.ts';
 import { buildModel } from '../frame/assembly/buildModel.ts';
+import { chainedPair } from '../frame/assembly/chainedPair.ts';
 import { divisionsOf } from '../frame/assembly/divisions.ts';
 import type { MassKind } from '../frame/assembly/FrameModel.ts';
 import { massNormalised, rigidMotions } from '../frame/freedoms/rigidMotions.ts';
-import { lowestModes } from '../numerics/eigen/lowestModes.ts';
+import { analyseChains } from '../numerics/chains/analyseChains.ts';
+import { ChainedPencil } from '../numerics/chains/ChainedPencil.ts';
+import { findModes } from '../numerics/eigen/lowestModes.ts';
 import type { ModesResult } from '../numerics/eigen/ModesResult.ts';
+import { ZeroPivotError } from '../numerics/factor/ZeroPivotError.ts';
+import { withArena } from '../numerics/kernels/Arena.ts';
+import type { Arena } from '../numerics/kernels/Arena.ts';
 import type { FrameDocument } from '../schemas/frameDocument.ts';
 import { DEFAULT_SOLVE_SETTINGS } from '../schemas/solveResult.ts';
 import type { SolveSettings } from '../schemas/solveResult.ts';
 import { attainableMass } from './attainableMass.ts';
 import { massOrRefuse, refuseMechanismsOf } from './checkMotion.ts';
-import { rigidInertia } from './massProperties.ts';
-import { lambdaFromEnergies } from './modeEnergies.ts';
+import { chainInertia } from './massProperties.ts';
+import { FrameEnergies } from './modeEnergies.ts';
 import { shapesAtPoints } from './shapesAtPoints.ts';
 import type { SolvedFrame, SolveProgress } from './SolvedFrame.ts';
-import { meshedDetails, six, summariseModes } from './summariseModes.ts';
+import { meshedDetails, summariseModes } from './summariseModes.ts';
 
 /** Seed of the eigen solver's start vectors: the same document gives the same bits. */
 const SEED = 20_001;
+/**
+ * A frame none of whose pivots is smaller, over its diagonal, resists every motion: a mechanism leaves a pivot
+ * of rounding, some 1e-14. Below it the motions themselves are looked for.
+ */
+const CERTAIN_PIVOT = 1e-9;
 
 /** Solves K φ = λ M φ of a frame divided into elements; `document` with its operating state applied. */
 export function solveMeshed(
+  document: FrameDocument,
+  massKind: MassKind,
+  settings: SolveSettings,
+  progress: SolveProgress,
+): SolvedFrame {
+  return withArena((arena) => solveIn(arena, document, massKind, settings, progress));
+}
+
+function solveIn(
+  arena: Arena,
   document: FrameDocument,
   massKind: MassKind,
   settings: SolveSettings,
@@ -32,23 +52,34 @@ export function solveMeshed(
     divisionsOf: (part) => divisionsOf(part, settings.divisions, settings.upToHz),
   });
   const { totalMass, centre } = massOrRefuse(model);
-  const { K, M } = assembleMatrices(model);
-  const assembled = clock();
+  const pair = chainedPair(model);
+  const built = clock();
+  const analysis = analyseChains(pair, clock);
+  const analysed = clock();
+  const pencil = new ChainedPencil(arena, pair, analysis);
+  const placed = clock();
   stopIfAsked();
 
-  progress(0.05, 'looking for mechanisms');
-  const rigid = massNormalised(rigidMotions(model), M, model, totalMass).map(({ x }) => x);
-  refuseMechanismsOf(model);
+  const motions = rigidMotions(model);
+  const rigid = massNormalised(motions, massOperator(pencil), model, totalMass).map(({ x }) => x);
+  const moved = clock();
+  const resists = rigid.length === 0 && resistsEveryMotion(pencil);
+  const factored = clock();
+  if (!resists) {
+    progress(0.05, 'looking for mechanisms');
+    refuseMechanismsOf(model);
+  }
   const checked = clock();
   stopIfAsked();
 
   progress(0.1, 'finding modes');
-  const found = lowestModes(K, M, {
+  const energies = new FrameEnergies(model, pencil);
+  const found = findModes(pencil, {
     ...modesWanted(settings),
     nullVectors: rigid,
     seed: SEED,
     clock,
-    refineLambda: (phi) => lambdaFromEnergies(model, phi),
+    refineLambda: (phi) => energies.lambda(phi),
     onProgress: (fraction) => progress(0.1 + 0.8 * fraction, 'finding modes'),
     shouldStop,
   });
@@ -57,15 +88,15 @@ export function solveMeshed(
   progress(0.9, 'summing energies');
   const beforeSummary = clock();
   const shapes = shapesAtPoints(model, found.phi);
-  const inertia = rigidInertia(model, centre);
+  const inertia = chainInertia(model, centre);
   const summary = summariseModes({
     model,
-    details: meshedDetails(model, { K, M }, found, inertia),
+    details: meshedDetails(pencil, energies, found, inertia.forces),
     shapes,
     rigid: rigid.length,
     totalMass,
     total: inertia.total,
-    attainable: six((direction) => attainableMass(M, inertia.forces[direction]!)),
+    attainable: attainableMass(pencil, inertia.forces),
   });
   return {
     ...summary,
@@ -79,10 +110,37 @@ export function solveMeshed(
     warnings: [],
     timing: {
       ...found.timing,
-      assemble: assembled - began,
+      order: analysis.symbolic.timing.order,
+      symbolic: analysis.symbolic.timing.symbolic,
+      assemble: built - began + placed - analysed,
+      factor: found.timing.factor + factored - moved,
       // Looking for mechanisms certifies the model, as the count check does the modes.
-      certify: found.timing.certify + (checked - assembled) + (clock() - beforeSummary),
+      certify: found.timing.certify + moved - placed + checked - factored + clock() - beforeSummary,
     },
+  };
+}
+
+/** Whether K is certainly regular; leaves the pencil factored at 0 if so. */
+function resistsEveryMotion(pencil: ChainedPencil): boolean {
+  try {
+    return pencil.factorise(0) === 0 && pencil.smallestPivot() > CERTAIN_PIVOT;
+  } catch (error) {
+    if (error instanceof ZeroPivotError) return false;
+    throw error;
+  }
+}
+
+/** y ← M x for vectors outside the arena. */
+function massOperator(pencil: ChainedPencil): (x: Float64Array, y: Float64Array) => void {
+  const { arena, n } = pencil;
+  return (x, y) => {
+    const used = arena.used;
+    const from = pencil.vector();
+    const to = pencil.vector();
+    arena.view(from, n).set(x);
+    pencil.multiplyMass(from, to);
+    y.set(arena.view(to, n));
+    arena.rewind(used);
   };
 }
 

@@ -1,11 +1,11 @@
 import type { FrameModel } from '../frame/assembly/FrameModel.ts';
+import type { ChainedPencil } from '../numerics/chains/ChainedPencil.ts';
 import { backwardError } from '../numerics/eigen/backwardError.ts';
 import type { ModesResult } from '../numerics/eigen/ModesResult.ts';
-import type { SymmetricCsc } from '../numerics/sparse/SymmetricCsc.ts';
 import type { EnergyShare, ModeSummary, SolveSummary } from '../schemas/solveResult.ts';
-import type { RigidInertia, Six } from './massProperties.ts';
-import { modeEnergies } from './modeEnergies.ts';
-import type { ModeEnergies } from './modeEnergies.ts';
+import { six } from './massProperties.ts';
+import type { Six } from './massProperties.ts';
+import type { FrameEnergies, ModeEnergies } from './modeEnergies.ts';
 import { nameModes } from './nameModes.ts';
 import type { ModeCharacter } from './nameModes.ts';
 import { VALUES_PER_POINT } from './shapesFile.ts';
@@ -39,24 +39,42 @@ export interface SolvedModes {
   readonly attainable: Six;
 }
 
-/** Details of the modes of K φ = λ M φ. */
+/**
+ * Details of the modes of a divided frame, while they are in the pencil's arena.
+ *   forces  inertia forces of the six rigid motions, over the free unknowns
+ */
 export function meshedDetails(
-  model: FrameModel,
-  { K, M }: { readonly K: SymmetricCsc; readonly M: SymmetricCsc },
-  { lambda, phi }: ModesResult,
-  inertia: RigidInertia,
+  pencil: ChainedPencil,
+  energies: FrameEnergies,
+  { lambda, phi, addresses }: ModesResult,
+  forces: readonly Float64Array[],
 ): ModeDetail[] {
-  const scratch = new Float64Array(4 * model.free);
-  return phi.map((shape, i) => {
-    const eta = backwardError(K, M, shape, lambda[i]!, scratch);
+  const { arena, n, size } = pencil;
+  const used = arena.used;
+  const image = arena.numbers(size);
+  const diagonals = { K: pencil.diagonal('K'), M: pencil.diagonal('M') };
+  const details = phi.map((shape, i) => {
+    const address = addresses[i]!;
+    pencil.multiplyStiffness(address.vector, image);
+    const eta = backwardError(
+      {
+        phi: shape,
+        Kphi: arena.view(image, n),
+        Mphi: arena.view(address.image, n),
+        lambda: lambda[i]!,
+      },
+      diagonals,
+    );
     return {
       lambda: lambda[i]!,
-      participation: six((direction) => product(shape, inertia.forces[direction]!)),
-      energies: modeEnergies(model, shape),
+      participation: six((direction) => product(shape, forces[direction]!)),
+      energies: energies.of(address.vector),
       backwardError: eta,
-      digits: digitsOf(eta, model.free),
+      digits: digitsOf(eta, n),
     };
   });
+  arena.rewind(used);
+  return details;
 }
 
 /** Names, participation, effective mass and energies of the modes found. */
@@ -95,10 +113,6 @@ export function summariseModes(solved: SolvedModes): Pick<SolveSummary, 'modes' 
       onFixed: [onFixed[0]!, onFixed[1]!, onFixed[2]!],
     },
   };
-}
-
-export function six(value: (direction: number) => number): Six {
-  return [value(0), value(1), value(2), value(3), value(4), value(5)];
 }
 
 function product(a: Float64Array, b: Float64Array): number {

@@ -1,10 +1,9 @@
 import type { FrameModel } from '../../frame/assembly/FrameModel.ts';
 import { SymmetricTriplets } from '../../frame/assembly/SymmetricTriplets.ts';
 import type { Vector3 } from '../../schemas/frameDocument.ts';
-import { attainableMass } from '../attainableMass.ts';
-import { rigidInertia } from '../massProperties.ts';
+import { attainableMassOf } from '../attainableMass.ts';
+import { rigidInertia, six } from '../massProperties.ts';
 import type { Six } from '../massProperties.ts';
-import { six } from '../summariseModes.ts';
 import type { DynamicSystem } from './DynamicSystem.ts';
 
 /**
@@ -35,7 +34,7 @@ export function continuousInertia(
       (direction) =>
         total[direction]! -
         atJoints.total[direction]! +
-        attainableMass(M0, atJoints.forces[direction]!),
+        attainableMassOf(M0, atJoints.forces[direction]!),
     ),
   };
 }

@@ -1,7 +1,7 @@
 import { combine } from '../../frame/freedoms/Combination.ts';
 import type { Combination, Terms } from '../../frame/freedoms/Combination.ts';
 import type { DividedPart, FrameModel } from '../../frame/assembly/FrameModel.ts';
-import { inModel } from '../../frame/assembly/buildModel.ts';
+import { inModel } from '../../frame/assembly/chains.ts';
 import { bendingInertia } from '../../frame/elements/beamProperties.ts';
 import type { DynamicElement } from '../../frame/elements/DynamicElement.ts';
 import { dynamicFlexure } from '../../frame/elements/dynamicFlexure.ts';

@@ -44,12 +44,11 @@ export function ritzBlock(
     return x;
   });
   const image = new Float64Array(n);
-  const scratch = new Float64Array(n);
   for (let step = 0; step < STEPS; step++) {
     for (const x of X) {
       multiplySymmetric(M, x, image);
       x.set(image);
-      solveLdlt(ldlt, x, scratch);
+      solveLdlt(ldlt, x);
       // K_D⁻¹ M has units of s²: kept near 1 so that no step overflows.
       const largest = x.reduce((most, value) => Math.max(most, Math.abs(value)), 0);
       if (!(largest > 0 && largest < Infinity)) return null;

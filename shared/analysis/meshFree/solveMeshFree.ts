@@ -2,10 +2,12 @@ import { assembleMatrices } from '../../frame/assembly/assembleMatrices.ts';
 import { buildModel } from '../../frame/assembly/buildModel.ts';
 import { divisionsOf } from '../../frame/assembly/divisions.ts';
 import type { MemberPart } from '../../frame/assembly/FrameModel.ts';
-import { dividePart } from '../../frame/assembly/memberParts.ts';
+import { partDivider } from '../../frame/assembly/memberParts.ts';
 import { displacements } from '../../frame/freedoms/Combination.ts';
 import { massNormalised, rigidMotions } from '../../frame/freedoms/rigidMotions.ts';
 import { backwardError } from '../../numerics/eigen/backwardError.ts';
+import { multiplySymmetric } from '../../numerics/sparse/SymmetricCsc.ts';
+import type { SymmetricCsc } from '../../numerics/sparse/SymmetricCsc.ts';
 import type { FrameDocument } from '../../schemas/frameDocument.ts';
 import { DEFAULT_SOLVE_SETTINGS } from '../../schemas/solveResult.ts';
 import type { ModelWarning, SolveSettings } from '../../schemas/solveResult.ts';
@@ -78,8 +80,9 @@ export function solveMeshFree(
   const returned = all
     .filter(({ lambda }) => upTo === undefined || lambda <= upTo * upTo)
     .slice(0, upTo === undefined ? most : undefined);
+  const divide = partDivider('consistent');
   const drawn = model.parts.map((part) =>
-    dividePart(part, divisionsOf(part, settings.divisions, settings.upToHz), 'consistent'),
+    divide(part, divisionsOf(part, settings.divisions, settings.upToHz)),
   );
   const shapes = meshFreeShapes(
     system,
@@ -135,7 +138,10 @@ function rigidModes(system: DynamicSystem, totalMass: number): Float64Array[] {
   const { model, pieces, n } = system;
   const { M } = assembleMatrices(model);
   const d = new Float64Array(2);
-  return massNormalised(rigidMotions(model), M, model, totalMass).map((motion) => {
+  const multiplyMass = (from: Float64Array, to: Float64Array) => {
+    multiplySymmetric(M, from, to);
+  };
+  return massNormalised(rigidMotions(model), multiplyMass, model, totalMass).map((motion) => {
     const x = new Float64Array(n);
     x.set(motion.x);
     for (const { element, motion: ends } of pieces) {
@@ -151,13 +157,20 @@ function rigidModes(system: DynamicSystem, totalMass: number): Float64Array[] {
 
 function detailsOf(system: DynamicSystem, modes: readonly FoundMode[]): ModeDetail[] {
   const { K: K0 } = system.stiffness(0);
-  const scratch = new Float64Array(4 * system.n);
+  const diagonalOf = (A: SymmetricCsc) =>
+    Float64Array.from({ length: A.n }, (_, j) => A.values[A.colPtr[j]!]!);
+  const diagonalK = diagonalOf(K0);
   return modes.map(({ lambda, x, participation, energies, halfWidth }) => {
     const { K } = system.stiffness(Math.sqrt(lambda));
     const values = K.values.map((value, i) =>
       lambda === 0 ? 0 : (K0.values[i]! - value) / lambda,
     );
-    const eta = backwardError(K0, { ...K0, values }, x, lambda, scratch);
+    const M = { ...K0, values };
+    const Kphi = new Float64Array(system.n);
+    const Mphi = new Float64Array(system.n);
+    multiplySymmetric(K0, x, Kphi);
+    multiplySymmetric(M, x, Mphi);
+    const eta = backwardError({ phi: x, Kphi, Mphi, lambda }, { K: diagonalK, M: diagonalOf(M) });
     const digits = Math.min(digitsOf(eta, system.n), -Math.log10(halfWidth));
     return { lambda, participation, energies, backwardError: eta, digits };
   });

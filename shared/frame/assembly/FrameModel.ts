@@ -28,9 +28,28 @@ export interface Segment {
   readonly motion: Combination;
 }
 
+/**
+ * Some neighbouring elements of one member: what lies between its ends is eliminated once for all chains
+ * of one make. A short member is one chain, a bar too; a long one several.
+ */
+export interface ModelChain {
+  readonly part: DividedPart;
+  /** Number of its first element, and how many it has. */
+  readonly from: number;
+  readonly elements: number;
+  /** Displacements of its ends in member axes over the joint unknowns: 12 of a beam, 6 of a bar. */
+  readonly ends: Combination;
+  /** First of its inner unknowns, which follow station by station. */
+  readonly inner: number;
+  /** Displacements in member axes (0–5) that each inner station has, ascending. */
+  readonly directions: readonly number[];
+}
+
 /** A member divided into equal elements. */
 export interface DividedPart extends MemberPart {
   readonly divisions: number;
+  /** Number that elements with the same matrices share. */
+  readonly make: number;
   /** Length of one element [m]. */
   readonly segmentLength: number;
   readonly rigidity: BeamRigidity;
@@ -79,18 +98,27 @@ export interface Hold {
 export interface FrameModel {
   readonly document: FrameDocument;
   readonly massKind: MassKind;
-  /** Number of free unknowns. */
+  /** Number of free unknowns: those of joints first, then those inside chains, make by make. */
   readonly free: number;
+  readonly joints: number;
+  /** joints: number of the node, joint or station inside a member that each belongs to. */
+  readonly blockOf: Int32Array;
+  /** Chains of one make, which differ in where they stand alone. */
+  readonly chains: readonly (readonly ModelChain[])[];
   /** [m], a power of two: group rotations are unknowns as length × angle, so that all are metres. */
   readonly scale: number;
   /** 6, global order: 1 where the displacement exists in this model. */
   readonly exists: Uint8Array;
   readonly parts: readonly DividedPart[];
+  /** Every element by itself, worked out when first asked for. */
   readonly segments: readonly Segment[];
   readonly ties: readonly Tie[];
   readonly bodies: readonly Body[];
+  /** Place of each node in `document.nodes`, by id. */
+  readonly nodeIndex: ReadonlyMap<string, number>;
   /** u v w rx ry rz of every node in global axes. */
   readonly nodes: readonly Combination[];
+  /** Of the joint unknowns. */
   readonly meanings: readonly UnknownMeaning[];
   readonly holds: readonly Hold[];
   /** Rigid group of each node, reference point and component of each group. */

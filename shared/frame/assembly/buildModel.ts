@@ -2,14 +2,15 @@ import { DISPLACEMENTS } from '../../schemas/frameDocument.ts';
 import type { Displacement, FrameDocument, Support, Vector3 } from '../../schemas/frameDocument.ts';
 import { rigidBodyMass } from '../elements/rigidBody.ts';
 import { combine } from '../freedoms/Combination.ts';
-import type { Terms } from '../freedoms/Combination.ts';
 import { GroupFreedoms } from '../freedoms/GroupFreedoms.ts';
 import type { GroupDisplacement } from '../freedoms/GroupFreedoms.ts';
 import { add, cross, dot, normalise, scale, subtract } from '../vector3.ts';
 import { carriedBy, carriersOf, GLOBAL_AXES } from './carriers.ts';
 import type { Carriers } from './carriers.ts';
 import { componentsOf } from './components.ts';
-import { dividePart, memberParts } from './memberParts.ts';
+import { inModel, isRotation, layChains, segmentsOf } from './chains.ts';
+import type { MemberEnd } from './chains.ts';
+import { memberParts, partDivider } from './memberParts.ts';
 import type {
   Body,
   DividedPart,
@@ -32,15 +33,6 @@ interface TieDraft extends Omit<Tie, 'motion'> {
   readonly sum: readonly { displacement: GroupDisplacement; factor: number }[];
 }
 
-/** One end of a member: its displacements in member axes, rigid or through a joint. */
-interface MemberEnd {
-  readonly rigid: readonly GroupDisplacement[];
-  /** Per displacement: undefined = rigid, 0 = free, else the joint's stiffness. */
-  readonly joint: readonly (number | undefined)[];
-}
-
-const isRotation = (displacement: number) => displacement >= 3;
-
 /**
  * The frame as elements over free unknowns (frame document page, "Element matrices" and "Axes, unknowns,
  * signs"). Rigid links, arms and offsets of masses are carried by exact small-displacement kinematics; a
@@ -51,9 +43,8 @@ export function buildModel(document: FrameDocument, options: ModelOptions): Fram
   const carriers = carriersOf(document);
   const exists = Uint8Array.from(DISPLACEMENTS, (d) => (document.unknowns.includes(d) ? 1 : 0));
   const freedoms = new GroupFreedoms(carriers.reference.length, exists);
-  const parts = memberParts(document).map((part) =>
-    dividePart(part, options.divisionsOf(part), options.massKind),
-  );
+  const divide = partDivider(options.massKind);
+  const parts = memberParts(document).map((part) => divide(part, options.divisionsOf(part)));
 
   const ends = parts.map((part) => [
     memberEnd(carriers, part, 'start', exists),
@@ -84,25 +75,31 @@ export function buildModel(document: FrameDocument, options: ModelOptions): Fram
       sum.flatMap(({ displacement, factor }) => freedoms.terms(displacement, factor)),
     ]),
   }));
-  const segments = parts.flatMap((part, i) =>
-    divide(part, ends[i]!, carriers, freedoms, exists, ties),
-  );
+  const { chains, joints, free } = layChains(parts, ends, carriers, freedoms, exists, ties);
   const bodies: Body[] = bodyDisplacements.map(({ at, displacements }, index) => ({
     index,
     at,
     motion: combine(displacements.map((displacement) => freedoms.terms(displacement))),
     mass: bodyMasses[index]!,
   }));
+  let segments: Segment[] | undefined;
   return {
     document,
     massKind: options.massKind,
-    free: freedoms.meanings.length,
+    free,
+    joints,
+    blockOf: Int32Array.from(freedoms.blockOf),
+    chains,
     scale: carriers.scale,
     exists,
     parts,
-    segments,
+    get segments() {
+      segments ??= segmentsOf(chains);
+      return segments;
+    },
     ties: ties.filter((tie) => tie.motion.dofs.length > 0),
     bodies,
+    nodeIndex: carriers.index,
     nodes: document.nodes.map((node) =>
       combine(carriedBy(carriers, node.id).map((displacement) => freedoms.terms(displacement))),
     ),
@@ -131,15 +128,6 @@ function memberEnd(
       inModel(directions, i, exists) ? joint?.[DISPLACEMENTS[i]!] : undefined,
     ),
   };
-}
-
-/** Whether displacement `i` along or about a member's axes exists in a model of a reduced set. */
-export function inModel(axes: readonly Vector3[], i: number, exists: Uint8Array): boolean {
-  const axis = axes[i % 3]!;
-  const offset = isRotation(i) ? 3 : 0;
-  const share = axis.reduce((sum, c, k) => sum + (exists[offset + k] ? c * c : 0), 0);
-  // `checkDocument` refuses axes that leave the set, so this is 0 or 1 up to rounding.
-  return share > 0.5;
 }
 
 function supportAxes({ axes }: Support): [Vector3, Vector3, Vector3] {
@@ -216,58 +204,4 @@ function useBody(
     }
     freedoms.use({ group: displacements[0]!.group, row });
   }
-}
-
-/** The elements of one member; stations inside it have unknowns of their own in member axes. */
-function divide(
-  part: DividedPart,
-  ends: readonly MemberEnd[],
-  carriers: Carriers,
-  freedoms: GroupFreedoms,
-  exists: Uint8Array,
-  ties: Tie[],
-): Segment[] {
-  const { member, axes, divisions } = part;
-  const directions = [axes.x, axes.y, axes.z] as const;
-  let station = endTerms(part, 'start', ends[0]!, freedoms, ties);
-  return Array.from({ length: divisions }, (_, number) => {
-    let next: Terms[];
-    if (number === divisions - 1) {
-      next = endTerms(part, 'end', ends[1]!, freedoms, ties);
-    } else {
-      const along = ((number + 1) / divisions) * axes.length;
-      const point = add(part.start, scale(axes.x, along));
-      const carried = carriedBy(carriers, member.start, [...directions], point);
-      next = carried.map((displacement, i) =>
-        inModel(directions, i, exists) ? [[freedoms.add(displacement), 1]] : [],
-      );
-    }
-    const segment = { part, number, motion: combine([...station, ...next]) };
-    station = next;
-    return segment;
-  });
-}
-
-function endTerms(
-  { member }: DividedPart,
-  which: 'start' | 'end',
-  { rigid, joint }: MemberEnd,
-  freedoms: GroupFreedoms,
-  ties: Tie[],
-): Terms[] {
-  return rigid.map((displacement, i) => {
-    const stiffness = joint[i];
-    if (stiffness === undefined) return freedoms.terms(displacement);
-    const own = freedoms.add(displacement);
-    if (stiffness > 0) {
-      ties.push({
-        owner: 'joint',
-        id: `${member.id} ${which}`,
-        motion: combine([[[own, 1], ...freedoms.terms(displacement, -1)]]),
-        stiffness,
-        turns: isRotation(i),
-      });
-    }
-    return [[own, 1]];
-  });
 }

@@ -55,23 +55,54 @@ export function memberParts(document: FrameDocument): MemberPart[] {
   });
 }
 
-/** The member divided into `divisions` equal elements; a bar is always one. */
-export function dividePart(part: MemberPart, divisions: number, massKind: MassKind): DividedPart {
-  const { member, properties, axes } = part;
+/** Significant digits to which two lengths are the same: what subtracting coordinates leaves. */
+const SAME_LENGTH_DIGITS = 13;
+
+/** Matrices of one element: what all members of one make share. */
+type ElementMatrices = Pick<DividedPart, 'make' | 'rigidity' | 'stiffness' | 'mass'>;
+
+/**
+ * Divides members into equal elements; a bar is always one. Elements of one section, material and length
+ * are worked out once and shared.
+ */
+export function partDivider(
+  massKind: MassKind,
+): (part: MemberPart, divisions: number) => DividedPart {
+  const makes = new Map<string, ElementMatrices>();
+  return (part, divisions) => {
+    const { member, properties, axes } = part;
+    const count = member.kind === 'bar' ? 1 : divisions;
+    const segmentLength = axes.length / count;
+    const key = [
+      member.kind,
+      segmentLength.toPrecision(SAME_LENGTH_DIGITS),
+      JSON.stringify(properties),
+    ].join(' ');
+    let matrices = makes.get(key);
+    if (matrices === undefined) {
+      matrices = elementMatrices(part, segmentLength, massKind, makes.size);
+      makes.set(key, matrices);
+    }
+    return { ...part, divisions: count, segmentLength, ...matrices };
+  };
+}
+
+function elementMatrices(
+  { member, properties }: MemberPart,
+  length: number,
+  massKind: MassKind,
+  make: number,
+): ElementMatrices {
+  const rigidity = beamRigidity(properties, length);
   const isBar = member.kind === 'bar';
-  const count = isBar ? 1 : divisions;
-  const segmentLength = axes.length / count;
-  const rigidity = beamRigidity(properties, segmentLength);
   const massOf = {
     bar: { consistent: barConsistentMass, lumped: barLumpedMass },
     beam: { consistent: beamConsistentMass, lumped: beamLumpedMass },
   }[member.kind][massKind];
   return {
-    ...part,
-    divisions: count,
-    segmentLength,
+    make,
     rigidity,
-    stiffness: isBar ? barStiffness(rigidity.axial) : beamStiffness(rigidity, segmentLength),
-    mass: massOf(properties, segmentLength),
+    stiffness: isBar ? barStiffness(rigidity.axial) : beamStiffness(rigidity, length),
+    mass: massOf(properties, length),
   };
 }

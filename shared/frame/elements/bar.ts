@@ -11,9 +11,8 @@ export function barStiffness(axial: number): Float64Array {
   return k;
 }
 
-/** Strain energy ½ (EA/L)(u₂ − u₁)² [J]; `axial` EA/L [N/m], d 6 in member axes [m]. */
-export function barStrainEnergy(axial: number, d: Float64Array): number {
-  const extension = d[3]! - d[0]!;
+/** Strain energy ½ (EA/L)(u₂ − u₁)² [J]; `axial` EA/L [N/m], extension u₂ − u₁ [m]. */
+export function barStrainEnergy(axial: number, extension: number): number {
   return 0.5 * axial * extension * extension;
 }
 

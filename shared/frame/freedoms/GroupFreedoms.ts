@@ -16,6 +16,9 @@ export type GroupDisplacement = Hold;
  */
 export class GroupFreedoms {
   readonly meanings: UnknownMeaning[] = [];
+  /** Number of the block of each: a group, or what was added since `beginBlock`. */
+  readonly blockOf: number[] = [];
+  #block = 0;
   readonly #fixed: Row[][];
   readonly #used: Row[][];
   #basis: Row[][] = [];
@@ -46,13 +49,21 @@ export class GroupFreedoms {
     });
     this.#first = this.#basis.map((basis, group) => {
       const first = this.meanings.length;
-      for (const row of basis) this.meanings.push({ group, row });
+      this.beginBlock();
+      for (const row of basis) this.add({ group, row });
       return first;
     });
   }
 
+  /** What is added from here on stands at another place than what was. */
+  beginBlock(): void {
+    const last = this.blockOf.at(-1);
+    this.#block = last === undefined ? 0 : last + 1;
+  }
+
   /** An unknown of its own that would move as `displacement` does if the group carried it rigidly. */
   add(displacement: GroupDisplacement): number {
+    this.blockOf.push(this.#block);
     return this.meanings.push(displacement) - 1;
   }
 

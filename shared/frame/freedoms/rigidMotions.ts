@@ -1,9 +1,7 @@
 import { AppError } from '../../errors/AppError.ts';
 import type { Vector3 } from '../../schemas/frameDocument.ts';
-import { multiplySymmetric } from '../../numerics/sparse/SymmetricCsc.ts';
-import type { SymmetricCsc } from '../../numerics/sparse/SymmetricCsc.ts';
-import type { FrameModel } from '../assembly/FrameModel.ts';
-import { add, cross, scale, subtract } from '../vector3.ts';
+import type { FrameModel, ModelChain } from '../assembly/FrameModel.ts';
+import { add, cross, dot, scale, subtract } from '../vector3.ts';
 import { complement, extendBasis, unitRow } from './rowSpace.ts';
 import type { Row } from './rowSpace.ts';
 
@@ -11,6 +9,9 @@ import type { Row } from './rowSpace.ts';
 const MASSLESS = 1e-20;
 /** Part of a rigid motion's mass outside the motions before it, under which it is one of their mixtures. */
 const DEPENDENT = 1e-10;
+
+/** y ← M x. */
+export type MultiplyMass = (x: Float64Array, y: Float64Array) => void;
 
 /** A rigid motion of one component over the free unknowns of a frame. */
 export interface RigidMotion {
@@ -68,10 +69,33 @@ export function rigidMotions(model: FrameModel): RigidMotion[] {
         x[i] = value;
         largest = Math.max(largest, Math.abs(value));
       }
+      for (const chain of model.chains.flat()) {
+        const group = model.groupOf[model.nodeIndex.get(chain.part.member.start)!]!;
+        if (componentOf[group] !== component) continue;
+        addInnerMotion(chain, g, centre[component]!, length, x);
+      }
       // A straight line of bars has no unknown that turns about the line.
       return largest > 1e-12 ? [{ component, x }] : [];
     });
   });
+}
+
+/** What the stations inside a chain do in a rigid motion about a centre. */
+function addInnerMotion(
+  { part, from, elements, inner, directions }: ModelChain,
+  g: Row,
+  centre: Vector3,
+  length: number,
+  x: Float64Array,
+): void {
+  const axes = [part.axes.x, part.axes.y, part.axes.z] as const;
+  const omega: Vector3 = [g[3]! / length, g[4]! / length, g[5]! / length];
+  let at = inner;
+  for (let station = from + 1; station < from + elements; station++) {
+    const point = add(part.start, scale(part.axes.x, station * part.segmentLength));
+    const t = add([g[0]!, g[1]!, g[2]!], cross(omega, subtract(point, centre)));
+    for (const d of directions) x[at++] = dot(axes[d % 3]!, d < 3 ? t : omega);
+  }
 }
 
 /** Middle of the groups of each component [m]. */
@@ -89,12 +113,12 @@ function componentCentres({ componentOf, components, reference }: FrameModel): V
 /**
  * The same motions made orthonormal in the mass, xᵀMx = 1, in their order: so the rotations of each component are about
  * its centre of mass.
- *   M  n×n, over the free unknowns [kg]
+ *   multiplyMass  y ← M x over the free unknowns [kg]
  * Throws AppError `mechanism` where a whole component can move without mass moving.
  */
 export function massNormalised(
   motions: readonly RigidMotion[],
-  M: SymmetricCsc,
+  multiplyMass: MultiplyMass,
   model: FrameModel,
   totalMass: number,
 ): RigidMotion[] {
@@ -102,7 +126,7 @@ export function massNormalised(
   for (const { component, x: given } of motions) {
     const x = given.slice();
     const Mx = new Float64Array(model.free);
-    const before = massOf(M, x, Mx);
+    const before = massOf(multiplyMass, x, Mx);
     for (let pass = 0; pass < 2; pass++) {
       for (const other of done) {
         if (other.component !== component) continue;
@@ -111,7 +135,7 @@ export function massNormalised(
         for (let i = 0; i < x.length; i++) x[i]! -= share * other.x[i]!;
       }
     }
-    const left = massOf(M, x, Mx);
+    const left = massOf(multiplyMass, x, Mx);
     const largest = given.reduce((most, value) => Math.max(most, Math.abs(value)), 0);
     if (before <= MASSLESS * totalMass * largest ** 2 || left <= DEPENDENT * before) {
       throw masslessComponent(model, component);
@@ -126,8 +150,8 @@ export function massNormalised(
   return done.map(({ component, x }) => ({ component, x }));
 }
 
-function massOf(M: SymmetricCsc, x: Float64Array, Mx: Float64Array): number {
-  multiplySymmetric(M, x, Mx);
+function massOf(multiplyMass: MultiplyMass, x: Float64Array, Mx: Float64Array): number {
+  multiplyMass(x, Mx);
   let mass = 0;
   for (let i = 0; i < x.length; i++) mass += x[i]! * Mx[i]!;
   return mass;

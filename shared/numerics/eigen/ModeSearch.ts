@@ -1,16 +1,11 @@
-import { factorise } from '../factor/factorise.ts';
-import type { Ldlt } from '../factor/Ldlt.ts';
-import type { SymbolicFactor } from '../factor/SymbolicFactor.ts';
+import type { ChainedPencil } from '../chains/ChainedPencil.ts';
 import { ZeroPivotError } from '../factor/ZeroPivotError.ts';
-import { multiplySymmetric, type SymmetricCsc } from '../sparse/SymmetricCsc.ts';
-import { withoutZeros } from '../sparse/withoutZeros.ts';
-import { bandLanczos, type RitzPairs } from './bandLanczos.ts';
 import { clearGap } from './clearGap.ts';
+import { lanczos } from './lanczos.ts';
+import { ModeSet } from './ModeSet.ts';
 import type { ModesOptions, ModesTiming } from './ModesResult.ts';
-import { OrthonormalSet } from './OrthonormalSet.ts';
-import { ritzVector } from './ritzVector.ts';
+import type { RitzPairs } from './RitzPairs.ts';
 import { shiftBelow } from './shiftBelow.ts';
-import { ShiftedPencil } from './ShiftedPencil.ts';
 
 /**
  * Residual norm, relative to θ, at which a Ritz pair counts as converged: the error of λ is its
@@ -25,54 +20,44 @@ const MOST_DIMENSION = 1000;
 /** Runs of the search and of the recovery; each that finds nothing makes the next one larger. */
 const MOST_RUNS = 60;
 const MOST_BARREN_RUNS = 3;
-const LEAST_BLOCK = 4;
-const MOST_BLOCK = 16;
 /** Where in a clear gap the shift is tried, should a pivot vanish by accident. */
 const GAP_SHARES = [0.5, 0.4, 0.6, 0.3];
 
-/** The state of one search: factor at the working shift, eigenpairs found so far, clock. */
+type IsEnough = (converged: number, theta: Float64Array, residual: Float64Array) => boolean;
+
+/** The state of one search: the pencil at some shift, eigenpairs found so far, clock. */
 export class ModeSearch {
   /** M-orthonormal eigenvectors found, the null vectors first, and their λ (not sorted). */
-  readonly modes: OrthonormalSet;
+  readonly modes: ModeSet;
   readonly lambda: number[] = [];
   readonly rigid: number;
   readonly timing: ModesTiming;
-  readonly random: Uint32Array;
   /** λ of the nearest eigenvalue beyond those found, roughly; null when not known. */
   next: number | null = null;
   /** Every finite eigenvalue has been found. */
   exhausted = false;
   stopped = false;
 
-  readonly #K: SymmetricCsc;
-  readonly #M: SymmetricCsc;
-  /** M again, lean, for products. */
-  readonly #mass: SymmetricCsc;
+  readonly #pencil: ChainedPencil;
   readonly #options: ModesOptions;
-  readonly #symbolic: SymbolicFactor;
   readonly #clock: () => number;
-  #ldlt: Ldlt | undefined;
-  #sigma: number | null = null;
+  readonly #random: Uint32Array;
+  #workingShift: number | null = null;
   #progress = 0;
 
-  constructor(
-    K: SymmetricCsc,
-    M: SymmetricCsc,
-    options: ModesOptions,
-    symbolic: SymbolicFactor,
-    timing: ModesTiming,
-  ) {
-    this.#K = K;
-    this.#M = M;
-    this.#mass = withoutZeros(M);
+  constructor(pencil: ChainedPencil, options: ModesOptions, timing: ModesTiming) {
+    this.#pencil = pencil;
     this.#options = options;
-    this.#symbolic = symbolic;
     this.#clock = options.clock ?? (() => 0);
     this.timing = timing;
-    this.random = Uint32Array.of((options.seed ^ 0x9e3779b9) >>> 0 || 1);
-    this.modes = new OrthonormalSet(this.#mass);
-    for (const motion of options.nullVectors ?? []) {
-      if (this.modes.add(motion.slice(), null) > 0) this.lambda.push(0);
+    this.#random = Uint32Array.of((options.seed ^ 0x9e3779b9) >>> 0 || 1);
+    this.modes = new ModeSet(pencil);
+    const motions = options.nullVectors ?? [];
+    this.modes.reserve(motions.length);
+    for (const motion of motions) {
+      const room = pencil.arena.view(this.modes.next, pencil.size).fill(0);
+      room.set(motion);
+      if (this.modes.add() > 0) this.lambda.push(0);
     }
     this.rigid = this.modes.count;
   }
@@ -95,7 +80,7 @@ export class ModeSearch {
     for (let run = 0; run < MOST_RUNS && barren < MOST_BARREN_RUNS; run++) {
       if (clearGap(this.ascending(), wanted, floor) >= 0) return;
       const missing = Math.max(1, wanted + 1 - this.modes.count);
-      const isEnough = (c: number, theta: Float64Array, residual: Float64Array) => {
+      const isEnough: IsEnough = (c, theta, residual) => {
         const lambda = [...this.lambda];
         for (let i = 0; i < c; i++) lambda.push(this.#lambdaOf(theta[i]!));
         if (c < theta.length && residual[c]! <= NEIGHBOUR_TOL * theta[c]!) {
@@ -104,19 +89,21 @@ export class ModeSearch {
         this.#report(Math.min(this.lambda.length + c, wanted) / (wanted + 1));
         return clearGap(Float64Array.from(lambda).sort(), wanted, floor) >= 0;
       };
-      const found = this.#run(1, missing, barren, isEnough, Infinity);
+      const found = this.#run(missing, barren, isEnough, Infinity);
       if (this.exhausted || this.stopped) return;
       barren = found === 0 ? barren + 1 : 0;
     }
   }
 
-  /** Modes below `sigma` that a search with one start vector left out. True if all were found. */
+  /**
+   * Modes below `sigma` that the search left out: of an eigenvalue, one start vector sees one eigenvector. Each
+   * run outside those found brings one more of every eigenvalue. True if all were found.
+   */
   recover(missing: number, sigma: number): boolean {
     let left = missing;
     let barren = 0;
-    let block = Math.min(Math.max(LEAST_BLOCK, missing), MOST_BLOCK);
     for (let run = 0; run < MOST_RUNS && barren < MOST_BARREN_RUNS; run++) {
-      const isEnough = (c: number, theta: Float64Array, residual: Float64Array) => {
+      const isEnough: IsEnough = (c, theta, residual) => {
         let below = 0;
         while (below < c && this.#lambdaOf(theta[below]!) < sigma) below += 1;
         if (below >= left) return true;
@@ -126,12 +113,11 @@ export class ModeSearch {
           residual[below]! <= NEIGHBOUR_TOL * theta[below]!
         );
       };
-      const found = this.#run(block, left, barren, isEnough, sigma);
+      const found = this.#run(left, barren, isEnough, sigma);
       left -= found;
       if (left <= 0) return left === 0;
       if (this.exhausted || this.stopped) return false;
       barren = found === 0 ? barren + 1 : 0;
-      if (found === 0) block = Math.min(2 * block, MOST_BLOCK);
     }
     return false;
   }
@@ -153,12 +139,8 @@ export class ModeSearch {
   /** Number of eigenvalues below sigma; null where K − sigma·M is singular within rounding. */
   inertia(sigma: number): number | null {
     const begin = this.#clock();
-    const storage = this.#ldlt;
-    this.#ldlt = undefined;
-    this.#sigma = null;
     try {
-      this.#ldlt = factorise(this.#symbolic, this.#K, this.#M, sigma, storage);
-      return this.#ldlt.negativePivots;
+      return this.#pencil.factorise(sigma);
     } catch (error) {
       if (!(error instanceof ZeroPivotError)) throw error;
       return null;
@@ -167,100 +149,101 @@ export class ModeSearch {
     }
   }
 
-  /** The working shift; factors K − σM there unless that is done. */
-  pencil(): ShiftedPencil {
+  /** Factors the pencil at the working shift unless it is. Returns that shift. */
+  toWorkingShift(): number {
     const begin = this.#clock();
-    if (this.#ldlt === undefined || this.#sigma === null) {
-      this.#ldlt = this.#factorAtWorkingShift(this.#ldlt);
-      this.#sigma = this.#ldlt.sigma;
-    }
+    if (this.#workingShift === null) this.#workingShift = this.#chooseShift();
+    else if (this.#pencil.sigma !== this.#workingShift) this.#pencil.factorise(this.#workingShift);
     this.timing.factor += this.#clock() - begin;
-    return new ShiftedPencil(this.#mass, this.#ldlt);
+    return this.#workingShift;
   }
 
-  get negativePivots(): number {
-    return this.#ldlt?.negativePivots ?? 0;
-  }
-
-  #workingShift: number | null = null;
-
-  #factorAtWorkingShift(storage: Ldlt | undefined): Ldlt {
-    const symbolic = this.#symbolic;
-    if (this.#workingShift === null) {
-      if (this.rigid === 0) {
-        const ldlt = factorise(symbolic, this.#K, null, 0, storage);
-        // K is semidefinite: a negative pivot is a motion whose stiffness rounding has eaten.
-        if (ldlt.negativePivots === 0) {
-          this.#workingShift = 0;
-          return ldlt;
-        }
-      }
-      const ldlt = shiftBelow(symbolic, this.#K, this.#M, this.modes, this.random);
-      this.#workingShift = ldlt.sigma;
-      return ldlt;
+  #chooseShift(): number {
+    if (this.rigid === 0) {
+      // K is semidefinite: a negative pivot is a motion whose stiffness rounding has eaten.
+      const factored = this.#pencil.sigma === 0 ? this.#pencil.negativePivots : undefined;
+      if ((factored ?? this.#pencil.factorise(0)) === 0) return 0;
     }
-    return factorise(symbolic, this.#K, this.#M, this.#workingShift, storage);
+    shiftBelow(this.#pencil, this.modes, this.#random);
+    return this.#pencil.sigma;
   }
 
   /** One Krylov space; keeps its converged pairs below `limit`. Returns how many are new. */
-  #run(
-    block: number,
-    missing: number,
-    barren: number,
-    isEnough: (converged: number, theta: Float64Array, residual: Float64Array) => boolean,
-    limit: number,
-  ): number {
-    const pencil = this.pencil();
-    const shouldStop = this.#options.shouldStop ?? (() => false);
+  #run(missing: number, barren: number, isEnough: IsEnough, limit: number): number {
+    this.toWorkingShift();
+    const { arena } = this.#pencil;
+    const used = arena.used;
     const begin = this.#clock();
-    const pairs = bandLanczos(pencil, this.modes, this.random, {
-      block,
-      firstCheck: 2 * missing + 4 + 4 * block,
+    const settings = {
+      firstCheck: 2 * missing + 8,
       maxDimension: Math.min(
         MOST_DIMENSION,
-        2 ** barren * Math.max(LEAST_DIMENSION, 3 * missing + 12 * block),
+        2 ** barren * Math.max(LEAST_DIMENSION, 3 * missing + 12),
       ),
-      accept: (theta, residual) => isEnough(convergedPairs(theta, residual), theta, residual),
-      shouldStop,
-    });
+      accept: (theta: Float64Array, residual: Float64Array) =>
+        isEnough(convergedPairs(theta, residual), theta, residual),
+      shouldStop: this.#options.shouldStop ?? (() => false),
+    };
+    // Room for the modes first, so that the space behind it can be given up.
+    this.modes.reserve(settings.maxDimension);
+    const kept = arena.used;
+    const pairs = lanczos(this.#pencil, this.modes, this.#random, settings);
     this.timing.iterate += this.#clock() - begin;
     this.next = null;
+    let count = 0;
     if (pairs === null) {
       this.exhausted = true;
-      return 0;
+    } else {
+      this.stopped = pairs.stopped;
+      count = this.#keep(pairs, limit);
     }
-    this.stopped = pairs.stopped;
-    return this.#keep(pencil, pairs, limit);
+    arena.rewind(kept > used ? kept : used);
+    return count;
   }
 
-  #keep(pencil: ShiftedPencil, pairs: RitzPairs, limit: number): number {
+  #keep(pairs: RitzPairs, limit: number): number {
     const begin = this.#clock();
-    const theta = pairs.eigen.values;
-    const converged = convergedPairs(theta, pairs.residual);
-    const n = pencil.n;
-    const y = new Float64Array(n);
-    const image = new Float64Array(n);
+    const { theta, residual } = pairs;
+    const converged = convergedPairs(theta, residual);
+    const wanted: number[] = [];
+    for (let i = 0; i < converged && this.#lambdaOf(theta[i]!) < limit; i++) wanted.push(i);
+    const candidates = this.#ritzVectors(pairs, wanted);
+    const { arena, size } = this.#pencil;
     let count = 0;
-    for (let i = 0; i < converged; i++) {
-      const lambda = this.#lambdaOf(theta[i]!);
-      if (lambda >= limit) break;
-      ritzVector(pairs, i, y);
-      // One step of A takes out what an M that is singular lets in (Ericsson and Ruhe 1980,
-      // section 4: purification) and shrinks the higher modes in y.
-      multiplySymmetric(this.#mass, y, image);
-      const pure = new Float64Array(n);
-      pencil.apply(image, pure);
-      if (this.modes.add(pure, null) === 0) continue;
-      this.lambda.push(lambda);
+    wanted.forEach((i, c) => {
+      arena.view(this.modes.next, size).set(arena.view(candidates + 8 * size * c, size));
+      if (this.modes.add() === 0) return;
+      this.lambda.push(this.#lambdaOf(theta[i]!));
       count += 1;
-    }
+    });
     if (!pairs.invariant && converged < theta.length) {
-      if (pairs.residual[converged]! <= NEIGHBOUR_TOL * theta[converged]!) {
+      if (residual[converged]! <= NEIGHBOUR_TOL * theta[converged]!) {
         this.next = this.#lambdaOf(theta[converged]!);
       }
     }
     this.timing.finish += this.#clock() - begin;
     return count;
+  }
+
+  /** Address of the Ritz vectors, purified, one after the other. */
+  #ritzVectors(pairs: RitzPairs, wanted: readonly number[]): number {
+    const { arena, size } = this.#pencil;
+    const { kernels } = arena;
+    const m = pairs.dimension + pairs.beyond;
+    const address = arena.numbers(wanted.length * size);
+    const coefficients = wanted.map((index) =>
+      arena.place(pairs.coordinates(index).map((value) => -value)),
+    );
+    arena.view(address, wanted.length * size).fill(0);
+    // By stretches that the basis fills a cache with, all vectors from each.
+    for (let from = 0; from < size; from += STRETCH) {
+      const length = Math.min(STRETCH, size - from);
+      coefficients.forEach((c, i) => {
+        const y = address + 8 * (i * size + from);
+        kernels.subtractCombination(length, pairs.basis + 8 * from, 8 * size, m, c, y);
+      });
+    }
+    return address;
   }
 
   #lambdaOf(theta: number): number {
@@ -279,6 +262,8 @@ export class ModeSearch {
     this.#options.onProgress?.(fraction);
   }
 }
+
+const STRETCH = 512;
 
 /** Number of leading pairs that have converged. */
 function convergedPairs(theta: Float64Array, residual: Float64Array): number {

@@ -1,5 +1,3 @@
-import type { SymbolicFactor } from '../factor/SymbolicFactor.ts';
-
 /** What to look for in K φ = λ M φ, and the caller's clock, seed and hooks. */
 export interface ModesOptions {
   /** Return the `count` lowest modes. Exactly one of `count` and `upToLambda` is given. */
@@ -17,15 +15,13 @@ export interface ModesOptions {
   shouldStop?: () => boolean;
   /** 0 … 1, never falling. */
   onProgress?: (fraction: number) => void;
-  /** From `analyse(K, M)`; made here when absent. */
-  symbolic?: SymbolicFactor;
   /** Milliseconds; timings are 0 without it. */
   clock?: () => number;
   /**
-   * λ of a shape with φᵀMφ = 1 [rad²/s²], for a caller that can do better than φᵀKφ (element
+   * λ of a shape with φᵀMφ = 1 [rad²/s²], given by its address, for a caller that can do better than φᵀKφ (element
    * strain energies lose no digits where stiff members ride along with soft ones).
    */
-  refineLambda?: (phi: Float64Array) => number;
+  refineLambda?: (phi: number) => number;
 }
 
 export interface ModesTiming {
@@ -42,6 +38,8 @@ export interface ModesResult {
   lambda: Float64Array;
   /** Shapes, n each, φᵀMφ = 1, orthogonal in M. */
   phi: Float64Array[];
+  /** The same in the pencil's arena while that lasts, and their images M φ. */
+  addresses: { readonly vector: number; readonly image: number }[];
   /** Shift of the count check, in a clear gap above the returned modes [rad²/s²]. */
   sigma: number;
   /** Negative pivots of K − sigma·M: the number of eigenvalues below sigma. */

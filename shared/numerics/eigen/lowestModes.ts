@@ -1,5 +1,8 @@
-import { analyse } from '../factor/analyse.ts';
-import { multiplySymmetric, type SymmetricCsc } from '../sparse/SymmetricCsc.ts';
+import { analyseChains } from '../chains/analyseChains.ts';
+import { ChainedPencil } from '../chains/ChainedPencil.ts';
+import { unchained } from '../chains/ChainedPair.ts';
+import { withArena } from '../kernels/Arena.ts';
+import type { SymmetricCsc } from '../sparse/SymmetricCsc.ts';
 import { clearGap } from './clearGap.ts';
 import { ModeSearch } from './ModeSearch.ts';
 import type { ModesOptions, ModesResult, ModesTiming } from './ModesResult.ts';
@@ -14,8 +17,8 @@ const MOST_LOWERINGS = 4;
  *   options  how many or up to which λ [rad²/s²], null vectors of K, seed, hooks
  * All modes up to the first clear gap above the wanted ones are found by shift-invert Lanczos; the
  * negative pivots of K − σM at a σ in that gap count the eigenvalues below it (Sylvester). Where
- * the count says that some are missing (several equal frames in one), they are looked for with
- * wider blocks, orthogonal to those found. A run that cannot find them, or is stopped, returns what
+ * the count says that some are missing (several equal frames in one), they are looked for outside the
+ * space of those found. A run that cannot find them, or is stopped, returns what
  * it has with complete = false.
  * Throws ZeroPivotError when K has a null vector that is not among `nullVectors` (its `motion` is
  * that vector) or K and M have one in common; RangeError for impossible options.
@@ -23,28 +26,31 @@ const MOST_LOWERINGS = 4;
  * Matrix Anal. Appl. 15(1), 228–272; Bathe, Finite Element Procedures, section 11.3 (Sturm check).
  */
 export function lowestModes(K: SymmetricCsc, M: SymmetricCsc, options: ModesOptions): ModesResult {
-  const { count, upToLambda, clock } = options;
-  if ((count === undefined) === (upToLambda === undefined)) {
-    throw new RangeError('Give either count or upToLambda.');
-  }
-  if (count !== undefined && !(Number.isInteger(count) && count >= 1)) {
-    throw new RangeError(`count must be a whole number from 1, not ${count}.`);
-  }
-  if (upToLambda !== undefined && !(upToLambda >= 0 && upToLambda < Infinity)) {
-    throw new RangeError(`upToLambda must be a finite number from 0, not ${upToLambda}.`);
-  }
-  const symbolic = options.symbolic ?? analyse(K, M, clock);
+  checkOptions(options);
+  const pair = unchained(K, M);
+  return withArena((arena) => {
+    const analysis = analyseChains(pair, options.clock);
+    const result = findModes(new ChainedPencil(arena, pair, analysis), options);
+    const { order, symbolic } = analysis.symbolic.timing;
+    return { ...result, timing: { ...result.timing, order, symbolic } };
+  });
+}
+
+/** The same for a pencil that is there, factored at 0 or not at all; order and analysis are not timed. */
+export function findModes(pencil: ChainedPencil, options: ModesOptions): ModesResult {
+  checkOptions(options);
+  const { count, upToLambda } = options;
   const timing: ModesTiming = {
-    order: options.symbolic ? 0 : symbolic.timing.order,
-    symbolic: options.symbolic ? 0 : symbolic.timing.symbolic,
+    order: 0,
+    symbolic: 0,
     factor: 0,
     iterate: 0,
     finish: 0,
     certify: 0,
   };
-  const search = new ModeSearch(K, M, options, symbolic, timing);
+  const search = new ModeSearch(pencil, options, timing);
   const floor = upToLambda ?? -Infinity;
-  let wanted = Math.min(count ?? 0, K.n);
+  let wanted = Math.min(count ?? 0, pencil.n);
   if (upToLambda !== undefined) {
     // How many there are is known before any is found; an eigenvalue at the limit itself is settled
     // by the gap above it.
@@ -52,8 +58,8 @@ export function lowestModes(K: SymmetricCsc, M: SymmetricCsc, options: ModesOpti
   }
   search.findLowest(wanted, floor);
 
-  let sigma = search.pencil().sigma;
-  let below = search.negativePivots;
+  let sigma = search.toWorkingShift();
+  let below = pencil.negativePivots;
   let certain = false;
   if (!search.stopped) {
     const lambda = search.ascending();
@@ -69,7 +75,7 @@ export function lowestModes(K: SymmetricCsc, M: SymmetricCsc, options: ModesOpti
       certain = missing === 0 || (missing > 0 && search.recover(missing, sigma));
     }
   }
-  return finish(K, search, options, wanted, { sigma, below, certain });
+  return finish(pencil, search, options, wanted, { sigma, below, certain });
 }
 
 /**
@@ -104,9 +110,21 @@ function lower(
   return best;
 }
 
+function checkOptions({ count, upToLambda }: ModesOptions): void {
+  if ((count === undefined) === (upToLambda === undefined)) {
+    throw new RangeError('Give either count or upToLambda.');
+  }
+  if (count !== undefined && !(Number.isInteger(count) && count >= 1)) {
+    throw new RangeError(`count must be a whole number from 1, not ${count}.`);
+  }
+  if (upToLambda !== undefined && !(upToLambda >= 0 && upToLambda < Infinity)) {
+    throw new RangeError(`upToLambda must be a finite number from 0, not ${upToLambda}.`);
+  }
+}
+
 /** Rayleigh quotients, order, and the modes asked for. */
 function finish(
-  K: SymmetricCsc,
+  pencil: ChainedPencil,
   search: ModeSearch,
   options: ModesOptions,
   wanted: number,
@@ -115,15 +133,14 @@ function finish(
   const clock = options.clock ?? (() => 0);
   const begin = clock();
   const { modes, timing } = search;
-  const Kphi = new Float64Array(K.n);
+  const { arena, size } = pencil;
+  const image = arena.numbers(size);
   const quotient = new Float64Array(modes.count);
   for (let r = search.rigid; r < modes.count; r++) {
-    const phi = modes.vectors[r]!;
+    const phi = modes.vectors + r * modes.stride;
     if (options.refineLambda === undefined) {
-      multiplySymmetric(K, phi, Kphi);
-      let sum = 0;
-      for (let i = 0; i < K.n; i++) sum += phi[i]! * Kphi[i]!;
-      quotient[r] = sum;
+      pencil.multiplyStiffness(phi, image);
+      quotient[r] = arena.kernels.dot(size, phi, image);
     } else {
       quotient[r] = options.refineLambda(phi);
     }
@@ -142,7 +159,11 @@ function finish(
   options.onProgress?.(1);
   return {
     lambda: Float64Array.from(returned, (r) => quotient[r]!),
-    phi: returned.map((r) => modes.vectors[r]!),
+    phi: returned.map((r) => modes.vector(r)),
+    addresses: returned.map((r) => ({
+      vector: modes.vectors + r * modes.stride,
+      image: modes.images + r * modes.stride,
+    })),
     sigma: check.sigma,
     below: check.below,
     found,

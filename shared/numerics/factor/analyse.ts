@@ -8,14 +8,14 @@ import { adjacencyGraph } from '../sparse/adjacencyGraph.ts';
 import type { SymmetricPattern } from '../sparse/SymmetricCsc.ts';
 import type { SymbolicFactor } from './SymbolicFactor.ts';
 
-/** Offsets into L are 32-bit, and this many values are 16 GB already. */
-const MAX_VALUES = 2 ** 31 - 1;
+/** Values of L that the solver's 2 GiB of memory can hold. */
+const MAX_VALUES = 2 ** 28;
 
 /**
  * Symbolic factorisation of K − σM for any σ: order, supernodes, rows of L, assembly tree.
  *   K, M   patterns, n×n; M null where only K will be factorised
  *   clock  milliseconds, for the timing kept in the result
- * Throws RangeError when the orders differ.
+ * Throws RangeError when the orders differ, or L would not fit into the memory there is.
  * Source: Duff and Reid 1983, The multifrontal solution of indefinite sparse symmetric linear
  * systems, ACM Trans. Math. Softw. 9(3), 302–325; Liu 1990 for trees and supernodes.
  */
@@ -25,7 +25,18 @@ export function analyse(
   clock: () => number = () => 0,
 ): SymbolicFactor {
   const begin = clock();
-  const graph = compressGraph(adjacencyGraph(K, M));
+  return analyseGraph(compressGraph(adjacencyGraph(K, M)), clock, begin);
+}
+
+/**
+ * The same from the graph between groups of unknowns that are eliminated together.
+ *   begin  by the caller's clock: when the making of the graph began
+ */
+export function analyseGraph(
+  graph: CompressedGraph,
+  clock: () => number,
+  begin: number,
+): SymbolicFactor {
   const minimumDegree = approximateMinimumDegree(graph, graph.weight);
   const ordered = clock();
 
@@ -56,6 +67,8 @@ function inverse(permutation: Int32Array): Int32Array {
   return result;
 }
 
+const toTiles = (count: number) => (count + 3) & ~3;
+
 /** From groups to unknowns: places, rows of each supernode, indices in the parent's front. */
 function expand(
   graph: CompressedGraph,
@@ -75,39 +88,55 @@ function expand(
   for (let k = 0; k < groups; k++) sequence[next[nodes.of[k]!]!++] = order[k]!;
   const groupPlace = inverse(sequence);
 
-  const perm = new Int32Array(n);
-  const groupFirst = new Int32Array(groups + 1);
-  for (let g = 0, at = 0; g < groups; g++) {
-    const v = sequence[g]!;
-    for (let p = graph.memberPtr[v]!; p < graph.memberPtr[v + 1]!; p++) {
-      perm[at++] = graph.member[p]!;
-    }
-    groupFirst[g + 1] = at;
-  }
+  const place = new Int32Array(n);
+  const groupFirst = new Int32Array(groups);
   const first = new Int32Array(count + 1);
-  for (let s = 0; s <= count; s++) first[s] = groupFirst[groupPtr[s]!]!;
+  for (let s = 0, at = 0; s < count; s++) {
+    for (let g = groupPtr[s]!; g < groupPtr[s + 1]!; g++) {
+      const v = sequence[g]!;
+      groupFirst[g] = at;
+      for (let p = graph.memberPtr[v]!; p < graph.memberPtr[v + 1]!; p++) {
+        place[graph.member[p]!] = at++;
+      }
+    }
+    at = toTiles(at);
+    first[s + 1] = at;
+  }
+  const places = first[count]!;
+  const perm = new Int32Array(places).fill(-1);
+  for (let i = 0; i < n; i++) perm[place[i]!] = i;
+  const supernodeOf = new Int32Array(places);
+  for (let s = 0; s < count; s++) supernodeOf.fill(s, first[s], first[s + 1]);
 
   const { structPtr, struct } = structures(graph, sequence, groupPlace, groupPtr, nodes.parent);
+  const weightAt = (g: number) => graph.weight[sequence[g]!]!;
 
   const rowPtr = new Int32Array(count + 1);
+  const rowCount = new Int32Array(count);
   const panelPtr = new Int32Array(count + 1);
   let maxColumns = 0;
+  let operations = 0;
   for (let s = 0; s < count; s++) {
     let rows = 0;
-    for (let p = structPtr[s]!; p < structPtr[s + 1]!; p++) {
-      rows += groupFirst[struct[p]! + 1]! - groupFirst[struct[p]!]!;
-    }
+    for (let p = structPtr[s]!; p < structPtr[s + 1]!; p++) rows += weightAt(struct[p]!);
+    let unknowns = 0;
+    for (let g = groupPtr[s]!; g < groupPtr[s + 1]!; g++) unknowns += weightAt(g);
+    for (let k = 1; k <= unknowns; k++) operations += (rows + k) ** 2;
     const columns = first[s + 1]! - first[s]!;
-    rowPtr[s + 1] = rowPtr[s]! + rows;
-    const end = panelPtr[s]! + columns * (columns + rows);
-    if (end > MAX_VALUES) throw new RangeError(`L would need more than ${MAX_VALUES} values.`);
+    rowCount[s] = rows;
+    rowPtr[s + 1] = rowPtr[s]! + toTiles(rows);
+    const end = panelPtr[s]! + columns * (columns + toTiles(rows));
+    if (end > MAX_VALUES) throw new RangeError('The factor needs more than 2 GiB of memory.');
     panelPtr[s + 1] = end;
     if (columns > maxColumns) maxColumns = columns;
   }
-  const rows = new Int32Array(rowPtr[count]!);
-  for (let s = 0, at = 0; s < count; s++) {
+  const rows = new Int32Array(rowPtr[count]!).fill(places);
+  for (let s = 0; s < count; s++) {
+    let at = rowPtr[s]!;
     for (let p = structPtr[s]!; p < structPtr[s + 1]!; p++) {
-      for (let i = groupFirst[struct[p]!]!; i < groupFirst[struct[p]! + 1]!; i++) rows[at++] = i;
+      const g = struct[p]!;
+      const end = groupFirst[g]! + weightAt(g);
+      for (let i = groupFirst[g]!; i < end; i++) rows[at++] = i;
     }
   }
 
@@ -116,8 +145,7 @@ function expand(
   let stack = 0;
   let stackSize = 0;
   for (let s = 0; s < count; s++) {
-    const size = rowPtr[s + 1]! - rowPtr[s]!;
-    const update = (size * (size + 1)) / 2;
+    const update = squareSize(toTiles(rowCount[s]!));
     stackSize = Math.max(stackSize, stack + update);
     stack += update - occupied[s]!;
     const p = nodes.parent[s]!;
@@ -125,7 +153,7 @@ function expand(
     occupied[p]! += update;
     const columns = first[p + 1]! - first[p]!;
     let q = rowPtr[p]!;
-    for (let r = rowPtr[s]!; r < rowPtr[s + 1]!; r++) {
+    for (let r = rowPtr[s]!; r < rowPtr[s]! + rowCount[s]!; r++) {
       const i = rows[r]!;
       if (i < first[p + 1]!) {
         relative[r] = i - first[p]!;
@@ -137,19 +165,28 @@ function expand(
   }
   return {
     n,
+    places,
     perm,
-    place: inverse(perm),
+    place,
     supernodes: count,
+    supernodeOf,
     first,
     parent: nodes.parent,
     rowPtr,
+    rowCount,
     rows,
     relative,
     panelPtr,
     stackSize,
     maxColumns,
-    destinations: new WeakMap(),
+    operations,
   };
+}
+
+/** Values in the lower triangle of 4 × 4 blocks of a square of `rows` rows, a multiple of four. */
+export function squareSize(rows: number): number {
+  const tiles = rows >> 2;
+  return 8 * tiles * (tiles + 1);
 }
 
 /** Groups in the rows below each supernode: its own neighbours and its children's rows, united. */

@@ -20,29 +20,35 @@ export function adjacencyGraph(K: SymmetricPattern, M: SymmetricPattern | null):
     throw new RangeError(`K has order ${n} but M has order ${M.n}.`);
   }
   const patterns = M === null || M.rowIdx === K.rowIdx ? [K] : [K, M];
-  const count = new Int32Array(n + 1);
+  const edges = new Int32Array(2 * patterns.reduce((sum, { colPtr }) => sum + colPtr[n]!, 0));
+  let write = 0;
   for (const { colPtr, rowIdx } of patterns) {
     for (let j = 0; j < n; j++) {
       for (let p = colPtr[j]!; p < colPtr[j + 1]!; p++) {
-        const i = rowIdx[p]!;
-        if (i === j) continue;
-        count[i + 1]! += 1;
-        count[j + 1]! += 1;
+        if (rowIdx[p] === j) continue;
+        edges[write++] = rowIdx[p]!;
+        edges[write++] = j;
       }
     }
   }
+  return graphOfEdges(n, edges.subarray(0, write));
+}
+
+/**
+ * Graph of n vertices from pairs of them, one edge each; an edge may be given several times, in either
+ * direction, and joins different vertices.
+ */
+export function graphOfEdges(n: number, edges: Int32Array): AdjacencyGraph {
+  const count = new Int32Array(n + 1);
+  for (const vertex of edges) count[vertex + 1]! += 1;
   for (let i = 0; i < n; i++) count[i + 1]! += count[i]!;
-  const loose = new Int32Array(count[n]!);
+  const loose = new Int32Array(edges.length);
   const next = count.slice(0, n);
-  for (const { colPtr, rowIdx } of patterns) {
-    for (let j = 0; j < n; j++) {
-      for (let p = colPtr[j]!; p < colPtr[j + 1]!; p++) {
-        const i = rowIdx[p]!;
-        if (i === j) continue;
-        loose[next[i]!++] = j;
-        loose[next[j]!++] = i;
-      }
-    }
+  for (let e = 0; e < edges.length; e += 2) {
+    const i = edges[e]!;
+    const j = edges[e + 1]!;
+    loose[next[i]!++] = j;
+    loose[next[j]!++] = i;
   }
   // Transposing a symmetric list sorts it: vertex v is appended to its neighbours in order of v.
   const adjacent = new Int32Array(loose.length);

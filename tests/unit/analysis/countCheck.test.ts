@@ -9,8 +9,8 @@ vi.mock('#shared/numerics/eigen/lowestModes.ts', async (load) => {
   const real = await load<typeof eigen>();
   return {
     ...real,
-    lowestModes: (...given: Parameters<typeof real.lowestModes>) => {
-      const found = real.lowestModes(...given);
+    findModes: (...given: Parameters<typeof real.findModes>) => {
+      const found = real.findModes(...given);
       return { ...found, below: found.found + 1, complete: false };
     },
   };

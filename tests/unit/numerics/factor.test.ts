@@ -102,8 +102,12 @@ describe('factorise and solveLdlt', () => {
     const symbolic = analyse(K, M);
     const fresh = factorise(symbolic, K, M, 5e4);
     const again = factorise(symbolic, K, M, 5e4, factorise(symbolic, K, M, 1e3));
-    expect(again.pivots).toEqual(fresh.pivots);
-    expect(again.values).toEqual(fresh.values);
+    expect(again.negativePivots).toBe(fresh.negativePivots);
+    const x = Float64Array.from({ length: K.n }, (_, i) => Math.cos(i));
+    const y = x.slice();
+    solveLdlt(fresh, x);
+    solveLdlt(again, y);
+    expect(y).toEqual(x);
   });
 
   it('take a mass where the stiffness has no entry', () => {
