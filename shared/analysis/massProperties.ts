@@ -116,28 +116,27 @@ export function chainInertia(model: FrameModel, centre: Vector3): RigidInertia {
   const total: Six = [0, 0, 0, 0, 0, 0];
   const forces = total.map(() => new Float64Array(model.free));
   const directions = [0, 1, 2, 3, 4, 5].filter((direction) => model.exists[direction]);
+  const a = new Float64Array(36);
   for (const chains of model.chains) {
     const { n, MR, RMR, inner } = rigidMakeOf(chains[0]!);
+    const end = new Float64Array(n - inner);
     for (const chain of chains) {
-      const { part, ends } = chain;
-      const { x, y, z } = part.axes;
-      const origin = add(part.start, scale(x, chain.from * part.segmentLength));
-      const end = new Float64Array(ends.rows);
+      rigidParameters(chain, centre, a);
       for (const direction of directions) {
-        const [t, omega] = rigidMotionAt(direction, origin, centre);
-        const a = [x, y, z].map((axis) => dot(axis, t));
-        a.push(...[x, y, z].map((axis) => dot(axis, omega)));
         const b = forces[direction]!;
+        const from = 6 * direction;
         for (let i = 0; i < n; i++) {
           let force = 0;
-          for (let k = 0; k < 6; k++) force += MR[i * 6 + k]! * a[k]!;
+          for (let k = 0; k < 6; k++) force += MR[i * 6 + k]! * a[from + k]!;
           if (i < inner) b[chain.inner + i]! += force;
           else end[i - inner] = force;
         }
-        addForces(ends, end, b);
+        addForces(chain.ends, end, b);
+        let sum = 0;
         for (let k = 0; k < 6; k++) {
-          for (let l = 0; l < 6; l++) total[direction]! += a[k]! * RMR[k * 6 + l]! * a[l]!;
+          for (let l = 0; l < 6; l++) sum += a[from + k]! * RMR[k * 6 + l]! * a[from + l]!;
         }
+        total[direction]! += sum;
       }
     }
   }
@@ -148,6 +147,26 @@ export function chainInertia(model: FrameModel, centre: Vector3): RigidInertia {
     }
   }
   return { forces, total };
+}
+
+/** a ← for each of the six rigid motions, translation and rotation of a chain's start in member axes. */
+function rigidParameters({ part, from }: ModelChain, centre: Vector3, a: Float64Array): void {
+  const { x, y, z } = part.axes;
+  const along = from * part.segmentLength;
+  const r = [0, 1, 2].map((k) => part.start[k]! + along * x[k]! - centre[k]!);
+  const axes = [x, y, z];
+  for (let i = 0; i < 3; i++) {
+    const axis = axes[i]!;
+    for (let k = 0; k < 3; k++) {
+      a[k * 6 + i] = axis[k]!;
+      a[k * 6 + 3 + i] = 0;
+      // axis · (e_k × r)
+      const next = (k + 1) % 3;
+      const last = (k + 2) % 3;
+      a[(3 + k) * 6 + i] = axis[last]! * r[next]! - axis[next]! * r[last]!;
+      a[(3 + k) * 6 + 3 + i] = axis[k]!;
+    }
+  }
 }
 
 /**

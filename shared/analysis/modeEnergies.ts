@@ -1,9 +1,4 @@
-import { barStrainEnergy } from '../frame/elements/bar.ts';
-import {
-  BEAM_DEFORMATIONS,
-  beamDeformationRows,
-  beamStrainEnergy,
-} from '../frame/elements/beamStiffness.ts';
+import { BEAM_DEFORMATIONS, beamDeformationRows } from '../frame/elements/beamStiffness.ts';
 import { innerCount, stationPlaces } from '../frame/assembly/chainedPair.ts';
 import type { FrameModel, ModelChain } from '../frame/assembly/FrameModel.ts';
 import { displacements } from '../frame/freedoms/Combination.ts';
@@ -24,13 +19,23 @@ export interface ModeEnergies {
   readonly kineticMasses: Float64Array;
 }
 
-/** Strain and kinetic energies of shapes of one frame, from the deformations of its elements. */
+interface Strain {
+  readonly total: number;
+  readonly members: Float64Array;
+  readonly ties: Float64Array;
+}
+
+/**
+ * Strain and kinetic energies of shapes of one frame, from the deformations of its elements. The shapes stay at
+ * their addresses unchanged.
+ */
 export class FrameEnergies {
   readonly #model: FrameModel;
   readonly #pencil: ChainedPencil;
   readonly #deformations: PackedRows[];
   #masses: PackedRows[] | undefined;
-  readonly #g = new Float64Array(BEAM_DEFORMATIONS);
+  /** Of the shapes asked for before, by address: λ is asked for first, the energies of those returned later. */
+  readonly #strains = new Map<number, Strain>();
 
   /** `pencil`: of the model's `chainedPair`. */
   constructor(model: FrameModel, pencil: ChainedPencil) {
@@ -46,16 +51,13 @@ export class FrameEnergies {
    * φᵀKφ loses as many digits as the stiffnesses of one frame differ by.
    */
   lambda(phi: number): number {
-    const members = new Float64Array(this.#model.parts.length);
-    return 2 * this.#addStrain(phi, members, new Float64Array(this.#model.ties.length));
+    return 2 * this.#strain(phi).total;
   }
 
   /** Strain and kinetic energy of a shape by member, tie and mass; phi an address. */
   of(phi: number): ModeEnergies {
-    const { parts, ties, bodies } = this.#model;
-    const members = new Float64Array(parts.length);
-    const strained = new Float64Array(ties.length);
-    const strain = this.#addStrain(phi, members, strained);
+    const { parts, bodies } = this.#model;
+    const { total: strain, members, ties } = this.#strain(phi);
     const kineticMembers = new Float64Array(parts.length);
     const kineticMasses = new Float64Array(bodies.length);
     let kinetic = this.#addKinetic(phi, kineticMembers);
@@ -70,28 +72,46 @@ export class FrameEnergies {
       kineticMasses[index] = 0.5 * sum;
       kinetic += kineticMasses[index];
     }
-    return { strain, members, ties: strained, kinetic, kineticMembers, kineticMasses };
+    return { strain, members, ties, kinetic, kineticMembers, kineticMasses };
   }
 
-  #addStrain(phi: number, members: Float64Array, ties: Float64Array): number {
-    const { chains, ties: all } = this.#model;
-    const g = this.#g;
+  #strain(phi: number): Strain {
+    const known = this.#strains.get(phi);
+    if (known !== undefined) return known;
+    const { chains, parts, ties: all } = this.#model;
+    const members = new Float64Array(parts.length);
+    const ties = new Float64Array(all.length);
     let total = 0;
     this.#pencil.applyRows(this.#deformations, phi, ({ classIndex, from, count, products }) => {
+      const make = chains[classIndex]!;
+      const { part, elements } = make[0]!;
+      const { axial, torsion, bending, sway } = part.rigidity;
+      const isBar = part.member.kind === 'bar';
       let at = 0;
       for (let m = from; m < from + count; m++) {
-        const { part, elements } = chains[classIndex]![m]!;
-        let energy = 0;
-        if (part.member.kind === 'bar') {
-          energy = barStrainEnergy(part.rigidity.axial, products[at++]!);
+        let twice = 0;
+        if (isBar) {
+          twice = axial * products[at]! * products[at]!;
+          at += 1;
         } else {
-          for (let e = 0; e < elements; e++) {
-            for (let i = 0; i < BEAM_DEFORMATIONS; i++) g[i] = products[at++]!;
-            energy += beamStrainEnergy(part.rigidity, g);
+          for (let e = 0; e < elements; e++, at += BEAM_DEFORMATIONS) {
+            const bendV = products[at + 2]!;
+            const bendW = products[at + 3]!;
+            const swayV = products[at + 4]!;
+            const swayW = products[at + 5]!;
+            twice +=
+              axial * products[at]! * products[at]! +
+              torsion * products[at + 1]! * products[at + 1]! +
+              bending.vv * bendV * bendV +
+              2 * bending.vw * bendV * bendW +
+              bending.ww * bendW * bendW +
+              sway.vv * swayV * swayV +
+              2 * sway.vw * swayV * swayW +
+              sway.ww * swayW * swayW;
           }
         }
-        members[part.index]! += energy;
-        total += energy;
+        members[make[m]!.part.index]! += 0.5 * twice;
+        total += 0.5 * twice;
       }
     });
     const x = this.#pencil.arena.view(phi, this.#pencil.n);
@@ -101,7 +121,9 @@ export class FrameEnergies {
       ties[i] = 0.5 * stiffness * d[0]! * d[0]!;
       total += ties[i];
     });
-    return total;
+    const strain = { total, members, ties };
+    this.#strains.set(phi, strain);
+    return strain;
   }
 
   #addKinetic(phi: number, members: Float64Array): number {

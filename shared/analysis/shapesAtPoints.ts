@@ -1,39 +1,56 @@
 import type { DividedPart, FrameModel } from '../frame/assembly/FrameModel.ts';
 import { displacements } from '../frame/freedoms/Combination.ts';
+import type { ChainedPencil } from '../numerics/chains/ChainedPencil.ts';
 import { add, scale } from '../frame/vector3.ts';
 import type { FrameDocument } from '../schemas/frameDocument.ts';
 import type { ModeShapes } from './shapesFile.ts';
 
 /**
  * Displacements of every node, then of every member's stations from start to end, in each mode.
- *   phi  modes over the free unknowns, φᵀMφ = 1
+ *   addresses  of the modes in the pencil's arena, φᵀMφ = 1
  * A member's end is taken on the member's side of its joint. A bar stays straight: its rotations across
  * its axis are its chord's. A displacement that is no unknown is 0.
  */
-export function shapesAtPoints(model: FrameModel, phi: readonly Float64Array[]): ModeShapes {
-  const { document, parts, segments } = model;
+export function shapesAtPoints(
+  model: FrameModel,
+  pencil: ChainedPencil,
+  addresses: readonly number[],
+): ModeShapes {
+  const { document, parts, chains } = model;
   const { points, members, positions } = shapePoints(document, parts);
-  const shapes = new Float32Array(phi.length * points * 6);
+  const shapes = new Float32Array(addresses.length * points * 6);
   const d = new Float64Array(12);
-  phi.forEach((shape, mode) => {
+  addresses.forEach((address, mode) => {
     const base = mode * points * 6;
+    const shape = pencil.arena.view(address, pencil.n);
     model.nodes.forEach((motion, i) => {
       displacements(motion, shape, d);
       for (let k = 0; k < 6; k++) shapes[base + i * 6 + k] = d[k]!;
     });
-    for (const { part, number, motion } of segments) {
-      displacements(motion, shape, d);
-      if (motion.rows === 6) spreadBar(d, part.segmentLength);
-      const at = base + (members[part.index]!.first + number) * 6;
-      writeGlobal(part, d, 0, shapes, at);
-      writeGlobal(part, d, 6, shapes, at + 6);
-    }
+    pencil.eachBatch(address, ({ classIndex, from, count, inner, ends }) => {
+      const innerOfOne = inner.length / count;
+      const rows = ends.length / count;
+      for (let m = 0; m < count; m++) {
+        const { part, from: station, elements, directions } = chains[classIndex]![from + m]!;
+        const at = base + (members[part.index]!.first + station) * 6;
+        for (let i = 0; i < rows; i++) d[i] = ends[m * rows + i]!;
+        if (rows === 6) spreadBar(d, part.segmentLength);
+        writeGlobal(part, d, 0, shapes, at);
+        writeGlobal(part, d, 6, shapes, at + 6 * elements);
+        let next = m * innerOfOne;
+        for (let s = 1; s < elements; s++) {
+          d.fill(0, 0, 6);
+          for (const direction of directions) d[direction] = inner[next++]!;
+          writeGlobal(part, d, 0, shapes, at + 6 * s);
+        }
+      }
+    });
   });
   return {
     nodes: document.nodes.map((node) => node.id),
     members,
     points,
-    modes: phi.length,
+    modes: addresses.length,
     positions,
     shapes,
   };
@@ -76,10 +93,12 @@ export function writeGlobal(
   shapes: Float32Array,
   at: number,
 ): void {
-  for (const half of [0, 3]) {
-    for (const k of [0, 1, 2] as const) {
-      shapes[at + half + k] =
-        x[k] * d[from + half]! + y[k] * d[from + half + 1]! + z[k] * d[from + half + 2]!;
-    }
+  for (let half = 0; half < 6; half += 3) {
+    const a = d[from + half]!;
+    const b = d[from + half + 1]!;
+    const c = d[from + half + 2]!;
+    shapes[at + half] = x[0] * a + y[0] * b + z[0] * c;
+    shapes[at + half + 1] = x[1] * a + y[1] * b + z[1] * c;
+    shapes[at + half + 2] = x[2] * a + y[2] * b + z[2] * c;
   }
 }

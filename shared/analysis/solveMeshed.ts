@@ -87,7 +87,11 @@ function solveIn(
 
   progress(0.9, 'summing energies');
   const beforeSummary = clock();
-  const shapes = shapesAtPoints(model, found.phi);
+  const shapes = shapesAtPoints(
+    model,
+    pencil,
+    found.addresses.map(({ vector }) => vector),
+  );
   const inertia = chainInertia(model, centre);
   const summary = summariseModes({
     model,

@@ -32,8 +32,8 @@ interface Placed {
   readonly K: ChainMatrix;
   readonly M: ChainMatrix;
   readonly inverse: number;
-  readonly W: number;
-  /** −Wᵀ */
+  /** −W and its transpose. */
+  readonly minusW: number;
   readonly minusWT: number;
   readonly S: number;
   readonly magnitude: number;
@@ -156,7 +156,7 @@ export class ChainedPencil {
       negative += condensed.negative * count;
       const { inverse, W, S } = condensed;
       writeTiles(this.arena, placed.inverse, inner, inner, (i, j) => inverse[i * inner + j]!);
-      writeTiles(this.arena, placed.W, inner, ends, (i, e) => W[i * ends + e]!);
+      writeTiles(this.arena, placed.minusW, inner, ends, (i, e) => -W[i * ends + e]!);
       writeTiles(this.arena, placed.minusWT, ends, inner, (e, i) => -W[i * ends + e]!);
       this.arena.view(placed.S, ends * ends).set(S);
       this.arena.view(placed.magnitude, ends).set(magnitude.subarray(inner));
@@ -217,15 +217,15 @@ export class ChainedPencil {
       const { inner, ends } = placed.chainClass;
       if (inner === 0) return;
       const F = x + 8 * (placed.first + from * inner);
-      kernels.multiplyBatch(count, F, inner, placed.minusWT, ends, this.#ends, 0);
-      kernels.scatterEnds(count, placed.table + 16 * from, ends, this.#ends, y);
+      kernels.multiplyBatch(count, F, inner, placed.minusWT, ends, this.#ends, false);
+      kernels.scatterEnds(count, placed.table + 24 * from, ends, this.#ends, y);
     });
     this.#elimination.solve(y, y);
     this.#inBatches((placed, from, count) => {
       const { inner } = placed.chainClass;
       if (inner === 0) return;
       const offset = 8 * (placed.first + from * inner);
-      kernels.multiplyBatch(count, x + offset, inner, placed.inverse, inner, y + offset, 0);
+      kernels.multiplyBatch(count, x + offset, inner, placed.inverse, inner, y + offset, false);
     });
     this.#addChainMotion(y, y);
   }
@@ -236,9 +236,9 @@ export class ChainedPencil {
     this.#inBatches((placed, from, count) => {
       const { inner, ends } = placed.chainClass;
       if (inner === 0) return;
-      kernels.gatherEnds(count, placed.table + 16 * from, ends, x, this.#ends);
+      kernels.gatherEnds(count, placed.table + 24 * from, ends, x, this.#ends);
       const at = y + 8 * (placed.first + from * inner);
-      kernels.multiplyBatch(count, this.#ends, ends, placed.W, inner, at, -1);
+      kernels.multiplyBatch(count, this.#ends, ends, placed.minusW, inner, at, true);
     });
   }
 
@@ -266,7 +266,7 @@ export class ChainedPencil {
     this.#inBatches((placed, from, count) => {
       const { inner, ends } = placed.chainClass;
       const matrix = placed[which];
-      const table = placed.table + 16 * from;
+      const table = placed.table + 24 * from;
       const offset = 8 * (placed.first + from * inner);
       const out = this.#ends + 8 * BATCH * ends;
       kernels.gatherEnds(count, table, ends, x, this.#ends);
@@ -275,11 +275,11 @@ export class ChainedPencil {
         kernels.multiplyDiagonals(count, ends, matrix.ends, this.#ends, out);
       } else {
         const { innerInner, innerEnds, endsInner, endsEnds } = matrix;
-        kernels.multiplyBatch(count, this.#ends, ends, endsEnds, ends, out, 0);
+        kernels.multiplyBatch(count, this.#ends, ends, endsEnds, ends, out, false);
         if (inner > 0) {
-          kernels.multiplyBatch(count, x + offset, inner, endsInner, ends, out, 1);
-          kernels.multiplyBatch(count, x + offset, inner, innerInner, inner, y + offset, 0);
-          kernels.multiplyBatch(count, this.#ends, ends, innerEnds, inner, y + offset, 1);
+          kernels.multiplyBatch(count, x + offset, inner, endsInner, ends, out, true);
+          kernels.multiplyBatch(count, x + offset, inner, innerInner, inner, y + offset, false);
+          kernels.multiplyBatch(count, this.#ends, ends, innerEnds, inner, y + offset, true);
         }
       }
       kernels.scatterEnds(count, table, ends, out, y);
@@ -333,9 +333,9 @@ export class ChainedPencil {
       const { inner, ends } = placed.chainClass;
       const row = rows[c]!;
       const F = x + 8 * (placed.first + from * inner);
-      kernels.gatherEnds(count, placed.table + 16 * from, ends, x, this.#ends);
-      kernels.multiplyBatch(count, this.#ends, ends, row.ends, row.outputs, out, 0);
-      if (inner > 0) kernels.multiplyBatch(count, F, inner, row.inner, row.outputs, out, 1);
+      kernels.gatherEnds(count, placed.table + 24 * from, ends, x, this.#ends);
+      kernels.multiplyBatch(count, this.#ends, ends, row.ends, row.outputs, out, false);
+      if (inner > 0) kernels.multiplyBatch(count, F, inner, row.inner, row.outputs, out, true);
       use({
         classIndex: c,
         from,
@@ -346,6 +346,20 @@ export class ChainedPencil {
       });
     });
     arena.rewind(used);
+  }
+
+  /** Hands the inner unknowns and the ends of every chain to `use`, batch by batch. */
+  eachBatch(x: number, use: (batch: Omit<ChainBatch, 'products'>) => void): void {
+    const { arena } = this;
+    this.#inBatches(({ chainClass: { inner, ends }, first, table }, from, count, classIndex) => {
+      const F = x + 8 * (first + from * inner);
+      arena.kernels.gatherEnds(count, table + 24 * from, ends, x, this.#ends);
+      const parts = {
+        inner: arena.view(F, count * inner),
+        ends: arena.view(this.#ends, count * ends),
+      };
+      use({ classIndex, from, count, ...parts });
+    });
   }
 
   #inBatches(use: (placed: Placed, from: number, count: number, c: number) => void): void {
@@ -393,24 +407,40 @@ function placeClass(
   destinations: Int32Array,
 ): Placed {
   const { inner, ends, chains } = chainClass;
-  const widths = chains.reduce((sum, { dofs }) => sum + dofs.length, 0);
-  const table = arena.indices(4 * chains.length);
-  const dofs = arena.indices(widths);
-  const T = arena.numbers(widths * ends);
+  let widths = 0;
+  let nonZero = 0;
+  for (const { dofs, T } of chains) {
+    widths += dofs.length;
+    for (const value of T) if (value !== 0) nonZero += 1;
+  }
+  const table = arena.indices(6 * chains.length);
+  const entries = arena.numbers(2 * nonZero);
+  const dense = arena.numbers(widths * ends);
   const placesAt = arena.placeIndices(destinations);
   const { i32, f64 } = arena;
-  let width = 0;
-  let entries = 0;
-  chains.forEach((chain, m) => {
-    const row = table / 4 + 4 * m;
-    i32[row] = chain.dofs.length;
-    i32[row + 1] = dofs + 4 * width;
-    i32[row + 2] = T + 8 * width * ends;
-    i32[row + 3] = placesAt + 4 * entries;
-    i32.set(chain.dofs, dofs / 4 + width);
-    f64.set(chain.T, T / 8 + width * ends);
-    width += chain.dofs.length;
-    entries += entriesOf(chain.dofs.length);
+  let entry = entries;
+  let column = dense / 8;
+  let destination = placesAt;
+  chains.forEach(({ dofs, T }, m) => {
+    const row = table / 4 + 6 * m;
+    i32[row + 1] = entry;
+    i32[row + 2] = dofs.length;
+    i32[row + 3] = 8 * column;
+    i32[row + 4] = destination;
+    i32[row + 5] = 0;
+    for (let j = 0; j < dofs.length; j++) {
+      for (let e = 0; e < ends; e++, column++) {
+        const value = T[j * ends + e]!;
+        f64[column] = value;
+        if (value === 0) continue;
+        f64[entry / 8] = value;
+        i32[entry / 4 + 2] = 8 * dofs[j]!;
+        i32[entry / 4 + 3] = 8 * e;
+        entry += 16;
+      }
+    }
+    i32[row] = (entry - i32[row + 1]!) / 16;
+    destination += 4 * entriesOf(dofs.length);
   });
   return {
     chainClass,
@@ -420,7 +450,7 @@ function placeClass(
     K: packChainMatrix(arena, chainClass.K, inner, ends),
     M: packChainMatrix(arena, chainClass.M, inner, ends),
     inverse: arena.numbers(tiledSize(inner, inner)),
-    W: arena.numbers(tiledSize(inner, ends)),
+    minusW: arena.numbers(tiledSize(inner, ends)),
     minusWT: arena.numbers(tiledSize(ends, inner)),
     S: arena.numbers(ends * ends),
     magnitude: arena.numbers(ends),

@@ -73,7 +73,7 @@ export interface Kernels {
     y: number,
   ): void;
   /**
-   * Y (=, +=, −= for mode 0, 1, −1) F Gᵀ, rows of F and Y being `count` vectors side by side.
+   * Y = F Gᵀ, or Y += F Gᵀ to accumulate; rows of F and Y are `count` vectors side by side.
    *   G  outputs × inputs in tiles of four rows, padded with zeros
    */
   multiplyBatch(
@@ -83,14 +83,15 @@ export interface Kernels {
     G: number,
     outputs: number,
     Y: number,
-    mode: number,
+    accumulate: boolean,
   ): void;
   /** y = d ∘ x for `count` vectors of `size`. */
   multiplyDiagonals(count: number, size: number, d: number, x: number, y: number): void;
   /**
    * B_m = T_m x[dofs_m] for each chain m.
-   *   table  four 32-bit numbers each: number of dofs, address of the dofs (32-bit), address of T
-   *          (`ends` × dofs, column by column), address of destinations (addCongruent)
+   *   table  six 32-bit numbers each: how many entries of T are not zero, their address, number of dofs,
+   *          address of T (`ends` × dofs, column by column), address of destinations (addCongruent), 0.
+   *          An entry is its value, then as 32-bit numbers 8 · unknown and 8 · row
    *   ends   rows of T, an even number
    */
   gatherEnds(count: number, table: number, ends: number, x: number, B: number): void;

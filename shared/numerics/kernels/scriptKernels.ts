@@ -106,12 +106,6 @@ function addTransposed(
   }
 }
 
-function store(f: Float64Array, at: number, mode: number, value: number): void {
-  if (mode === 0) f[at] = value;
-  else if (mode > 0) f[at]! += value;
-  else f[at]! -= value;
-}
-
 /** The kernels in JavaScript, for engines without SIMD. */
 export function scriptKernels(memory: MemoryViews): Kernels {
   const sums = new Float64Array(4);
@@ -358,26 +352,28 @@ export function scriptKernels(memory: MemoryViews): Kernels {
       }
     },
 
-    multiplyBatch(count, FAt, inputs, GAt, outputs, YAt, mode) {
+    multiplyBatch(count, FAt, inputs, GAt, outputs, YAt, accumulate) {
       const f = memory.f64;
       for (let m = 0, F = FAt >>> 3, Y = YAt >>> 3; m < count; m++, F += inputs, Y += outputs) {
         let g = GAt >>> 3;
         for (let p = 0; p < outputs; p += 4) {
-          let s0 = 0;
-          let s1 = 0;
-          let s2 = 0;
-          let s3 = 0;
-          for (let q = 0; q < inputs; q++, g += 4) {
-            const v = f[F + q]!;
+          const at = Y + p;
+          const width = outputs - p;
+          let s0 = accumulate ? f[at]! : 0;
+          let s1 = accumulate && width > 1 ? f[at + 1]! : 0;
+          let s2 = accumulate && width > 2 ? f[at + 2]! : 0;
+          let s3 = accumulate && width > 3 ? f[at + 3]! : 0;
+          for (let q = F; q < F + inputs; q++, g += 4) {
+            const v = f[q]!;
             s0 += f[g]! * v;
             s1 += f[g + 1]! * v;
             s2 += f[g + 2]! * v;
             s3 += f[g + 3]! * v;
           }
-          store(f, Y + p, mode, s0);
-          if (p + 1 < outputs) store(f, Y + p + 1, mode, s1);
-          if (p + 2 < outputs) store(f, Y + p + 2, mode, s2);
-          if (p + 3 < outputs) store(f, Y + p + 3, mode, s3);
+          f[at] = s0;
+          if (width > 1) f[at + 1] = s1;
+          if (width > 2) f[at + 2] = s2;
+          if (width > 3) f[at + 3] = s3;
         }
       }
     },
@@ -391,38 +387,27 @@ export function scriptKernels(memory: MemoryViews): Kernels {
       }
     },
 
-    gatherEnds(count, tableAt, ends, xAt, BAt) {
+    gatherEnds(count, tableAt, ends, x, BAt) {
       const f = memory.f64;
       const index = memory.i32;
-      const x = xAt >>> 3;
-      for (let m = 0, table = tableAt >>> 2, B = BAt >>> 3; m < count; m++, table += 4, B += ends) {
-        const width = index[table]!;
-        const dofs = index[table + 1]! >>> 2;
-        let T = index[table + 2]! >>> 3;
-        f.fill(0, B, B + ends);
-        for (let j = 0; j < width; j++) {
-          const xj = f[x + index[dofs + j]!]!;
-          for (let i = 0; i < ends; i++) f[B + i]! += f[T++]! * xj;
+      for (let m = 0, table = tableAt >>> 2, B = BAt; m < count; m++, table += 6, B += 8 * ends) {
+        f.fill(0, B >>> 3, (B >>> 3) + ends);
+        const last = index[table + 1]! + 16 * index[table]!;
+        for (let entry = index[table + 1]!; entry < last; entry += 16) {
+          const from = (x + index[(entry + 8) >>> 2]!) >>> 3;
+          f[(B + index[(entry + 12) >>> 2]!) >>> 3]! += f[entry >>> 3]! * f[from]!;
         }
       }
     },
 
-    scatterEnds(count, tableAt, ends, BAt, xAt) {
+    scatterEnds(count, tableAt, ends, BAt, x) {
       const f = memory.f64;
       const index = memory.i32;
-      const x = xAt >>> 3;
-      for (let m = 0, table = tableAt >>> 2, B = BAt >>> 3; m < count; m++, table += 4, B += ends) {
-        const width = index[table]!;
-        const dofs = index[table + 1]! >>> 2;
-        let T = index[table + 2]! >>> 3;
-        for (let j = 0; j < width; j++) {
-          let s0 = 0;
-          let s1 = 0;
-          for (let i = 0; i < ends; i += 2, T += 2) {
-            s0 += f[T]! * f[B + i]!;
-            s1 += f[T + 1]! * f[B + i + 1]!;
-          }
-          f[x + index[dofs + j]!]! += s0 + s1;
+      for (let m = 0, table = tableAt >>> 2, B = BAt; m < count; m++, table += 6, B += 8 * ends) {
+        const last = index[table + 1]! + 16 * index[table]!;
+        for (let entry = index[table + 1]!; entry < last; entry += 16) {
+          const from = (B + index[(entry + 12) >>> 2]!) >>> 3;
+          f[(x + index[(entry + 8) >>> 2]!) >>> 3]! += f[entry >>> 3]! * f[from]!;
         }
       }
     },
@@ -433,10 +418,10 @@ export function scriptKernels(memory: MemoryViews): Kernels {
       const S = SAt >>> 3;
       const values = valuesAt >>> 3;
       const work = workAt >>> 3;
-      for (let m = 0, table = tableAt >>> 2; m < count; m++, table += 4) {
-        const width = index[table]!;
-        const T = index[table + 2]! >>> 3;
-        let destination = index[table + 3]! >>> 2;
+      for (let m = 0, table = tableAt >>> 2; m < count; m++, table += 6) {
+        const width = index[table + 2]!;
+        const T = index[table + 3]! >>> 3;
+        let destination = index[table + 4]! >>> 2;
         for (let b = 0; b < width; b++) {
           f.fill(0, work, work + ends);
           const Tb = T + b * ends;

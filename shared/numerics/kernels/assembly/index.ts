@@ -427,30 +427,19 @@ export function multiplySparse(
   }
 }
 
-/** Stores one row of a 4-wide tile, of which `width` columns exist. */
-function storeRow(y: usize, width: i32, mode: i32, a: v128, b: v128): void {
-  if (width >= 4) {
-    if (mode == 0) {
-      v128.store(y, a);
-      v128.store(y, b, 16);
-    } else if (mode > 0) {
-      v128.store(y, f64x2.add(v128.load(y), a));
-      v128.store(y, f64x2.add(v128.load(y, 16), b), 16);
-    } else {
-      v128.store(y, f64x2.sub(v128.load(y), a));
-      v128.store(y, f64x2.sub(v128.load(y, 16), b), 16);
-    }
-    return;
-  }
-  storeOne(y, mode, f64x2.extract_lane(a, 0));
-  if (width > 1) storeOne(y + 8, mode, f64x2.extract_lane(a, 1));
-  if (width > 2) storeOne(y + 16, mode, f64x2.extract_lane(b, 0));
+/** Stores the first `width` < 4 numbers of a row. */
+function storePart(y: usize, width: i32, a: v128, b: v128): void {
+  store<f64>(y, f64x2.extract_lane(a, 0));
+  if (width > 1) store<f64>(y, f64x2.extract_lane(a, 1), 8);
+  if (width > 2) store<f64>(y, f64x2.extract_lane(b, 0), 16);
 }
 
-function storeOne(y: usize, mode: i32, value: f64): void {
-  if (mode == 0) store<f64>(y, value);
-  else if (mode > 0) store<f64>(y, load<f64>(y) + value);
-  else store<f64>(y, load<f64>(y) - value);
+function loadLow(y: usize, width: i32): v128 {
+  return f64x2(load<f64>(y), width > 1 ? load<f64>(y, 8) : 0);
+}
+
+function loadHigh(y: usize, width: i32): v128 {
+  return f64x2(width > 2 ? load<f64>(y, 16) : 0, 0);
 }
 
 export function multiplyBatch(
@@ -460,15 +449,19 @@ export function multiplyBatch(
   G: usize,
   outputs: i32,
   Y: usize,
-  mode: i32,
+  accumulate: bool,
 ): void {
   const strideF = (<usize>inputs) << 3;
   const strideY = (<usize>outputs) << 3;
   let m: i32 = 0;
   for (; m + 3 < count; m += 4) {
     let g = G;
-    const y = Y + <usize>m * strideY;
+    let y0 = Y + <usize>m * strideY;
     for (let p: i32 = 0; p < outputs; p += 4) {
+      const y1 = y0 + strideY;
+      const y2 = y1 + strideY;
+      const y3 = y2 + strideY;
+      const width = outputs - p;
       let c00 = f64x2.splat(0);
       let c01 = f64x2.splat(0);
       let c10 = f64x2.splat(0);
@@ -477,6 +470,27 @@ export function multiplyBatch(
       let c21 = f64x2.splat(0);
       let c30 = f64x2.splat(0);
       let c31 = f64x2.splat(0);
+      if (accumulate) {
+        if (width >= 4) {
+          c00 = v128.load(y0);
+          c01 = v128.load(y0, 16);
+          c10 = v128.load(y1);
+          c11 = v128.load(y1, 16);
+          c20 = v128.load(y2);
+          c21 = v128.load(y2, 16);
+          c30 = v128.load(y3);
+          c31 = v128.load(y3, 16);
+        } else {
+          c00 = loadLow(y0, width);
+          c01 = loadHigh(y0, width);
+          c10 = loadLow(y1, width);
+          c11 = loadHigh(y1, width);
+          c20 = loadLow(y2, width);
+          c21 = loadHigh(y2, width);
+          c30 = loadLow(y3, width);
+          c31 = loadHigh(y3, width);
+        }
+      }
       let f0 = F + <usize>m * strideF;
       let f1 = f0 + strideF;
       let f2 = f1 + strideF;
@@ -503,20 +517,40 @@ export function multiplyBatch(
         f2 += 8;
         f3 += 8;
       }
-      const width = outputs - p;
-      const at = y + ((<usize>p) << 3);
-      storeRow(at, width, mode, c00, c01);
-      storeRow(at + strideY, width, mode, c10, c11);
-      storeRow(at + 2 * strideY, width, mode, c20, c21);
-      storeRow(at + 3 * strideY, width, mode, c30, c31);
+      if (width >= 4) {
+        v128.store(y0, c00);
+        v128.store(y0, c01, 16);
+        v128.store(y1, c10);
+        v128.store(y1, c11, 16);
+        v128.store(y2, c20);
+        v128.store(y2, c21, 16);
+        v128.store(y3, c30);
+        v128.store(y3, c31, 16);
+      } else {
+        storePart(y0, width, c00, c01);
+        storePart(y1, width, c10, c11);
+        storePart(y2, width, c20, c21);
+        storePart(y3, width, c30, c31);
+      }
+      y0 += 32;
     }
   }
   for (; m < count; m++) {
     let g = G;
-    const y = Y + <usize>m * strideY;
+    let y = Y + <usize>m * strideY;
     for (let p: i32 = 0; p < outputs; p += 4) {
+      const width = outputs - p;
       let c0 = f64x2.splat(0);
       let c1 = f64x2.splat(0);
+      if (accumulate) {
+        if (width >= 4) {
+          c0 = v128.load(y);
+          c1 = v128.load(y, 16);
+        } else {
+          c0 = loadLow(y, width);
+          c1 = loadHigh(y, width);
+        }
+      }
       let f = F + <usize>m * strideF;
       const end = f + strideF;
       while (f < end) {
@@ -526,7 +560,13 @@ export function multiplyBatch(
         g += 32;
         f += 8;
       }
-      storeRow(y + ((<usize>p) << 3), outputs - p, mode, c0, c1);
+      if (width >= 4) {
+        v128.store(y, c0);
+        v128.store(y, c1, 16);
+      } else {
+        storePart(y, width, c0, c1);
+      }
+      y += 32;
     }
   }
 }
@@ -542,42 +582,33 @@ export function multiplyDiagonals(count: i32, size: i32, d: usize, x: usize, y: 
 }
 
 export function gatherEnds(count: i32, table: usize, ends: i32, x: usize, B: usize): void {
+  const size = (<usize>ends) << 3;
   for (let m: i32 = 0; m < count; m++) {
-    const width = load<i32>(table);
-    let dof = <usize>load<u32>(table, 4);
-    let T = <usize>load<u32>(table, 8);
-    table += 16;
-    memory.fill(B, 0, (<usize>ends) << 3);
-    for (let j: i32 = 0; j < width; j++) {
-      const xj = v128.load64_splat(x + ((<usize>load<u32>(dof)) << 3));
-      dof += 4;
-      for (let i: i32 = 0; i < ends; i += 2) {
-        const at = B + ((<usize>i) << 3);
-        v128.store(at, f64x2.add(v128.load(at), f64x2.mul(v128.load(T), xj)));
-        T += 16;
-      }
+    let entry = <usize>load<u32>(table, 4);
+    const last = entry + ((<usize>load<u32>(table)) << 4);
+    table += 24;
+    memory.fill(B, 0, size);
+    while (entry < last) {
+      const at = B + <usize>load<u32>(entry, 12);
+      store<f64>(at, load<f64>(at) + load<f64>(entry) * load<f64>(x + <usize>load<u32>(entry, 8)));
+      entry += 16;
     }
-    B += (<usize>ends) << 3;
+    B += size;
   }
 }
 
 export function scatterEnds(count: i32, table: usize, ends: i32, B: usize, x: usize): void {
+  const size = (<usize>ends) << 3;
   for (let m: i32 = 0; m < count; m++) {
-    const width = load<i32>(table);
-    let dof = <usize>load<u32>(table, 4);
-    let T = <usize>load<u32>(table, 8);
-    table += 16;
-    for (let j: i32 = 0; j < width; j++) {
-      let sum = f64x2.splat(0);
-      for (let i: i32 = 0; i < ends; i += 2) {
-        sum = f64x2.add(sum, f64x2.mul(v128.load(T), v128.load(B + ((<usize>i) << 3))));
-        T += 16;
-      }
-      const at = x + ((<usize>load<u32>(dof)) << 3);
-      dof += 4;
-      store<f64>(at, load<f64>(at) + (f64x2.extract_lane(sum, 0) + f64x2.extract_lane(sum, 1)));
+    let entry = <usize>load<u32>(table, 4);
+    const last = entry + ((<usize>load<u32>(table)) << 4);
+    table += 24;
+    while (entry < last) {
+      const at = x + <usize>load<u32>(entry, 8);
+      store<f64>(at, load<f64>(at) + load<f64>(entry) * load<f64>(B + <usize>load<u32>(entry, 12)));
+      entry += 16;
     }
-    B += (<usize>ends) << 3;
+    B += size;
   }
 }
 
@@ -593,10 +624,10 @@ export function addCongruent(
 ): void {
   const size = (<usize>ends) << 3;
   for (let m: i32 = 0; m < count; m++) {
-    const width = load<i32>(table);
-    const T = <usize>load<u32>(table, 8);
-    let destination = <usize>load<u32>(table, 12);
-    table += 16;
+    const width = load<i32>(table, 8);
+    const T = <usize>load<u32>(table, 12);
+    let destination = <usize>load<u32>(table, 16);
+    table += 24;
     for (let b: i32 = 0; b < width; b++) {
       // R = S T_b; most entries of T are zero.
       memory.fill(work, 0, size);
