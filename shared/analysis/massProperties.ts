@@ -1,4 +1,4 @@
-import { chainMatrix, innerCount, stationPlaces } from '../frame/assembly/chainedPair.ts';
+import { chainMatrix, rowOrder } from '../frame/assembly/chainedPair.ts';
 import type { DividedPart, FrameModel, ModelChain } from '../frame/assembly/FrameModel.ts';
 import { addForces } from '../frame/freedoms/Combination.ts';
 import { add, cross, dot, scale, subtract } from '../frame/vector3.ts';
@@ -119,6 +119,7 @@ export function chainInertia(model: FrameModel, centre: Vector3): RigidInertia {
   const a = new Float64Array(36);
   for (const chains of model.chains) {
     const { n, MR, RMR, inner } = rigidMakeOf(chains[0]!);
+    const rows = rowOrder(chains[0]!);
     const end = new Float64Array(n - inner);
     for (const chain of chains) {
       rigidParameters(chain, centre, a);
@@ -129,7 +130,7 @@ export function chainInertia(model: FrameModel, centre: Vector3): RigidInertia {
           let force = 0;
           for (let k = 0; k < 6; k++) force += MR[i * 6 + k]! * a[from + k]!;
           if (i < inner) b[chain.inner + i]! += force;
-          else end[i - inner] = force;
+          else end[rows[i - inner]!] = force;
         }
         addForces(chain.ends, end, b);
         let sum = 0;
@@ -179,12 +180,12 @@ function rigidMakeOf(chain: ModelChain): {
   RMR: Float64Array;
   inner: number;
 } {
-  const { part, ends } = chain;
-  const inner = innerCount(chain);
+  const { part, ends, make } = chain;
+  const { inner } = make;
   const n = inner + ends.rows;
   const M = chainMatrix(chain, part.mass);
   const motion = new Float64Array(n * 6);
-  stationPlaces(chain).forEach((places, station) => {
+  make.places.forEach((places, station) => {
     const along = station * part.segmentLength;
     places.forEach((place, d) => {
       if (place < 0) return;

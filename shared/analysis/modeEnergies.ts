@@ -1,5 +1,4 @@
 import { BEAM_DEFORMATIONS, beamDeformationRows } from '../frame/elements/beamStiffness.ts';
-import { innerCount, stationPlaces } from '../frame/assembly/chainedPair.ts';
 import type { FrameModel, ModelChain } from '../frame/assembly/FrameModel.ts';
 import { displacements } from '../frame/freedoms/Combination.ts';
 import type { ChainedPencil, PackedRows } from '../numerics/chains/ChainedPencil.ts';
@@ -149,9 +148,8 @@ export class FrameEnergies {
 
 /** Deformations of every element of a chain over its inner unknowns and its ends, row by row. */
 function deformationRows(chain: ModelChain): Float64Array {
-  const { part, elements, ends } = chain;
-  const width = innerCount(chain) + ends.rows;
-  const places = stationPlaces(chain);
+  const { part, elements, ends, make } = chain;
+  const width = make.inner + ends.rows;
   const element =
     part.member.kind === 'bar'
       ? Float64Array.of(-1, 0, 0, 1, 0, 0)
@@ -159,7 +157,7 @@ function deformationRows(chain: ModelChain): Float64Array {
   const rows = element.length / ends.rows;
   const result = new Float64Array(elements * rows * width);
   for (let e = 0; e < elements; e++) {
-    const at = [...places[e]!, ...places[e + 1]!];
+    const at = [...make.places[e]!, ...make.places[e + 1]!];
     for (let i = 0; i < rows; i++) {
       at.forEach((place, j) => {
         if (place >= 0) result[(e * rows + i) * width + place] = element[i * ends.rows + j]!;

@@ -1,4 +1,4 @@
-import type { DividedPart, FrameModel } from '../frame/assembly/FrameModel.ts';
+import type { DividedPart, FrameModel, ModelChain } from '../frame/assembly/FrameModel.ts';
 import { displacements } from '../frame/freedoms/Combination.ts';
 import type { ChainedPencil } from '../numerics/chains/ChainedPencil.ts';
 import { add, scale } from '../frame/vector3.ts';
@@ -28,19 +28,30 @@ export function shapesAtPoints(
       for (let k = 0; k < 6; k++) shapes[base + i * 6 + k] = d[k]!;
     });
     pencil.eachBatch(address, ({ classIndex, from, count, inner, ends }) => {
-      const innerOfOne = inner.length / count;
       const rows = ends.length / count;
+      const [{ make }] = chains[classIndex]! as [ModelChain];
       for (let m = 0; m < count; m++) {
-        const { part, from: station, elements, directions } = chains[classIndex]![from + m]!;
+        const { part, from: station, elements } = chains[classIndex]![from + m]!;
         const at = base + (members[part.index]!.first + station) * 6;
-        for (let i = 0; i < rows; i++) d[i] = ends[m * rows + i]!;
-        if (rows === 6) spreadBar(d, part.segmentLength);
-        writeGlobal(part, d, 0, shapes, at);
-        writeGlobal(part, d, 6, shapes, at + 6 * elements);
-        let next = m * innerOfOne;
-        for (let s = 1; s < elements; s++) {
-          d.fill(0, 0, 6);
-          for (const direction of directions) d[direction] = inner[next++]!;
+        const atStation = (s: number, to: number) => {
+          const places = make.places[s]!;
+          for (let i = 0; i < rows / 2; i++) {
+            const place = places[i]!;
+            if (place < 0) d[to + i] = 0;
+            else if (place < make.inner) d[to + i] = inner[m * make.inner + place]!;
+            else d[to + i] = ends[m * rows + place - make.inner]!;
+          }
+        };
+        if (rows === 6) {
+          atStation(0, 0);
+          atStation(1, 3);
+          spreadBar(d, part.segmentLength);
+          writeGlobal(part, d, 0, shapes, at);
+          writeGlobal(part, d, 6, shapes, at + 6);
+          continue;
+        }
+        for (let s = 0; s <= elements; s++) {
+          atStation(s, 0);
           writeGlobal(part, d, 0, shapes, at + 6 * s);
         }
       }

@@ -39,10 +39,28 @@ export interface ModelChain {
   readonly elements: number;
   /** Displacements of its ends in member axes over the joint unknowns: 12 of a beam, 6 of a bar. */
   readonly ends: Combination;
-  /** First of its inner unknowns, which follow station by station. */
+  /** First of its inner unknowns; their order is that of `stationPlaces`. */
   readonly inner: number;
-  /** Displacements in member axes (0–5) that each inner station has, ascending. */
-  readonly directions: readonly number[];
+  /** What chains of its make share. */
+  readonly make: ChainMake;
+}
+
+/** How the unknowns of a chain are ordered, alike for all chains of one make. */
+export interface ChainMake {
+  /**
+   * Displacements in member axes (0–5) by parts that the element matrices do not couple: stretch, twist,
+   * bending in each plane, as far as the section allows.
+   */
+  readonly blocks: readonly (readonly number[])[];
+  /** Displacements that inner stations have in this model. */
+  readonly exists: readonly boolean[];
+  /** Number of inner unknowns. */
+  readonly inner: number;
+  /**
+   * Per station, first to last: place of each displacement among the inner unknowns, then the ends; block by
+   * block. −1 for one that does not exist.
+   */
+  readonly places: readonly Int32Array[];
 }
 
 /** A member divided into equal elements. */

@@ -24,60 +24,57 @@ export function chainedPair(model: FrameModel): ChainedPair {
 function chainClass(chains: readonly ModelChain[]): ChainClass {
   const [first] = chains;
   if (first === undefined) throw new RangeError('A class of chains has at least one.');
-  const { part, ends } = first;
+  const { part, ends, elements, make } = first;
+  const rows = rowOrder(first);
   return {
-    inner: innerCount(first),
+    inner: make.inner,
     ends: ends.rows,
+    blocks: make.blocks.map((block) => ({
+      inner: (elements - 1) * block.filter((d) => make.exists[d]).length,
+      ends: 2 * block.length,
+    })),
     K: chainMatrix(first, part.stiffness),
     M: chainMatrix(first, part.mass),
-    chains: chains.map(({ ends: { rows, dofs, T } }): Chain => ({
+    chains: chains.map(({ ends: { dofs, T } }): Chain => ({
       dofs,
-      T: transposed(T, rows, dofs.length),
+      T: byColumns(T, rows, dofs.length),
     })),
   };
 }
 
-export function innerCount({ elements, directions }: ModelChain): number {
-  return (elements - 1) * directions.length;
+/** For each end in the make's order: its row among the displacements of start and end. */
+export function rowOrder({ make, ends, elements }: ModelChain): Int32Array {
+  const half = ends.rows / 2;
+  const rows = new Int32Array(ends.rows);
+  for (let d = 0; d < half; d++) {
+    rows[make.places[0]![d]! - make.inner] = d;
+    rows[make.places[elements]![d]! - make.inner] = half + d;
+  }
+  return rows;
 }
 
-function transposed(T: Float64Array, rows: number, columns: number): Float64Array {
+/** The given rows of T, column by column. */
+function byColumns(T: Float64Array, rows: Int32Array, columns: number): Float64Array {
   const result = new Float64Array(T.length);
-  for (let i = 0; i < rows; i++) {
-    for (let j = 0; j < columns; j++) result[j * rows + i] = T[i * columns + j]!;
+  let at = 0;
+  for (let j = 0; j < columns; j++) {
+    for (const row of rows) result[at++] = T[row * columns + j]!;
   }
   return result;
 }
 
-/**
- * Place of each displacement of a chain's stations, station by station, among its inner unknowns and then its
- * ends; −1 for one that does not exist.
- */
-export function stationPlaces(chain: ModelChain): Int32Array[] {
-  const { elements, directions, ends } = chain;
-  const half = ends.rows / 2;
-  const inner = innerCount(chain);
-  return Array.from({ length: elements + 1 }, (_, station) =>
-    Int32Array.from({ length: half }, (_unused, d) => {
-      if (station === 0) return inner + d;
-      if (station === elements) return inner + half + d;
-      const at = directions.indexOf(d);
-      return at < 0 ? -1 : (station - 1) * directions.length + at;
-    }),
-  );
-}
-
 /** Σ of one element's matrix over the elements of a chain, inner unknowns first, row by row. */
-export function chainMatrix(chain: ModelChain, element: Float64Array): Float64Array {
-  const places = stationPlaces(chain);
-  const rows = chain.ends.rows;
-  const n = innerCount(chain) + rows;
+export function chainMatrix(
+  { make, ends, elements }: ModelChain,
+  element: Float64Array,
+): Float64Array {
+  const n = make.inner + ends.rows;
   const result = new Float64Array(n * n);
-  for (let k = 0; k < chain.elements; k++) {
-    const at = [...places[k]!, ...places[k + 1]!];
-    for (let i = 0; i < rows; i++) {
-      for (let j = 0; j < rows; j++) {
-        if (at[i]! >= 0 && at[j]! >= 0) result[at[i]! * n + at[j]!]! += element[i * rows + j]!;
+  for (let k = 0; k < elements; k++) {
+    const at = [...make.places[k]!, ...make.places[k + 1]!];
+    for (let i = 0; i < ends.rows; i++) {
+      for (let j = 0; j < ends.rows; j++) {
+        if (at[i]! >= 0 && at[j]! >= 0) result[at[i]! * n + at[j]!]! += element[i * ends.rows + j]!;
       }
     }
   }

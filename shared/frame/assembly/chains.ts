@@ -5,7 +5,7 @@ import type { GroupDisplacement, GroupFreedoms } from '../freedoms/GroupFreedoms
 import { add, scale } from '../vector3.ts';
 import { carriedBy } from './carriers.ts';
 import type { Carriers } from './carriers.ts';
-import type { DividedPart, ModelChain, Segment, Tie } from './FrameModel.ts';
+import type { ChainMake, DividedPart, ModelChain, Segment, Tie } from './FrameModel.ts';
 
 /** Elements of one chain at most: its inner part is a dense matrix, whose work grows with the square. */
 const MOST_ELEMENTS = 5;
@@ -28,8 +28,11 @@ export function inModel(axes: readonly Vector3[], i: number, exists: Uint8Array)
   return share > 0.5;
 }
 
-/** A chain before its inner unknowns are numbered. */
-type ChainDraft = Omit<ModelChain, 'inner'>;
+/** Chains of one make before their inner unknowns are numbered. */
+interface MakeDraft {
+  readonly make: ChainMake;
+  readonly chains: Omit<ModelChain, 'inner' | 'make'>[];
+}
 
 /**
  * Numbers what is left of a frame's unknowns, joints' and members' own, and lays chains between them.
@@ -45,57 +48,90 @@ export function layChains(
   exists: Uint8Array,
   ties: Tie[],
 ): { chains: ModelChain[][]; joints: number; free: number } {
-  const makes = new Map<string, ChainDraft[]>();
+  const makes = new Map<string, MakeDraft>();
   parts.forEach((part, i) => {
     const { member, axes, divisions } = part;
     const [start, end] = ends[i]!;
     const last = endTerms(part, 'end', end!, freedoms, ties);
-    const all = member.kind === 'bar' ? [0, 1, 2] : [0, 1, 2, 3, 4, 5];
-    const directions = all.filter((d) => inModel([axes.x, axes.y, axes.z], d, exists));
+    const displacements = member.kind === 'bar' ? [0, 1, 2] : [0, 1, 2, 3, 4, 5];
+    const inSet = displacements.map((d) => inModel([axes.x, axes.y, axes.z], d, exists));
     const count = Math.ceil(divisions / MOST_ELEMENTS);
     let before = endTerms(part, 'start', start!, freedoms, ties);
     let from = 0;
     for (let c = 0; c < count; c++) {
       const elements = Math.floor(((c + 1) * divisions) / count) - from;
       const after =
-        c === count - 1
-          ? last
-          : stationTerms(part, from + elements, directions, carriers, freedoms);
-      const make = `${part.make} ${elements} ${directions.join('')}`;
-      let drafts = makes.get(make);
+        c === count - 1 ? last : stationTerms(part, from + elements, inSet, carriers, freedoms);
+      const key = `${part.make} ${elements} ${inSet.join()}`;
+      let drafts = makes.get(key);
       if (drafts === undefined) {
-        drafts = [];
-        makes.set(make, drafts);
+        drafts = { make: chainMake(part, elements, inSet), chains: [] };
+        makes.set(key, drafts);
       }
-      drafts.push({ part, from, elements, ends: combine([...before, ...after]), directions });
+      const draft = { part, from, elements, ends: combine([...before, ...after]) };
+      drafts.chains.push(draft);
       before = after;
       from += elements;
     }
   });
   const joints = freedoms.meanings.length;
   let free = joints;
-  const chains = [...makes.values()].map((drafts) =>
+  const chains = [...makes.values()].map(({ make, chains: drafts }) =>
     drafts.map((draft) => {
       const inner = free;
-      free += (draft.elements - 1) * draft.directions.length;
-      return { ...draft, inner };
+      free += make.inner;
+      return { ...draft, inner, make };
     }),
   );
   return { chains, joints, free };
+}
+
+/** Order of the unknowns of a chain of so many elements. */
+function chainMake(part: DividedPart, elements: number, exists: readonly boolean[]): ChainMake {
+  const blocks = uncoupledBlocks(part, exists.length);
+  const inner = (elements - 1) * exists.filter(Boolean).length;
+  const places = Array.from({ length: elements + 1 }, () => new Int32Array(exists.length).fill(-1));
+  let innerAt = 0;
+  let endsAt = inner;
+  for (const block of blocks) {
+    for (const d of block) places[0]![d] = endsAt++;
+    for (const d of block) places[elements]![d] = endsAt++;
+    for (let station = 1; station < elements; station++) {
+      for (const d of block) if (exists[d]) places[station]![d] = innerAt++;
+    }
+  }
+  return { blocks, exists, inner, places };
+}
+
+/** Displacements of a station by what couples them in the element matrices, ascending. */
+function uncoupledBlocks({ stiffness, mass }: DividedPart, count: number): number[][] {
+  const blockOf = Array.from({ length: count }, (_, d) => d);
+  for (let i = 0; i < 2 * count; i++) {
+    for (let j = 0; j < i; j++) {
+      const at = i * 2 * count + j;
+      if (stiffness[at] === 0 && mass[at] === 0) continue;
+      const [a, b] = [blockOf[i % count]!, blockOf[j % count]!];
+      for (let d = 0; d < count; d++)
+        if (blockOf[d] === Math.max(a, b)) blockOf[d] = Math.min(a, b);
+    }
+  }
+  return [...new Set(blockOf)].map((block) =>
+    blockOf.flatMap((other, d) => (other === block ? [d] : [])),
+  );
 }
 
 /** Unknowns of their own, in member axes, at a station between two chains of a member. */
 function stationTerms(
   { member, start, axes, segmentLength }: DividedPart,
   station: number,
-  directions: readonly number[],
+  inSet: readonly boolean[],
   carriers: Carriers,
   freedoms: GroupFreedoms,
 ): Terms[] {
   const point = add(start, scale(axes.x, station * segmentLength));
   freedoms.beginBlock();
   return carriedBy(carriers, member.start, [axes.x, axes.y, axes.z], point).map(
-    (displacement, i) => (directions.includes(i) ? [[freedoms.add(displacement), 1]] : []),
+    (displacement, i) => (inSet[i] ? [[freedoms.add(displacement), 1]] : []),
   );
 }
 
@@ -127,16 +163,12 @@ function endTerms(
 
 /** The elements of all chains, member by member. */
 export function segmentsOf(chains: readonly (readonly ModelChain[])[]): Segment[] {
-  const segments = chains.flat().flatMap(({ part, from, elements, ends, inner, directions }) => {
+  const segments = chains.flat().flatMap(({ part, from, elements, ends, inner, make }) => {
     const half = ends.rows / 2;
     const station = (s: number): Terms[] => {
       if (s === 0) return termsOf(ends, 0, half);
       if (s === elements) return termsOf(ends, half, ends.rows);
-      const first = inner + (s - 1) * directions.length;
-      return Array.from({ length: half }, (_, d) => {
-        const at = directions.indexOf(d);
-        return at < 0 ? [] : [[first + at, 1]];
-      });
+      return Array.from(make.places[s]!, (place) => (place < 0 ? [] : [[inner + place, 1]]));
     };
     return Array.from({ length: elements }, (_, k) => ({
       part,

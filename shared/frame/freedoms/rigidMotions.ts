@@ -82,7 +82,7 @@ export function rigidMotions(model: FrameModel): RigidMotion[] {
 
 /** What the stations inside a chain do in a rigid motion about a centre. */
 function addInnerMotion(
-  { part, from, elements, inner, directions }: ModelChain,
+  { part, from, elements, inner, make }: ModelChain,
   g: Row,
   centre: Vector3,
   length: number,
@@ -90,11 +90,13 @@ function addInnerMotion(
 ): void {
   const axes = [part.axes.x, part.axes.y, part.axes.z] as const;
   const omega: Vector3 = [g[3]! / length, g[4]! / length, g[5]! / length];
-  let at = inner;
-  for (let station = from + 1; station < from + elements; station++) {
-    const point = add(part.start, scale(part.axes.x, station * part.segmentLength));
+  for (let station = 1; station < elements; station++) {
+    const along = (from + station) * part.segmentLength;
+    const point = add(part.start, scale(part.axes.x, along));
     const t = add([g[0]!, g[1]!, g[2]!], cross(omega, subtract(point, centre)));
-    for (const d of directions) x[at++] = dot(axes[d % 3]!, d < 3 ? t : omega);
+    make.places[station]!.forEach((place, d) => {
+      if (place >= 0) x[inner + place] = dot(axes[d % 3]!, d < 3 ? t : omega);
+    });
   }
 }
 

@@ -1,30 +1,47 @@
 import type { Arena } from '../kernels/Arena.ts';
+import type { ChainClass } from './ChainedPair.ts';
 
-/**
- * One matrix of a class of chains, split by inner unknowns and ends and packed for `multiplyBatch`;
- * where it is diagonal (lumped mass) its diagonal alone.
- */
+/** A block of a class, and where it lies among the inner unknowns and the ends. */
+export interface BlockRange {
+  readonly inner: number;
+  readonly ends: number;
+  readonly innerFrom: number;
+  readonly endsFrom: number;
+}
+
+export function blockRanges({ blocks }: ChainClass): BlockRange[] {
+  let innerFrom = 0;
+  let endsFrom = 0;
+  return blocks.map(({ inner, ends }) => {
+    const range = { inner, ends, innerFrom, endsFrom };
+    innerFrom += inner;
+    endsFrom += ends;
+    return range;
+  });
+}
+
+/** One block of a matrix of a class, split by inner unknowns and ends and packed for `multiplyBatch`. */
+export interface PackedBlock extends BlockRange {
+  readonly innerInner: number;
+  /** Inner rows of the ends' columns, and the other way round. */
+  readonly innerEnds: number;
+  readonly endsInner: number;
+  readonly endsEnds: number;
+}
+
+/** One matrix of a class by blocks; where it is diagonal (lumped mass) its diagonal alone. */
 export type ChainMatrix =
   | { readonly kind: 'diagonal'; readonly inner: number; readonly ends: number }
-  | {
-      readonly kind: 'full';
-      readonly innerInner: number;
-      /** Inner rows of the ends' columns, and the other way round. */
-      readonly innerEnds: number;
-      readonly endsInner: number;
-      readonly endsEnds: number;
-    };
+  | { readonly kind: 'full'; readonly blocks: readonly PackedBlock[] };
 
-/** Packs the (inner + ends)² matrix `A`, row by row, inner unknowns first. */
+/** Packs K or M of a class. */
 export function packChainMatrix(
   arena: Arena,
-  A: Float64Array,
-  inner: number,
-  ends: number,
+  chainClass: ChainClass,
+  which: 'K' | 'M',
 ): ChainMatrix {
+  const { inner, ends, [which]: A } = chainClass;
   const n = inner + ends;
-  const part = (rowFrom: number, rows: number, colFrom: number, cols: number) =>
-    packTiles(arena, rows, cols, (i, j) => A[(rowFrom + i) * n + colFrom + j]!);
   if (isDiagonal(A, n)) {
     const diagonal = Float64Array.from({ length: n }, (_, i) => A[i * n + i]!);
     return {
@@ -33,13 +50,20 @@ export function packChainMatrix(
       ends: arena.place(diagonal.subarray(inner)),
     };
   }
-  return {
-    kind: 'full',
-    innerInner: part(0, inner, 0, inner),
-    innerEnds: part(0, inner, inner, ends),
-    endsInner: part(inner, ends, 0, inner),
-    endsEnds: part(inner, ends, inner, ends),
-  };
+  const blocks = blockRanges(chainClass).map((block): PackedBlock => {
+    const i = block.innerFrom;
+    const e = inner + block.endsFrom;
+    const part = (rowFrom: number, rows: number, colFrom: number, cols: number) =>
+      packTiles(arena, rows, cols, (r, c) => A[(rowFrom + r) * n + colFrom + c]!);
+    return {
+      ...block,
+      innerInner: part(i, block.inner, i, block.inner),
+      innerEnds: part(i, block.inner, e, block.ends),
+      endsInner: part(e, block.ends, i, block.inner),
+      endsEnds: part(e, block.ends, e, block.ends),
+    };
+  });
+  return { kind: 'full', blocks };
 }
 
 function isDiagonal(A: Float64Array, n: number): boolean {

@@ -16,7 +16,12 @@ export interface ChainClass {
   readonly inner: number;
   /** Displacements of both ends together, an even number. */
   readonly ends: number;
-  /** (inner + ends)², row by row, inner unknowns first; symmetric. */
+  /**
+   * Parts that neither K nor M couples (stretch, twist, bending in each plane of a straight member), in the
+   * order in which inner unknowns and ends are numbered; even numbers of ends.
+   */
+  readonly blocks: readonly { readonly inner: number; readonly ends: number }[];
+  /** (inner + ends)², row by row, inner unknowns first; symmetric, zero between blocks. */
   readonly K: Float64Array;
   readonly M: Float64Array;
   readonly chains: readonly Chain[];

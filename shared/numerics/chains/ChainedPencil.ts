@@ -2,15 +2,19 @@ import { addDiagonal, addEntries } from '../factor/factorise.ts';
 import { Elimination, PIVOT_TOL } from '../factor/Elimination.ts';
 import { ZeroPivotError } from '../factor/ZeroPivotError.ts';
 import type { Arena } from '../kernels/Arena.ts';
+import type { Kernels } from '../kernels/Kernels.ts';
 import type { SymmetricCsc } from '../sparse/SymmetricCsc.ts';
 import { entriesOf, type ChainAnalysis } from './analyseChains.ts';
 import { orderOf, type ChainClass, type ChainedPair } from './ChainedPair.ts';
 import {
+  blockRanges,
   packChainMatrix,
   packTiles,
   tiledSize,
   writeTiles,
+  type BlockRange,
   type ChainMatrix,
+  type PackedBlock,
 } from './ChainMatrix.ts';
 import { condense } from './condense.ts';
 
@@ -31,12 +35,17 @@ interface Placed {
   readonly table: number;
   readonly K: ChainMatrix;
   readonly M: ChainMatrix;
+  readonly blocks: readonly FactoredBlock[];
+  readonly S: number;
+  readonly magnitude: number;
+}
+
+/** Where one block of a class, its inner unknowns eliminated, is kept. */
+interface FactoredBlock extends BlockRange {
   readonly inverse: number;
   /** −W and its transpose. */
   readonly minusW: number;
   readonly minusWT: number;
-  readonly S: number;
-  readonly magnitude: number;
 }
 
 /** Rows over a chain's unknowns, per class, as `packRows` placed them. */
@@ -140,35 +149,50 @@ export class ChainedPencil {
     let negative = 0;
     this.#smallestInnerPivot = Infinity;
     for (const placed of this.#classes) {
-      const { chainClass, count, table } = placed;
-      const { inner, ends } = chainClass;
-      const { A, magnitude } = combined(chainClass, k, m, delta);
-      const condensed = condense(A, magnitude, inner, ends);
-      this.#smallestInnerPivot = Math.min(this.#smallestInnerPivot, condensed.smallestPivot);
-      if (condensed.smallestPivot <= tolerance) {
+      const { chainClass, count, table, S, magnitude } = placed;
+      const { ends } = chainClass;
+      this.arena.view(S, ends * ends).fill(0);
+      for (const block of placed.blocks) {
+        negative += count * this.#condense(placed, block, combined(chainClass, block, k, m, delta));
+      }
+      if (this.#smallestInnerPivot <= tolerance) {
         throw new ZeroPivotError({
           unknown: placed.first,
           sigma,
-          relativePivot: condensed.smallestPivot,
+          relativePivot: this.#smallestInnerPivot,
           motion: new Float64Array(this.n),
         });
       }
-      negative += condensed.negative * count;
-      const { inverse, W, S } = condensed;
-      writeTiles(this.arena, placed.inverse, inner, inner, (i, j) => inverse[i * inner + j]!);
-      writeTiles(this.arena, placed.minusW, inner, ends, (i, e) => -W[i * ends + e]!);
-      writeTiles(this.arena, placed.minusWT, ends, inner, (e, i) => -W[i * ends + e]!);
-      this.arena.view(placed.S, ends * ends).set(S);
-      this.arena.view(placed.magnitude, ends).set(magnitude.subarray(inner));
       const { values, scale } = this.#elimination;
-      const { S: at, magnitude: sizes } = placed;
-      kernels.addCongruent(count, table, ends, at, values, scale, sizes, this.#work);
+      kernels.addCongruent(count, table, ends, S, values, scale, magnitude, this.#work);
     }
     const { K, M } = this.pair;
     if (k !== 0) addEntries(this.#elimination, this.arena.f64, K, k);
     if (m !== 0) addEntries(this.#elimination, this.arena.f64, M, m);
     if (delta !== 0) addDiagonal(this.#elimination, this.arena.f64, this.#massShift(delta));
     return negative + this.#eliminate(sigma);
+  }
+
+  /** Eliminates the inner unknowns of one block. Returns the negative pivots of one chain. */
+  #condense(
+    { chainClass, S, magnitude }: Placed,
+    block: FactoredBlock,
+    given: { A: Float64Array; magnitude: Float64Array },
+  ): number {
+    const { arena } = this;
+    const { inner, ends, endsFrom } = block;
+    const condensed = condense(given.A, given.magnitude, inner, ends);
+    const { inverse, W } = condensed;
+    writeTiles(arena, block.inverse, inner, inner, (i, j) => inverse[i * inner + j]!);
+    writeTiles(arena, block.minusW, inner, ends, (i, e) => -W[i * ends + e]!);
+    writeTiles(arena, block.minusWT, ends, inner, (e, i) => -W[i * ends + e]!);
+    for (let a = 0; a < ends; a++) {
+      const row = S / 8 + (endsFrom + a) * chainClass.ends + endsFrom;
+      arena.f64.set(condensed.S.subarray(a * ends, (a + 1) * ends), row);
+    }
+    arena.f64.set(given.magnitude.subarray(inner), magnitude / 8 + endsFrom);
+    this.#smallestInnerPivot = Math.min(this.#smallestInnerPivot, condensed.smallestPivot);
+    return condensed.negative;
   }
 
   /** δ diag(M) at the joints, and 1 where there is no mass. */
@@ -213,19 +237,42 @@ export class ChainedPencil {
     const { kernels, f64 } = this.arena;
     f64.copyWithin(y / 8, x / 8, x / 8 + this.pair.joints);
     f64.fill(0, y / 8 + this.n, y / 8 + this.size);
-    this.#inBatches((placed, from, count) => {
-      const { inner, ends } = placed.chainClass;
+    this.#inBatches(({ chainClass: { inner, ends }, blocks, first, table }, from, count) => {
       if (inner === 0) return;
-      const F = x + 8 * (placed.first + from * inner);
-      kernels.multiplyBatch(count, F, inner, placed.minusWT, ends, this.#ends, false);
-      kernels.scatterEnds(count, placed.table + 24 * from, ends, this.#ends, y);
+      const F = x + 8 * (first + from * inner);
+      const B = this.#ends;
+      for (const { inner: inputs, ends: outputs, innerFrom, endsFrom, minusWT } of blocks) {
+        kernels.multiplyBatch(
+          count,
+          F + 8 * innerFrom,
+          8 * inner,
+          inputs,
+          minusWT,
+          outputs,
+          B + 8 * endsFrom,
+          8 * ends,
+          false,
+        );
+      }
+      kernels.scatterEnds(count, table + 24 * from, ends, B, y);
     });
     this.#elimination.solve(y, y);
-    this.#inBatches((placed, from, count) => {
-      const { inner } = placed.chainClass;
-      if (inner === 0) return;
-      const offset = 8 * (placed.first + from * inner);
-      kernels.multiplyBatch(count, x + offset, inner, placed.inverse, inner, y + offset, false);
+    this.#inBatches(({ chainClass: { inner }, blocks, first }, from, count) => {
+      const offset = 8 * (first + from * inner);
+      for (const { inner: size, innerFrom, inverse } of blocks) {
+        const at = offset + 8 * innerFrom;
+        kernels.multiplyBatch(
+          count,
+          x + at,
+          8 * inner,
+          size,
+          inverse,
+          size,
+          y + at,
+          8 * inner,
+          false,
+        );
+      }
     });
     this.#addChainMotion(y, y);
   }
@@ -233,12 +280,24 @@ export class ChainedPencil {
   /** u_i −= W T x, for the inner unknowns u of y. */
   #addChainMotion(x: number, y: number): void {
     const { kernels } = this.arena;
-    this.#inBatches((placed, from, count) => {
-      const { inner, ends } = placed.chainClass;
+    this.#inBatches(({ chainClass: { inner, ends }, blocks, first, table }, from, count) => {
       if (inner === 0) return;
-      kernels.gatherEnds(count, placed.table + 24 * from, ends, x, this.#ends);
-      const at = y + 8 * (placed.first + from * inner);
-      kernels.multiplyBatch(count, this.#ends, ends, placed.minusW, inner, at, true);
+      const B = this.#ends;
+      kernels.gatherEnds(count, table + 24 * from, ends, x, B);
+      const Y = y + 8 * (first + from * inner);
+      for (const { inner: outputs, ends: inputs, innerFrom, endsFrom, minusW } of blocks) {
+        kernels.multiplyBatch(
+          count,
+          B + 8 * endsFrom,
+          8 * ends,
+          inputs,
+          minusW,
+          outputs,
+          Y + 8 * innerFrom,
+          8 * inner,
+          true,
+        );
+      }
     });
   }
 
@@ -267,22 +326,19 @@ export class ChainedPencil {
       const { inner, ends } = placed.chainClass;
       const matrix = placed[which];
       const table = placed.table + 24 * from;
-      const offset = 8 * (placed.first + from * inner);
-      const out = this.#ends + 8 * BATCH * ends;
-      kernels.gatherEnds(count, table, ends, x, this.#ends);
+      const F = x + 8 * (placed.first + from * inner);
+      const Y = y + 8 * (placed.first + from * inner);
+      const B = this.#ends;
+      const C = B + 8 * BATCH * ends;
+      kernels.gatherEnds(count, table, ends, x, B);
       if (matrix.kind === 'diagonal') {
-        kernels.multiplyDiagonals(count, inner, matrix.inner, x + offset, y + offset);
-        kernels.multiplyDiagonals(count, ends, matrix.ends, this.#ends, out);
+        kernels.multiplyDiagonals(count, inner, matrix.inner, F, Y);
+        kernels.multiplyDiagonals(count, ends, matrix.ends, B, C);
       } else {
-        const { innerInner, innerEnds, endsInner, endsEnds } = matrix;
-        kernels.multiplyBatch(count, this.#ends, ends, endsEnds, ends, out, false);
-        if (inner > 0) {
-          kernels.multiplyBatch(count, x + offset, inner, endsInner, ends, out, true);
-          kernels.multiplyBatch(count, x + offset, inner, innerInner, inner, y + offset, false);
-          kernels.multiplyBatch(count, this.#ends, ends, innerEnds, inner, y + offset, true);
-        }
+        for (const block of matrix.blocks)
+          multiplyBlock(kernels, count, block, inner, ends, F, B, Y, C);
       }
-      kernels.scatterEnds(count, table, ends, out, y);
+      kernels.scatterEnds(count, table, ends, C, y);
     });
   }
 
@@ -334,8 +390,19 @@ export class ChainedPencil {
       const row = rows[c]!;
       const F = x + 8 * (placed.first + from * inner);
       kernels.gatherEnds(count, placed.table + 24 * from, ends, x, this.#ends);
-      kernels.multiplyBatch(count, this.#ends, ends, row.ends, row.outputs, out, false);
-      if (inner > 0) kernels.multiplyBatch(count, F, inner, row.inner, row.outputs, out, true);
+      const width = 8 * row.outputs;
+      kernels.multiplyBatch(
+        count,
+        this.#ends,
+        8 * ends,
+        ends,
+        row.ends,
+        row.outputs,
+        out,
+        width,
+        false,
+      );
+      kernels.multiplyBatch(count, F, 8 * inner, inner, row.inner, row.outputs, out, width, true);
       use({
         classIndex: c,
         from,
@@ -371,23 +438,59 @@ export class ChainedPencil {
   }
 }
 
-/** kK + mM + δ diag(M) of a chain, 1 on the diagonal of inner unknowns without mass where δ is given. */
+/** One block's part of (Y, C) = A (F, B), inner unknowns and ends. */
+function multiplyBlock(
+  kernels: Kernels,
+  count: number,
+  block: PackedBlock,
+  inner: number,
+  ends: number,
+  F: number,
+  B: number,
+  Y: number,
+  C: number,
+): void {
+  const { inner: m, ends: e, innerInner, innerEnds, endsInner, endsEnds } = block;
+  const [f, y] = [F + 8 * block.innerFrom, Y + 8 * block.innerFrom];
+  const [b, c] = [B + 8 * block.endsFrom, C + 8 * block.endsFrom];
+  const [i, o] = [8 * inner, 8 * ends];
+  kernels.multiplyBatch(count, b, o, e, endsEnds, e, c, o, false);
+  if (m === 0) return;
+  kernels.multiplyBatch(count, f, i, m, endsInner, e, c, o, true);
+  kernels.multiplyBatch(count, f, i, m, innerInner, m, y, i, false);
+  kernels.multiplyBatch(count, b, o, e, innerEnds, m, y, i, true);
+}
+
+/**
+ * kK + mM + δ diag(M) of one block of a chain, inner unknowns first; 1 on the diagonal of inner unknowns without
+ * mass where δ is given.
+ */
 function combined(
   { inner, ends, K, M }: ChainClass,
+  block: BlockRange,
   k: number,
   m: number,
   delta: number,
 ): { A: Float64Array; magnitude: Float64Array } {
   const n = inner + ends;
-  const A = K.map((value, i) => k * value + m * M[i]!);
-  const magnitude = new Float64Array(n);
-  for (let i = 0; i < n; i++) {
-    const at = i * (n + 1);
-    magnitude[i] = Math.abs(k * K[at]!) + Math.abs(m * M[at]!);
+  const size = block.inner + block.ends;
+  const A = new Float64Array(size * size);
+  const magnitude = new Float64Array(size);
+  const place = (i: number) =>
+    i < block.inner ? block.innerFrom + i : inner + block.endsFrom + i - block.inner;
+  for (let i = 0; i < size; i++) {
+    const row = place(i) * n;
+    for (let j = 0; j < size; j++) {
+      const at = row + place(j);
+      A[i * size + j] = k * K[at]! + m * M[at]!;
+    }
+    const diagonal = row + place(i);
+    const mass = M[diagonal]!;
+    magnitude[i] = Math.abs(k * K[diagonal]!) + Math.abs(m * mass);
     // At the ends it is added to the joints, in whose axes the sum is regular.
-    if (delta === 0 || i >= inner) continue;
-    A[at]! += M[at] === 0 ? 1 : delta * M[at]!;
-    if (M[at] === 0) magnitude[i] = 1;
+    if (delta === 0 || i >= block.inner) continue;
+    A[i * size + i]! += mass === 0 ? 1 : delta * mass;
+    if (mass === 0) magnitude[i] = 1;
   }
   return { A, magnitude };
 }
@@ -406,7 +509,7 @@ function placeClass(
   first: number,
   destinations: Int32Array,
 ): Placed {
-  const { inner, ends, chains } = chainClass;
+  const { ends, chains } = chainClass;
   let widths = 0;
   let nonZero = 0;
   for (const { dofs, T } of chains) {
@@ -447,11 +550,14 @@ function placeClass(
     count: chains.length,
     first,
     table,
-    K: packChainMatrix(arena, chainClass.K, inner, ends),
-    M: packChainMatrix(arena, chainClass.M, inner, ends),
-    inverse: arena.numbers(tiledSize(inner, inner)),
-    minusW: arena.numbers(tiledSize(inner, ends)),
-    minusWT: arena.numbers(tiledSize(ends, inner)),
+    K: packChainMatrix(arena, chainClass, 'K'),
+    M: packChainMatrix(arena, chainClass, 'M'),
+    blocks: blockRanges(chainClass).map((block) => ({
+      ...block,
+      inverse: arena.numbers(tiledSize(block.inner, block.inner)),
+      minusW: arena.numbers(tiledSize(block.inner, block.ends)),
+      minusWT: arena.numbers(tiledSize(block.ends, block.inner)),
+    })),
     S: arena.numbers(ends * ends),
     magnitude: arena.numbers(ends),
   };

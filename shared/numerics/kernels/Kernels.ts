@@ -73,16 +73,19 @@ export interface Kernels {
     y: number,
   ): void;
   /**
-   * Y = F Gᵀ, or Y += F Gᵀ to accumulate; rows of F and Y are `count` vectors side by side.
+   * Y = F Gᵀ, or Y += F Gᵀ to accumulate; rows of F and Y are `count` vectors, `strideF` and `strideY`
+   * bytes apart.
    *   G  outputs × inputs in tiles of four rows, padded with zeros
    */
   multiplyBatch(
     count: number,
     F: number,
+    strideF: number,
     inputs: number,
     G: number,
     outputs: number,
     Y: number,
+    strideY: number,
     accumulate: boolean,
   ): void;
   /** y = d ∘ x for `count` vectors of `size`. */

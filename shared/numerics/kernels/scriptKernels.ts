@@ -352,9 +352,11 @@ export function scriptKernels(memory: MemoryViews): Kernels {
       }
     },
 
-    multiplyBatch(count, FAt, inputs, GAt, outputs, YAt, accumulate) {
+    multiplyBatch(count, FAt, strideF, inputs, GAt, outputs, YAt, strideY, accumulate) {
       const f = memory.f64;
-      for (let m = 0, F = FAt >>> 3, Y = YAt >>> 3; m < count; m++, F += inputs, Y += outputs) {
+      for (let m = 0; m < count; m++) {
+        const F = (FAt + m * strideF) >>> 3;
+        const Y = (YAt + m * strideY) >>> 3;
         let g = GAt >>> 3;
         for (let p = 0; p < outputs; p += 4) {
           const at = Y + p;

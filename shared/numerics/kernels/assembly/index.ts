@@ -6,6 +6,13 @@
  * Panels are packed in tiles of four rows: column k of a tile holds its four rows side by side.
  */
 
+/** Zeros for so many bytes, a multiple of 16: short stretches, for which a bulk operation costs more. */
+function clear(at: usize, bytes: usize): void {
+  const end = at + bytes;
+  const zero = f64x2.splat(0);
+  for (; at < end; at += 16) v128.store(at, zero);
+}
+
 /** C −= L Wᵀ over 4 × 4:  C[c][r] −= Σ_k L[k][r] · W[k][c], k ascending. */
 function subtractBlock(L: usize, W: usize, length: i32, C: usize): void {
   let c00 = f64x2.splat(0);
@@ -284,7 +291,7 @@ export function backSweep(last: i32, table: usize, rows: usize, x: usize, work: 
     let row = rows + ((<usize>load<u32>(entry, 12)) << 2);
     const panel = <usize>load<u32>(entry, 16);
     const stride = (<usize>columns) << 5;
-    memory.fill(work, 0, (<usize>columns) << 4);
+    clear(work, (<usize>columns) << 4);
     let tile = panel + <usize>(columns >> 2) * stride;
     let i: i32 = 0;
     for (; i + 1 < below; i += 2) {
@@ -445,14 +452,15 @@ function loadHigh(y: usize, width: i32): v128 {
 export function multiplyBatch(
   count: i32,
   F: usize,
+  strideF: usize,
   inputs: i32,
   G: usize,
   outputs: i32,
   Y: usize,
+  strideY: usize,
   accumulate: bool,
 ): void {
-  const strideF = (<usize>inputs) << 3;
-  const strideY = (<usize>outputs) << 3;
+  const length = (<usize>inputs) << 3;
   let m: i32 = 0;
   for (; m + 3 < count; m += 4) {
     let g = G;
@@ -495,7 +503,7 @@ export function multiplyBatch(
       let f1 = f0 + strideF;
       let f2 = f1 + strideF;
       let f3 = f2 + strideF;
-      const end = f1;
+      const end = f0 + length;
       while (f0 < end) {
         const g0 = v128.load(g);
         const g1 = v128.load(g, 16);
@@ -552,7 +560,7 @@ export function multiplyBatch(
         }
       }
       let f = F + <usize>m * strideF;
-      const end = f + strideF;
+      const end = f + length;
       while (f < end) {
         const s = v128.load64_splat(f);
         c0 = f64x2.add(c0, f64x2.mul(v128.load(g), s));
@@ -587,7 +595,7 @@ export function gatherEnds(count: i32, table: usize, ends: i32, x: usize, B: usi
     let entry = <usize>load<u32>(table, 4);
     const last = entry + ((<usize>load<u32>(table)) << 4);
     table += 24;
-    memory.fill(B, 0, size);
+    clear(B, size);
     while (entry < last) {
       const at = B + <usize>load<u32>(entry, 12);
       store<f64>(at, load<f64>(at) + load<f64>(entry) * load<f64>(x + <usize>load<u32>(entry, 8)));
@@ -630,7 +638,7 @@ export function addCongruent(
     table += 24;
     for (let b: i32 = 0; b < width; b++) {
       // R = S T_b; most entries of T are zero.
-      memory.fill(work, 0, size);
+      clear(work, size);
       const Tb = T + <usize>b * size;
       let sizeOfB: f64 = 0;
       for (let i: i32 = 0; i < ends; i++) {
