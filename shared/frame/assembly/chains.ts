@@ -115,9 +115,13 @@ function uncoupledBlocks({ stiffness, mass }: DividedPart, count: number): numbe
         if (blockOf[d] === Math.max(a, b)) blockOf[d] = Math.min(a, b);
     }
   }
-  return [...new Set(blockOf)].map((block) =>
+  const parts = [...new Set(blockOf)].map((block) =>
     blockOf.flatMap((other, d) => (other === block ? [d] : [])),
   );
+  // Stretch and twist alone are too small for a block of their own; together they fill one.
+  const alone = parts.filter((part) => part.length === 1).flat();
+  const larger = parts.filter((part) => part.length > 1);
+  return alone.length > 0 ? [alone, ...larger] : larger;
 }
 
 /** Unknowns of their own, in member axes, at a station between two chains of a member. */

@@ -19,7 +19,7 @@ import {
 import { condense } from './condense.ts';
 
 /** Chains worked on together: what they need fits into the first cache. */
-const BATCH = 64;
+const BATCH = 512;
 /**
  * A pivot inside a chain below this share of its diagonal is one of its own frequencies with the ends
  * held: its inverse would then lose that many digits, so another shift is taken.

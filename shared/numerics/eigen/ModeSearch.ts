@@ -11,7 +11,7 @@ import { shiftBelow } from './shiftBelow.ts';
  * Residual norm, relative to θ, at which a Ritz pair counts as converged: the error of λ is its
  * square over the gap, that of the shape falls by a further factor in the purification step.
  */
-const CONVERGED_TOL = 1e-10;
+const CONVERGED_TOL = 1e-8;
 /** The same for the neighbour beyond the wanted ones, which only places the gap (CLEAR_GAP). */
 const NEIGHBOUR_TOL = 1e-4;
 /** Dimension of one Krylov space: room for the wanted and their convergence, memory for the rest. */

@@ -118,13 +118,13 @@ export interface Kernels {
   ): void;
   /** xᵀy; n a multiple of 4. */
   dot(n: number, x: number, y: number): number;
-  /** y += factor x; n even. */
+  /** y += factor x; n a multiple of 4. */
   addScaled(n: number, factor: number, x: number, y: number): void;
-  /** x ← factor x; n even. */
+  /** x ← factor x; n a multiple of 4. */
   multiply(n: number, factor: number, x: number): void;
   /** result[j] = v_jᵀ x for `count` vectors `stride` bytes apart; n a multiple of 4. */
   dots(n: number, V: number, stride: number, count: number, x: number, result: number): void;
-  /** y −= Σ c[j] v_j; n even. */
+  /** y −= Σ c[j] v_j; n a multiple of 4. */
   subtractCombination(
     n: number,
     V: number,

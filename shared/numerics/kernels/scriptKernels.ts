@@ -356,26 +356,31 @@ export function scriptKernels(memory: MemoryViews): Kernels {
       const f = memory.f64;
       for (let m = 0; m < count; m++) {
         const F = (FAt + m * strideF) >>> 3;
-        const Y = (YAt + m * strideY) >>> 3;
+        const end = F + inputs;
+        let y = (YAt + m * strideY) >>> 3;
+        const last = y + outputs;
         let g = GAt >>> 3;
-        for (let p = 0; p < outputs; p += 4) {
-          const at = Y + p;
-          const width = outputs - p;
-          let s0 = accumulate ? f[at]! : 0;
-          let s1 = accumulate && width > 1 ? f[at + 1]! : 0;
-          let s2 = accumulate && width > 2 ? f[at + 2]! : 0;
-          let s3 = accumulate && width > 3 ? f[at + 3]! : 0;
-          for (let q = F; q < F + inputs; q++, g += 4) {
+        for (; y + 3 < last; y += 4) {
+          let s0 = accumulate ? f[y]! : 0;
+          let s1 = accumulate ? f[y + 1]! : 0;
+          let s2 = accumulate ? f[y + 2]! : 0;
+          let s3 = accumulate ? f[y + 3]! : 0;
+          for (let q = F; q < end; q++, g += 4) {
             const v = f[q]!;
             s0 += f[g]! * v;
             s1 += f[g + 1]! * v;
             s2 += f[g + 2]! * v;
             s3 += f[g + 3]! * v;
           }
-          f[at] = s0;
-          if (width > 1) f[at + 1] = s1;
-          if (width > 2) f[at + 2] = s2;
-          if (width > 3) f[at + 3] = s3;
+          f[y] = s0;
+          f[y + 1] = s1;
+          f[y + 2] = s2;
+          f[y + 3] = s3;
+        }
+        for (; y < last; y++, g++) {
+          let sum = accumulate ? f[y]! : 0;
+          for (let q = F, at = g; q < end; q++, at += 4) sum += f[at]! * f[q]!;
+          f[y] = sum;
         }
       }
     },
@@ -458,8 +463,40 @@ export function scriptKernels(memory: MemoryViews): Kernels {
       for (let i = 0, p = x >>> 3; i < n; i++) f[p + i]! *= factor;
     },
 
-    dots(n, V, stride, count, x, result) {
-      for (let j = 0; j < count; j++) memory.f64[(result >>> 3) + j] = dot(n, V + j * stride, x);
+    dots(n, V, stride, count, xAt, result) {
+      const f = memory.f64;
+      let j = 0;
+      // Two vectors to one sweep of x: sums of four more would not fit the registers.
+      for (; j + 1 < count; j += 2) {
+        let v = (V + j * stride) >>> 3;
+        let u = (V + (j + 1) * stride) >>> 3;
+        let x = xAt >>> 3;
+        let a0 = 0;
+        let a1 = 0;
+        let a2 = 0;
+        let a3 = 0;
+        let b0 = 0;
+        let b1 = 0;
+        let b2 = 0;
+        let b3 = 0;
+        for (const end = x + n; x < end; x += 4, v += 4, u += 4) {
+          const x0 = f[x]!;
+          const x1 = f[x + 1]!;
+          const x2 = f[x + 2]!;
+          const x3 = f[x + 3]!;
+          a0 += f[v]! * x0;
+          a1 += f[v + 1]! * x1;
+          a2 += f[v + 2]! * x2;
+          a3 += f[v + 3]! * x3;
+          b0 += f[u]! * x0;
+          b1 += f[u + 1]! * x1;
+          b2 += f[u + 2]! * x2;
+          b3 += f[u + 3]! * x3;
+        }
+        f[(result >>> 3) + j] = a0 + a2 + (a1 + a3);
+        f[(result >>> 3) + j + 1] = b0 + b2 + (b1 + b3);
+      }
+      if (j < count) f[(result >>> 3) + j] = dot(n, V + j * stride, xAt);
     },
 
     subtractCombination(n, V, stride, count, c, y) {

@@ -434,19 +434,25 @@ export function multiplySparse(
   }
 }
 
-/** Stores the first `width` < 4 numbers of a row. */
-function storePart(y: usize, width: i32, a: v128, b: v128): void {
-  store<f64>(y, f64x2.extract_lane(a, 0));
-  if (width > 1) store<f64>(y, f64x2.extract_lane(a, 1), 8);
-  if (width > 2) store<f64>(y, f64x2.extract_lane(b, 0), 16);
-}
-
-function loadLow(y: usize, width: i32): v128 {
-  return f64x2(load<f64>(y), width > 1 ? load<f64>(y, 8) : 0);
-}
-
-function loadHigh(y: usize, width: i32): v128 {
-  return f64x2(width > 2 ? load<f64>(y, 16) : 0, 0);
+/** Columns `from` … `from + width − 1` (fewer than four) of one row of Y, one number at a time. */
+function multiplyRest(
+  f: usize,
+  length: usize,
+  g: usize,
+  width: i32,
+  y: usize,
+  accumulate: bool,
+): void {
+  for (let r: i32 = 0; r < width; r++) {
+    let sum = accumulate ? load<f64>(y) : 0;
+    let at = g + ((<usize>r) << 3);
+    for (let q: usize = 0; q < length; q += 8) {
+      sum += load<f64>(at) * load<f64>(f + q);
+      at += 32;
+    }
+    store<f64>(y, sum);
+    y += 8;
+  }
 }
 
 export function multiplyBatch(
@@ -465,11 +471,13 @@ export function multiplyBatch(
   for (; m + 3 < count; m += 4) {
     let g = G;
     let y0 = Y + <usize>m * strideY;
-    for (let p: i32 = 0; p < outputs; p += 4) {
+    const first = F + <usize>m * strideF;
+    const end = first + length;
+    let p: i32 = 0;
+    for (; p + 3 < outputs; p += 4) {
       const y1 = y0 + strideY;
       const y2 = y1 + strideY;
       const y3 = y2 + strideY;
-      const width = outputs - p;
       let c00 = f64x2.splat(0);
       let c01 = f64x2.splat(0);
       let c10 = f64x2.splat(0);
@@ -479,31 +487,19 @@ export function multiplyBatch(
       let c30 = f64x2.splat(0);
       let c31 = f64x2.splat(0);
       if (accumulate) {
-        if (width >= 4) {
-          c00 = v128.load(y0);
-          c01 = v128.load(y0, 16);
-          c10 = v128.load(y1);
-          c11 = v128.load(y1, 16);
-          c20 = v128.load(y2);
-          c21 = v128.load(y2, 16);
-          c30 = v128.load(y3);
-          c31 = v128.load(y3, 16);
-        } else {
-          c00 = loadLow(y0, width);
-          c01 = loadHigh(y0, width);
-          c10 = loadLow(y1, width);
-          c11 = loadHigh(y1, width);
-          c20 = loadLow(y2, width);
-          c21 = loadHigh(y2, width);
-          c30 = loadLow(y3, width);
-          c31 = loadHigh(y3, width);
-        }
+        c00 = v128.load(y0);
+        c01 = v128.load(y0, 16);
+        c10 = v128.load(y1);
+        c11 = v128.load(y1, 16);
+        c20 = v128.load(y2);
+        c21 = v128.load(y2, 16);
+        c30 = v128.load(y3);
+        c31 = v128.load(y3, 16);
       }
-      let f0 = F + <usize>m * strideF;
+      let f0 = first;
       let f1 = f0 + strideF;
       let f2 = f1 + strideF;
       let f3 = f2 + strideF;
-      const end = f0 + length;
       while (f0 < end) {
         const g0 = v128.load(g);
         const g1 = v128.load(g, 16);
@@ -525,57 +521,84 @@ export function multiplyBatch(
         f2 += 8;
         f3 += 8;
       }
-      if (width >= 4) {
-        v128.store(y0, c00);
-        v128.store(y0, c01, 16);
-        v128.store(y1, c10);
-        v128.store(y1, c11, 16);
-        v128.store(y2, c20);
-        v128.store(y2, c21, 16);
-        v128.store(y3, c30);
-        v128.store(y3, c31, 16);
-      } else {
-        storePart(y0, width, c00, c01);
-        storePart(y1, width, c10, c11);
-        storePart(y2, width, c20, c21);
-        storePart(y3, width, c30, c31);
-      }
+      v128.store(y0, c00);
+      v128.store(y0, c01, 16);
+      v128.store(y1, c10);
+      v128.store(y1, c11, 16);
+      v128.store(y2, c20);
+      v128.store(y2, c21, 16);
+      v128.store(y3, c30);
+      v128.store(y3, c31, 16);
       y0 += 32;
+    }
+    const width = outputs - p;
+    if (width == 2) {
+      const y1 = y0 + strideY;
+      const y2 = y1 + strideY;
+      const y3 = y2 + strideY;
+      let c0 = f64x2.splat(0);
+      let c1 = f64x2.splat(0);
+      let c2 = f64x2.splat(0);
+      let c3 = f64x2.splat(0);
+      if (accumulate) {
+        c0 = v128.load(y0);
+        c1 = v128.load(y1);
+        c2 = v128.load(y2);
+        c3 = v128.load(y3);
+      }
+      let f0 = first;
+      let f1 = f0 + strideF;
+      let f2 = f1 + strideF;
+      let f3 = f2 + strideF;
+      while (f0 < end) {
+        const g0 = v128.load(g);
+        c0 = f64x2.add(c0, f64x2.mul(g0, v128.load64_splat(f0)));
+        c1 = f64x2.add(c1, f64x2.mul(g0, v128.load64_splat(f1)));
+        c2 = f64x2.add(c2, f64x2.mul(g0, v128.load64_splat(f2)));
+        c3 = f64x2.add(c3, f64x2.mul(g0, v128.load64_splat(f3)));
+        g += 32;
+        f0 += 8;
+        f1 += 8;
+        f2 += 8;
+        f3 += 8;
+      }
+      v128.store(y0, c0);
+      v128.store(y1, c1);
+      v128.store(y2, c2);
+      v128.store(y3, c3);
+    } else if (width > 0) {
+      let f = first;
+      for (let i = 0; i < 4; i++) {
+        multiplyRest(f, length, g, width, y0, accumulate);
+        f += strideF;
+        y0 += strideY;
+      }
     }
   }
   for (; m < count; m++) {
     let g = G;
     let y = Y + <usize>m * strideY;
-    for (let p: i32 = 0; p < outputs; p += 4) {
-      const width = outputs - p;
+    const first = F + <usize>m * strideF;
+    const end = first + length;
+    let p: i32 = 0;
+    for (; p + 3 < outputs; p += 4) {
       let c0 = f64x2.splat(0);
       let c1 = f64x2.splat(0);
       if (accumulate) {
-        if (width >= 4) {
-          c0 = v128.load(y);
-          c1 = v128.load(y, 16);
-        } else {
-          c0 = loadLow(y, width);
-          c1 = loadHigh(y, width);
-        }
+        c0 = v128.load(y);
+        c1 = v128.load(y, 16);
       }
-      let f = F + <usize>m * strideF;
-      const end = f + length;
-      while (f < end) {
+      for (let f = first; f < end; f += 8) {
         const s = v128.load64_splat(f);
         c0 = f64x2.add(c0, f64x2.mul(v128.load(g), s));
         c1 = f64x2.add(c1, f64x2.mul(v128.load(g, 16), s));
         g += 32;
-        f += 8;
       }
-      if (width >= 4) {
-        v128.store(y, c0);
-        v128.store(y, c1, 16);
-      } else {
-        storePart(y, width, c0, c1);
-      }
+      v128.store(y, c0);
+      v128.store(y, c1, 16);
       y += 32;
     }
+    multiplyRest(first, length, g, outputs - p, y, accumulate);
   }
 }
 
@@ -687,18 +710,20 @@ export function dot(n: i32, x: usize, y: usize): f64 {
 
 export function addScaled(n: i32, factor: f64, x: usize, y: usize): void {
   const f = f64x2.splat(factor);
-  for (let i: i32 = 0; i < n; i += 2) {
+  for (let i: i32 = 0; i < n; i += 4) {
     v128.store(y, f64x2.add(v128.load(y), f64x2.mul(f, v128.load(x))));
-    x += 16;
-    y += 16;
+    v128.store(y, f64x2.add(v128.load(y, 16), f64x2.mul(f, v128.load(x, 16))), 16);
+    x += 32;
+    y += 32;
   }
 }
 
 export function multiply(n: i32, factor: f64, x: usize): void {
   const f = f64x2.splat(factor);
-  for (let i: i32 = 0; i < n; i += 2) {
+  for (let i: i32 = 0; i < n; i += 4) {
     v128.store(x, f64x2.mul(f, v128.load(x)));
-    x += 16;
+    v128.store(x, f64x2.mul(f, v128.load(x, 16)), 16);
+    x += 32;
   }
 }
 
@@ -770,17 +795,22 @@ export function subtractCombination(
     let v2 = v1 + stride;
     let v3 = v2 + stride;
     let out = y;
-    for (let i: i32 = 0; i < n; i += 2) {
-      let sum = f64x2.mul(c0, v128.load(v0));
-      sum = f64x2.add(sum, f64x2.mul(c1, v128.load(v1)));
-      sum = f64x2.add(sum, f64x2.mul(c2, v128.load(v2)));
-      sum = f64x2.add(sum, f64x2.mul(c3, v128.load(v3)));
-      v128.store(out, f64x2.sub(v128.load(out), sum));
-      v0 += 16;
-      v1 += 16;
-      v2 += 16;
-      v3 += 16;
-      out += 16;
+    for (let i: i32 = 0; i < n; i += 4) {
+      let a = f64x2.mul(c0, v128.load(v0));
+      let b = f64x2.mul(c0, v128.load(v0, 16));
+      a = f64x2.add(a, f64x2.mul(c1, v128.load(v1)));
+      b = f64x2.add(b, f64x2.mul(c1, v128.load(v1, 16)));
+      a = f64x2.add(a, f64x2.mul(c2, v128.load(v2)));
+      b = f64x2.add(b, f64x2.mul(c2, v128.load(v2, 16)));
+      a = f64x2.add(a, f64x2.mul(c3, v128.load(v3)));
+      b = f64x2.add(b, f64x2.mul(c3, v128.load(v3, 16)));
+      v128.store(out, f64x2.sub(v128.load(out), a));
+      v128.store(out, f64x2.sub(v128.load(out, 16), b), 16);
+      v0 += 32;
+      v1 += 32;
+      v2 += 32;
+      v3 += 32;
+      out += 32;
     }
   }
   for (; j < count; j++) {
