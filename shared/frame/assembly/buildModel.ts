@@ -5,7 +5,7 @@ import { combine } from '../freedoms/Combination.ts';
 import { GroupFreedoms } from '../freedoms/GroupFreedoms.ts';
 import type { GroupDisplacement } from '../freedoms/GroupFreedoms.ts';
 import { add, cross, dot, normalise, scale, subtract } from '../vector3.ts';
-import { carriedBy, carriersOf, GLOBAL_AXES } from './carriers.ts';
+import { carriedBy, carriersOf, GLOBAL_AXES, groupOfNode, offsetFrom } from './carriers.ts';
 import type { Carriers } from './carriers.ts';
 import { componentsOf } from './components.ts';
 import { inModel, isRotation, layChains, segmentsOf } from './chains.ts';
@@ -47,14 +47,12 @@ export function buildModel(document: FrameDocument, options: ModelOptions): Fram
   const parts = memberParts(document).map((part) => divide(part, options.divisionsOf(part)));
 
   const ends = parts.map((part) => [
-    memberEnd(carriers, part, 'start', exists),
-    memberEnd(carriers, part, 'end', exists),
+    memberEnd(part, 'start', exists),
+    memberEnd(part, 'end', exists),
   ]);
-  for (const end of ends.flat()) {
-    end.rigid.forEach((displacement, i) => {
-      if (end.joint[i] !== 0) freedoms.use(displacement);
-    });
-  }
+  parts.forEach((part, i) => {
+    for (const end of ends[i]!) useEnd(freedoms, carriers, part, end);
+  });
   const { holds, fixed, drafts } = supportTies(document.supports, carriers);
   for (const displacement of fixed) freedoms.fix(displacement);
   drafts.push(...springTies(document, carriers));
@@ -100,9 +98,11 @@ export function buildModel(document: FrameDocument, options: ModelOptions): Fram
     ties: ties.filter((tie) => tie.motion.dofs.length > 0),
     bodies,
     nodeIndex: carriers.index,
-    nodes: document.nodes.map((node) =>
-      combine(carriedBy(carriers, node.id).map((displacement) => freedoms.terms(displacement))),
-    ),
+    nodes: document.nodes.map((node) => {
+      const group = groupOfNode(carriers, node.id);
+      const offset = offsetFrom(carriers, group, carriers.at.get(node.id)!);
+      return freedoms.carried(group, GLOBAL_AXES, offset, carriers.scale, 6);
+    }),
     meanings: freedoms.meanings,
     holds,
     groupOf: carriers.groupOf,
@@ -112,22 +112,38 @@ export function buildModel(document: FrameDocument, options: ModelOptions): Fram
 }
 
 function memberEnd(
-  carriers: Carriers,
   { member, axes, start, end }: DividedPart,
   which: 'start' | 'end',
   exists: Uint8Array,
 ): MemberEnd {
-  const directions = [axes.x, axes.y, axes.z] as const;
   const point = which === 'start' ? start : end;
-  const all = carriedBy(carriers, member[which], [...directions], point);
-  const rigid = member.kind === 'bar' ? all.slice(0, 3) : all;
   const joint = member.joints?.[which];
+  if (!joint) return { which, point, joint: null };
+  const directions = [axes.x, axes.y, axes.z] as const;
   return {
-    rigid,
-    joint: rigid.map((_, i) =>
-      inModel(directions, i, exists) ? joint?.[DISPLACEMENTS[i]!] : undefined,
+    which,
+    point,
+    joint: DISPLACEMENTS.slice(0, member.kind === 'bar' ? 3 : 6).map((name, i) =>
+      inModel(directions, i, exists) ? joint[name] : undefined,
     ),
   };
+}
+
+/** A member's end uses what it is not free in. */
+function useEnd(
+  freedoms: GroupFreedoms,
+  carriers: Carriers,
+  { member, axes }: DividedPart,
+  { which, point, joint }: MemberEnd,
+): void {
+  if (joint === null && member.kind === 'beam') {
+    freedoms.useWhole(groupOfNode(carriers, member[which]));
+    return;
+  }
+  const all = carriedBy(carriers, member[which], [axes.x, axes.y, axes.z], point);
+  all.slice(0, member.kind === 'bar' ? 3 : 6).forEach((displacement, i) => {
+    if (joint?.[i] !== 0) freedoms.use(displacement);
+  });
 }
 
 function supportAxes({ axes }: Support): [Vector3, Vector3, Vector3] {

@@ -42,10 +42,20 @@ export function carriedBy(
   axes: readonly [Vector3, Vector3, Vector3] = GLOBAL_AXES,
   point?: Vector3,
 ): GroupDisplacement[] {
-  const group = carriers.groupOf[carriers.index.get(node)!]!;
-  const offset = subtract(point ?? carriers.at.get(node)!, carriers.reference[group]!);
+  const group = groupOfNode(carriers, node);
+  const offset = offsetFrom(carriers, group, point ?? carriers.at.get(node)!);
   return [
     ...axes.map((axis) => ({ group, row: translationRow(axis, offset, carriers.scale) })),
     ...axes.map((axis) => ({ group, row: rotationRow(axis, carriers.scale) })),
   ];
+}
+
+/** From the reference of the group that carries `node` to a point [m]. */
+export function offsetFrom(carriers: Carriers, group: number, point: Vector3): Vector3 {
+  return subtract(point, carriers.reference[group]!);
+}
+
+/** Rigid group of a node. */
+export function groupOfNode({ groupOf, index }: Carriers, node: string): number {
+  return groupOf[index.get(node)!]!;
 }

@@ -1,20 +1,22 @@
 import type { Vector3 } from '../../schemas/frameDocument.ts';
-import { combine } from '../freedoms/Combination.ts';
+import { combine, stacked, termsOf } from '../freedoms/Combination.ts';
 import type { Combination, Terms } from '../freedoms/Combination.ts';
-import type { GroupDisplacement, GroupFreedoms } from '../freedoms/GroupFreedoms.ts';
+import type { GroupFreedoms } from '../freedoms/GroupFreedoms.ts';
 import { add, scale } from '../vector3.ts';
-import { carriedBy } from './carriers.ts';
+import { carriedBy, groupOfNode, offsetFrom } from './carriers.ts';
 import type { Carriers } from './carriers.ts';
 import type { ChainMake, DividedPart, ModelChain, Segment, Tie } from './FrameModel.ts';
 
 /** Elements of one chain at most: its inner part is a dense matrix, whose work grows with the square. */
 const MOST_ELEMENTS = 5;
 
-/** One end of a member: its displacements in member axes, rigid or through a joint. */
+/** One end of a member, rigid on its node or through a joint. */
 export interface MemberEnd {
-  readonly rigid: readonly GroupDisplacement[];
-  /** Per displacement: undefined = rigid, 0 = free, else the joint's stiffness. */
-  readonly joint: readonly (number | undefined)[];
+  readonly which: 'start' | 'end';
+  /** Where it is, arms included [m]. */
+  readonly point: Vector3;
+  /** Per displacement: undefined = rigid, 0 = free, else the joint's stiffness; null: rigid in all. */
+  readonly joint: readonly (number | undefined)[] | null;
 }
 
 export const isRotation = (displacement: number) => displacement >= 3;
@@ -52,23 +54,25 @@ export function layChains(
   parts.forEach((part, i) => {
     const { member, axes, divisions } = part;
     const [start, end] = ends[i]!;
-    const last = endTerms(part, 'end', end!, freedoms, ties);
+    const last = endMotion(part, end!, carriers, freedoms, ties);
     const displacements = member.kind === 'bar' ? [0, 1, 2] : [0, 1, 2, 3, 4, 5];
     const inSet = displacements.map((d) => inModel([axes.x, axes.y, axes.z], d, exists));
     const count = Math.ceil(divisions / MOST_ELEMENTS);
-    let before = endTerms(part, 'start', start!, freedoms, ties);
+    let before = endMotion(part, start!, carriers, freedoms, ties);
     let from = 0;
     for (let c = 0; c < count; c++) {
       const elements = Math.floor(((c + 1) * divisions) / count) - from;
       const after =
-        c === count - 1 ? last : stationTerms(part, from + elements, inSet, carriers, freedoms);
+        c === count - 1
+          ? last
+          : combine(stationTerms(part, from + elements, inSet, carriers, freedoms));
       const key = `${part.make} ${elements} ${inSet.join()}`;
       let drafts = makes.get(key);
       if (drafts === undefined) {
         drafts = { make: chainMake(part, elements, inSet), chains: [] };
         makes.set(key, drafts);
       }
-      const draft = { part, from, elements, ends: combine([...before, ...after]) };
+      const draft = { part, from, elements, ends: stacked(before, after) };
       drafts.chains.push(draft);
       before = after;
       from += elements;
@@ -140,29 +144,39 @@ function stationTerms(
 }
 
 /** Displacements of a member's end in terms of joint unknowns; its joint's own are numbered. */
-function endTerms(
-  { member }: DividedPart,
-  which: 'start' | 'end',
-  { rigid, joint }: MemberEnd,
+function endMotion(
+  { member, axes }: DividedPart,
+  { which, point, joint }: MemberEnd,
+  carriers: Carriers,
   freedoms: GroupFreedoms,
   ties: Tie[],
-): Terms[] {
+): Combination {
+  const directions: [Vector3, Vector3, Vector3] = [axes.x, axes.y, axes.z];
+  const rows = member.kind === 'bar' ? 3 : 6;
+  if (joint === null) {
+    const group = groupOfNode(carriers, member[which]);
+    const offset = offsetFrom(carriers, group, point);
+    return freedoms.carried(group, directions, offset, carriers.scale, rows);
+  }
   freedoms.beginBlock();
-  return rigid.map((displacement, i) => {
-    const stiffness = joint[i];
-    if (stiffness === undefined) return freedoms.terms(displacement);
-    const own = freedoms.add(displacement);
-    if (stiffness > 0) {
-      ties.push({
-        owner: 'joint',
-        id: `${member.id} ${which}`,
-        motion: combine([[[own, 1], ...freedoms.terms(displacement, -1)]]),
-        stiffness,
-        turns: isRotation(i),
-      });
-    }
-    return [[own, 1]];
-  });
+  const all = carriedBy(carriers, member[which], directions, point).slice(0, rows);
+  return combine(
+    all.map((displacement, i) => {
+      const stiffness = joint[i];
+      if (stiffness === undefined) return freedoms.terms(displacement);
+      const own = freedoms.add(displacement);
+      if (stiffness > 0) {
+        ties.push({
+          owner: 'joint',
+          id: `${member.id} ${which}`,
+          motion: combine([[[own, 1], ...freedoms.terms(displacement, -1)]]),
+          stiffness,
+          turns: isRotation(i),
+        });
+      }
+      return [[own, 1]];
+    }),
+  );
 }
 
 /** The elements of all chains, member by member. */
@@ -181,12 +195,4 @@ export function segmentsOf(chains: readonly (readonly ModelChain[])[]): Segment[
     }));
   });
   return segments.sort((a, b) => a.part.index - b.part.index || a.number - b.number);
-}
-
-function termsOf({ dofs, T }: Combination, from: number, to: number): Terms[] {
-  return Array.from({ length: to - from }, (_, row) =>
-    Array.from(dofs, (dof, j) => [dof, T[(from + row) * dofs.length + j]!] as const).filter(
-      ([, coefficient]) => coefficient !== 0,
-    ),
-  );
 }

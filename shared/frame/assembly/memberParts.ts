@@ -1,4 +1,11 @@
-import type { FrameDocument, Vector3 } from '../../schemas/frameDocument.ts';
+import type {
+  FrameDocument,
+  Material,
+  Member,
+  SectionShape,
+  Vector3,
+} from '../../schemas/frameDocument.ts';
+import type { BeamProperties } from '../elements/beamProperties.ts';
 import { memberAxes } from '../memberAxes.ts';
 import { poissonRatio, shearModulus } from '../materialProperties.ts';
 import { sectionProperties } from '../sectionProperties.ts';
@@ -23,36 +30,49 @@ export function memberParts(document: FrameDocument): MemberPart[] {
   const at = nodePositions(document);
   const materials = new Map(document.materials.map((material) => [material.id, material]));
   const sections = new Map(document.sections.map((section) => [section.id, section]));
+  const shared = new Map<string, BeamProperties>();
   return document.members.map((member, index) => {
-    const start = add(at.get(member.start)!, member.startArm ?? [0, 0, 0]);
-    const end = add(at.get(member.end)!, member.endArm ?? [0, 0, 0]);
-    const material = materials.get(member.material)!;
-    const { A, Iy, Iz, Iyz, J, ky, kz } = sectionProperties(
-      sections.get(member.section)!.shape,
-      poissonRatio(material),
-    );
-    return {
-      index,
-      member,
-      start,
-      end,
-      axes: memberAxes(start, end, member.roll),
-      properties: {
-        E: material.E,
-        G: shearModulus(material),
-        rho: material.density,
-        A,
-        Iy,
-        Iz,
-        Iyz,
-        J,
-        ky,
-        kz,
-        massPerLength: member.massPerLength,
-        theory: member.theory,
-      },
-    };
+    const start = endOf(at.get(member.start)!, member.startArm);
+    const end = endOf(at.get(member.end)!, member.endArm);
+    const { material, section, theory, massPerLength } = member;
+    const key = JSON.stringify([material, section, theory, massPerLength]);
+    let properties = shared.get(key);
+    if (properties === undefined) {
+      properties = memberProperties(
+        member,
+        materials.get(material)!,
+        sections.get(section)!.shape,
+      );
+      shared.set(key, properties);
+    }
+    return { index, member, start, end, axes: memberAxes(start, end, member.roll), properties };
   });
+}
+
+function endOf(node: Vector3, arm: Vector3 | undefined): Vector3 {
+  return arm ? add(node, arm) : node;
+}
+
+function memberProperties(
+  { massPerLength, theory }: Member,
+  material: Material,
+  shape: SectionShape,
+): BeamProperties {
+  const { A, Iy, Iz, Iyz, J, ky, kz } = sectionProperties(shape, poissonRatio(material));
+  return {
+    E: material.E,
+    G: shearModulus(material),
+    rho: material.density,
+    A,
+    Iy,
+    Iz,
+    Iyz,
+    J,
+    ky,
+    kz,
+    massPerLength,
+    theory,
+  };
 }
 
 /** Significant digits to which two lengths are the same: what subtracting coordinates leaves. */
@@ -69,15 +89,17 @@ export function partDivider(
   massKind: MassKind,
 ): (part: MemberPart, divisions: number) => DividedPart {
   const makes = new Map<string, ElementMatrices>();
+  const keys = new Map<BeamProperties, string>();
   return (part, divisions) => {
     const { member, properties, axes } = part;
     const count = member.kind === 'bar' ? 1 : divisions;
     const segmentLength = axes.length / count;
-    const key = [
-      member.kind,
-      segmentLength.toPrecision(SAME_LENGTH_DIGITS),
-      JSON.stringify(properties),
-    ].join(' ');
+    let shared = keys.get(properties);
+    if (shared === undefined) {
+      shared = JSON.stringify(properties);
+      keys.set(properties, shared);
+    }
+    const key = `${member.kind} ${segmentLength.toPrecision(SAME_LENGTH_DIGITS)} ${shared}`;
     let matrices = makes.get(key);
     if (matrices === undefined) {
       matrices = elementMatrices(part, segmentLength, massKind, makes.size);

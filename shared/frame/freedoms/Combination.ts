@@ -48,3 +48,32 @@ export function combine(rows: readonly Terms[]): Combination {
   });
   return { rows: rows.length, dofs: Int32Array.from(column.keys()), T };
 }
+
+/** The rows of a combination as terms, `from` to before `to`. */
+export function termsOf({ dofs, T }: Combination, from: number, to: number): Terms[] {
+  return Array.from({ length: to - from }, (_, row) =>
+    Array.from(dofs, (dof, j) => [dof, T[(from + row) * dofs.length + j]!] as const).filter(
+      ([, coefficient]) => coefficient !== 0,
+    ),
+  );
+}
+
+/** The rows of both, one combination after the other. */
+export function stacked(a: Combination, b: Combination): Combination {
+  for (const dof of b.dofs) {
+    if (a.dofs.includes(dof)) return combine([...termsOf(a, 0, a.rows), ...termsOf(b, 0, b.rows)]);
+  }
+  const width = a.dofs.length + b.dofs.length;
+  const dofs = new Int32Array(width);
+  dofs.set(a.dofs);
+  dofs.set(b.dofs, a.dofs.length);
+  const T = new Float64Array((a.rows + b.rows) * width);
+  for (let i = 0; i < a.rows; i++) {
+    for (let j = 0; j < a.dofs.length; j++) T[i * width + j] = a.T[i * a.dofs.length + j]!;
+  }
+  for (let i = 0; i < b.rows; i++) {
+    const from = (a.rows + i) * width + a.dofs.length;
+    for (let j = 0; j < b.dofs.length; j++) T[from + j] = b.T[i * b.dofs.length + j]!;
+  }
+  return { rows: a.rows + b.rows, dofs, T };
+}
