@@ -11,19 +11,18 @@ const SHIFTS = [1e-12, 1e-10, 1e-8];
 /**
  * bᵀ M⁺ b for the six inertia forces b: what the effective masses of all modes add up to.
  *   pencil  of the frame; left factored at no shift
- *   forces  over the free unknowns, in the range of M
+ *   forces  address of the six, vectors of the pencil one after the other, in the range of M
  * M is singular where unknowns carry no mass; with δ diag(M) added it can be factored, and b has no part in
  * what it lacks. The sum changes by −δ xᵀ diag(M) x in first order, which is given back.
  */
-export function attainableMass(pencil: ChainedPencil, forces: readonly Float64Array[]): Six {
+export function attainableMass(pencil: ChainedPencil, forces: number): Six {
   const { arena, n, size } = pencil;
   const shift = factoriseMass(pencil);
   const diagonal = pencil.diagonal('M');
   const used = arena.used;
-  const b = pencil.vector();
   const x = pencil.vector();
   const result = six((direction) => {
-    arena.view(b, n).set(forces[direction]!);
+    const b = forces + 8 * size * direction;
     pencil.solve(b, x);
     const found = arena.view(x, n);
     let given = 0;

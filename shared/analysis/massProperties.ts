@@ -1,6 +1,7 @@
-import { chainMatrix, rowOrder } from '../frame/assembly/chainedPair.ts';
+import { chainMatrix } from '../frame/assembly/chainedPair.ts';
 import type { DividedPart, FrameModel, ModelChain } from '../frame/assembly/FrameModel.ts';
 import { addForces } from '../frame/freedoms/Combination.ts';
+import type { ChainedPencil } from '../numerics/chains/ChainedPencil.ts';
 import { add, cross, dot, scale, subtract } from '../frame/vector3.ts';
 import type { Vector3 } from '../schemas/frameDocument.ts';
 
@@ -111,40 +112,49 @@ function addInertia(m: Float64Array, r: Float64Array, use: (f: Float64Array) => 
   return energy;
 }
 
+/** Rigid inertia as `rigidInertia` gives it, with the forces in a pencil's arena. */
+export interface PlacedInertia {
+  /** Address of the six inertia forces, vectors of the pencil one after the other. */
+  readonly forces: number;
+  readonly total: Six;
+}
+
 /** The same as `rigidInertia` over the unknowns of a model, from what chains of one make share. */
-export function chainInertia(model: FrameModel, centre: Vector3): RigidInertia {
+export function chainInertia(
+  model: FrameModel,
+  pencil: ChainedPencil,
+  centre: Vector3,
+): PlacedInertia {
+  const { arena, size, n } = pencil;
   const total: Six = [0, 0, 0, 0, 0, 0];
-  const forces = total.map(() => new Float64Array(model.free));
+  const forces = arena.numbers(6 * size);
+  arena.view(forces, 6 * size).fill(0);
   const directions = [0, 1, 2, 3, 4, 5].filter((direction) => model.exists[direction]);
   const a = new Float64Array(36);
-  for (const chains of model.chains) {
-    const { n, MR, RMR, inner } = rigidMakeOf(chains[0]!);
-    const rows = rowOrder(chains[0]!);
-    const end = new Float64Array(n - inner);
-    for (const chain of chains) {
-      rigidParameters(chain, centre, a);
-      for (const direction of directions) {
-        const b = forces[direction]!;
-        const from = 6 * direction;
-        for (let i = 0; i < n; i++) {
-          let force = 0;
-          for (let k = 0; k < 6; k++) force += MR[i * 6 + k]! * a[from + k]!;
-          if (i < inner) b[chain.inner + i]! += force;
-          else end[rows[i - inner]!] = force;
-        }
-        addForces(chain.ends, end, b);
+  model.chains.forEach((chains, classIndex) => {
+    const { MR, RMR } = rigidMakeOf(chains[0]!);
+    const parameters = directions.map(() => new Float64Array(6 * chains.length));
+    for (let m = 0; m < chains.length; m++) {
+      rigidParameters(chains[m]!, centre, a);
+      for (let k = 0; k < directions.length; k++) {
+        const from = 6 * directions[k]!;
+        parameters[k]!.set(a.subarray(from, from + 6), 6 * m);
         let sum = 0;
-        for (let k = 0; k < 6; k++) {
-          for (let l = 0; l < 6; l++) sum += a[from + k]! * RMR[k * 6 + l]! * a[from + l]!;
+        for (let i = 0; i < 6; i++) {
+          for (let j = 0; j < 6; j++) sum += a[from + i]! * RMR[i * 6 + j]! * a[from + j]!;
         }
-        total[direction]! += sum;
+        total[directions[k]!]! += sum;
       }
     }
-  }
+    directions.forEach((direction, k) => {
+      pencil.addAnswers(classIndex, MR, parameters[k]!, forces + 8 * size * direction);
+    });
+  });
   for (const direction of directions) {
+    const b = arena.view(forces + 8 * size * direction, n);
     for (const { at, motion, mass } of model.bodies) {
       const r = Float64Array.from(rigidMotionAt(direction, at, centre).flat());
-      total[direction]! += addInertia(mass, r, (f) => addForces(motion, f, forces[direction]!));
+      total[direction]! += addInertia(mass, r, (f) => addForces(motion, f, b));
     }
   }
   return { forces, total };
@@ -154,19 +164,19 @@ export function chainInertia(model: FrameModel, centre: Vector3): RigidInertia {
 function rigidParameters({ part, from }: ModelChain, centre: Vector3, a: Float64Array): void {
   const { x, y, z } = part.axes;
   const along = from * part.segmentLength;
-  const r = [0, 1, 2].map((k) => part.start[k]! + along * x[k]! - centre[k]!);
-  const axes = [x, y, z];
+  const rx = part.start[0] + along * x[0] - centre[0];
+  const ry = part.start[1] + along * x[1] - centre[1];
+  const rz = part.start[2] + along * x[2] - centre[2];
+  a.fill(0);
   for (let i = 0; i < 3; i++) {
-    const axis = axes[i]!;
-    for (let k = 0; k < 3; k++) {
-      a[k * 6 + i] = axis[k]!;
-      a[k * 6 + 3 + i] = 0;
-      // axis · (e_k × r)
-      const next = (k + 1) % 3;
-      const last = (k + 2) % 3;
-      a[(3 + k) * 6 + i] = axis[last]! * r[next]! - axis[next]! * r[last]!;
-      a[(3 + k) * 6 + 3 + i] = axis[k]!;
-    }
+    const axis = i === 0 ? x : i === 1 ? y : z;
+    a[i] = a[18 + 3 + i] = axis[0];
+    a[6 + i] = a[24 + 3 + i] = axis[1];
+    a[12 + i] = a[30 + 3 + i] = axis[2];
+    // axis · (e_k × r)
+    a[18 + i] = axis[2] * ry - axis[1] * rz;
+    a[24 + i] = axis[0] * rz - axis[2] * rx;
+    a[30 + i] = axis[1] * rx - axis[0] * ry;
   }
 }
 
@@ -174,12 +184,7 @@ function rigidParameters({ part, from }: ModelChain, centre: Vector3, a: Float64
  * What a make of chains answers to its six rigid motions about its start, in member axes: M R over inner
  * unknowns and ends, row by row, and RᵀMR.
  */
-function rigidMakeOf(chain: ModelChain): {
-  n: number;
-  MR: Float64Array;
-  RMR: Float64Array;
-  inner: number;
-} {
+function rigidMakeOf(chain: ModelChain): { MR: Float64Array; RMR: Float64Array } {
   const { part, ends, make } = chain;
   const { inner } = make;
   const n = inner + ends.rows;
@@ -205,5 +210,5 @@ function rigidMakeOf(chain: ModelChain): {
       for (let l = 0; l < 6; l++) RMR[l * 6 + k]! += motion[i * 6 + l]! * sum;
     }
   }
-  return { n, MR, RMR, inner };
+  return { MR, RMR };
 }

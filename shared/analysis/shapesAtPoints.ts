@@ -33,25 +33,25 @@ export function shapesAtPoints(
       for (let m = 0; m < count; m++) {
         const { part, from: station, elements } = chains[classIndex]![from + m]!;
         const at = base + (members[part.index]!.first + station) * 6;
-        const atStation = (s: number, to: number) => {
-          const places = make.places[s]!;
-          for (let i = 0; i < rows / 2; i++) {
-            const place = places[i]!;
-            if (place < 0) d[to + i] = 0;
-            else if (place < make.inner) d[to + i] = inner[m * make.inner + place]!;
-            else d[to + i] = ends[m * rows + place - make.inner]!;
-          }
-        };
+        const ofInner = m * make.inner;
+        const ofEnds = m * rows - make.inner;
         if (rows === 6) {
-          atStation(0, 0);
-          atStation(1, 3);
+          for (let i = 0; i < 3; i++) {
+            d[i] = ends[ofEnds + make.places[0]![i]!]!;
+            d[3 + i] = ends[ofEnds + make.places[1]![i]!]!;
+          }
           spreadBar(d, part.segmentLength);
           writeGlobal(part, d, 0, shapes, at);
           writeGlobal(part, d, 6, shapes, at + 6);
           continue;
         }
         for (let s = 0; s <= elements; s++) {
-          atStation(s, 0);
+          const places = make.places[s]!;
+          for (let i = 0; i < 6; i++) {
+            const place = places[i]!;
+            if (place < 0) d[i] = 0;
+            else d[i] = place < make.inner ? inner[ofInner + place]! : ends[ofEnds + place]!;
+          }
           writeGlobal(part, d, 0, shapes, at + 6 * s);
         }
       }

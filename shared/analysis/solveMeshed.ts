@@ -92,7 +92,7 @@ function solveIn(
     pencil,
     found.addresses.map(({ vector }) => vector),
   );
-  const inertia = chainInertia(model, centre);
+  const inertia = chainInertia(model, pencil, centre);
   const summary = summariseModes({
     model,
     details: meshedDetails(pencil, energies, found, inertia.forces),

@@ -41,17 +41,18 @@ export interface SolvedModes {
 
 /**
  * Details of the modes of a divided frame, while they are in the pencil's arena.
- *   forces  inertia forces of the six rigid motions, over the free unknowns
+ *   forces  address of the inertia forces of the six rigid motions
  */
 export function meshedDetails(
   pencil: ChainedPencil,
   energies: FrameEnergies,
   { lambda, phi, addresses }: ModesResult,
-  forces: readonly Float64Array[],
+  forces: number,
 ): ModeDetail[] {
   const { arena, n, size } = pencil;
   const used = arena.used;
   const image = arena.numbers(size);
+  const products = arena.numbers(8);
   const diagonals = { K: pencil.diagonal('K'), M: pencil.diagonal('M') };
   const details = phi.map((shape, i) => {
     const address = addresses[i]!;
@@ -65,9 +66,11 @@ export function meshedDetails(
       },
       diagonals,
     );
+    arena.kernels.dots(size, forces, 8 * size, 6, address.vector, products);
+    const participation = arena.view(products, 6);
     return {
       lambda: lambda[i]!,
-      participation: six((direction) => product(shape, forces[direction]!)),
+      participation: six((direction) => participation[direction]!),
       energies: energies.of(address.vector),
       backwardError: eta,
       digits: digitsOf(eta, n),
@@ -113,12 +116,6 @@ export function summariseModes(solved: SolvedModes): Pick<SolveSummary, 'modes' 
       onFixed: [onFixed[0]!, onFixed[1]!, onFixed[2]!],
     },
   };
-}
-
-function product(a: Float64Array, b: Float64Array): number {
-  let sum = 0;
-  for (let i = 0; i < a.length; i++) sum += a[i]! * b[i]!;
-  return sum;
 }
 
 /**

@@ -43,7 +43,7 @@ function chainClass(chains: readonly ModelChain[]): ChainClass {
 }
 
 /** For each end in the make's order: its row among the displacements of start and end. */
-export function rowOrder({ make, ends, elements }: ModelChain): Int32Array {
+function rowOrder({ make, ends, elements }: ModelChain): Int32Array {
   const half = ends.rows / 2;
   const rows = new Int32Array(ends.rows);
   for (let d = 0; d < half; d++) {

@@ -38,11 +38,7 @@ export function memberParts(document: FrameDocument): MemberPart[] {
     const key = JSON.stringify([material, section, theory, massPerLength]);
     let properties = shared.get(key);
     if (properties === undefined) {
-      properties = memberProperties(
-        member,
-        materials.get(material)!,
-        sections.get(section)!.shape,
-      );
+      properties = memberProperties(member, materials.get(material)!, sections.get(section)!.shape);
       shared.set(key, properties);
     }
     return { index, member, start, end, axes: memberAxes(start, end, member.roll), properties };

@@ -1,29 +1,22 @@
-/** What one wave does at a point of a member piece that vibrates at ω. */
-export interface WavePoint {
-  /** Displacement [m] and rotation [rad]; the one that the wave does not have is 0. */
-  displacement: number;
-  rotation: number;
-  /** Twice the strain energy per length [J/m]. */
-  strain: number;
-}
-
-/** The motion between two ends whose displacements are given: exact within the theory. */
-export interface Wave {
-  /** Phase of its shortest component over the piece [rad]. */
-  readonly phase: number;
-  /** ξ from −½ at the start to ½ at the end; `point` is overwritten. */
-  at(xi: number, point: WavePoint): void;
+/** Integrals over a member piece of its motions at one ω, for displacements d of its ends. */
+export interface MotionIntegrals {
+  /** rows × rows, row by row: −∂k/∂ω², with which 2 × kinetic energy over ω² is dᵀ m d [kg]. */
+  readonly mass: Float64Array;
+  /** rows × rows: 2 × strain energy is |R d|², a sum of squares, so none of it cancels [√(N/m)]. */
+  readonly strain: Float64Array;
+  /**
+   * 3 × rows: ∫ m̄ w, ∫ m̄ w s with s from the piece's middle, ∫ ρI ψ, by d: what the motion carries of momentum,
+   * of its first moment and of spin, over ω [kg, kg·m].
+   */
+  readonly momenta: Float64Array;
 }
 
 /**
  * One uncoupled kind of vibration of a uniform member piece: stretching, twisting, or bending in one principal
- * plane. `rows` end displacements, those of the start first.
+ * plane. `rows` end displacements, those of the start first. Pieces alike share one element.
  */
 export interface DynamicElement {
   readonly rows: 2 | 4;
-  /** Mass per length of the displacement [kg/m] and of the rotation [kg·m]. */
-  readonly massPerLength: number;
-  readonly inertiaPerLength: number;
   /**
    * Dynamic stiffness at ω [rad/s], rows × rows, row by row; k is overwritten. Returns J₀, the number of
    * natural frequencies below ω with both ends clamped.
@@ -31,8 +24,14 @@ export interface DynamicElement {
   stiffness(omega: number, k: Float64Array): number;
   /** −∂k/∂ω²: the mass that goes with the motion at ω, rows × rows; m is overwritten. */
   mass(omega: number, m: Float64Array): void;
-  /** The motion at ω between ends displaced by d (`rows`). */
-  wave(omega: number, d: Float64Array): Wave;
+  /** The motions at ω integrated by Gauss panels, each to about 1e-13 of itself. */
+  integrals(omega: number): MotionIntegrals;
+  /**
+   * The motion at ω, exact within the theory: 2 × rows, displacement [m] then rotation [rad] at ξ for unit
+   * displacements of the ends; N is overwritten.
+   *   xi  −½ at the start to ½ at the end
+   */
+  shape(omega: number, xi: number, N: Float64Array): void;
 }
 
 /** Number of whole n ≥ 1 with nπ below `phase`. */

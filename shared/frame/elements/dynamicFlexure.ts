@@ -1,5 +1,5 @@
 import { halfWavesBelow } from './DynamicElement.ts';
-import type { DynamicElement, Wave } from './DynamicElement.ts';
+import type { DynamicElement, MotionIntegrals } from './DynamicElement.ts';
 import { flexuralWave, flexuralWaves } from './flexuralWaves.ts';
 import type { FlexuralWaves } from './flexuralWaves.ts';
 import { integrate } from './gaussPanels.ts';
@@ -41,16 +41,13 @@ export function dynamicFlexure(properties: FlexureProperties): DynamicElement {
   const slowness = length * length * Math.sqrt(mass / bending);
   const r2 = inertia / (mass * length * length);
   const s2 = bending / (shear * length * length);
-  const wavesAt = (omega: number) => flexuralWaves(slowness * omega, r2, s2);
   const atEnd = new Float64Array(16);
   const at = new Float64Array(16);
 
   return {
     rows: 4,
-    massPerLength: mass,
-    inertiaPerLength: inertia,
     stiffness(omega, k) {
-      const waves = wavesAt(omega);
+      const waves = flexuralWaves(slowness * omega, r2, s2);
       flexuralWave(waves, 0.5, atEnd);
       const even = halfStiffness(endMatrix(atEnd, 0));
       const odd = halfStiffness(endMatrix(atEnd, 8));
@@ -58,55 +55,137 @@ export function dynamicFlexure(properties: FlexureProperties): DynamicElement {
       return pinnedBelow(waves) - (even[2] < 0 ? 1 : 0) - (odd[2] < 0 ? 1 : 0);
     },
     mass(omega, m) {
-      const waves = wavesAt(omega);
+      const waves = flexuralWaves(slowness * omega, r2, s2);
       flexuralWave(waves, 0.5, atEnd);
-      const gram = [0, 0, 0, 0, 0, 0];
+      const gram = massGram(waves, r2, at);
+      const even = halfMass(endMatrix(atEnd, 0).inverse, gram, 0);
+      const odd = halfMass(endMatrix(atEnd, 8).inverse, gram, 3);
+      setFromHalves(m, even, odd, mass * length ** 3, length);
+    },
+    integrals(omega): MotionIntegrals {
+      const waves = flexuralWaves(slowness * omega, r2, s2);
+      const m = new Float64Array(16);
+      this.mass(omega, m);
+      // mass() leaves the functions at the end in `atEnd`.
+      const even = amplitudes(endMatrix(atEnd, 0).inverse, length, 1);
+      const odd = amplitudes(endMatrix(atEnd, 8).inverse, length, -1);
+      const gram = new Float64Array(6);
+      // Per function: ∫ w over the even, ∫ w ξ and ∫ ψ over the odd ones.
+      const sums = new Float64Array(6);
       integrate(0.5, 0.5 * Math.sqrt(waves.e), (xi, weight) => {
         flexuralWave(waves, xi, at);
-        for (const family of [0, 1]) {
-          const w1 = at[family * 8]!;
-          const psi1 = at[family * 8 + 1]!;
-          const w2 = at[family * 8 + 4]!;
-          const psi2 = at[family * 8 + 5]!;
-          gram[family * 3]! += weight * (w1 * w1 + r2 * psi1 * psi1);
-          gram[family * 3 + 1]! += weight * (w1 * w2 + r2 * psi1 * psi2);
-          gram[family * 3 + 2]! += weight * (w2 * w2 + r2 * psi2 * psi2);
+        for (let family = 0; family < 2; family++) {
+          const from = family * 8;
+          for (let i = 0; i < 2; i++) {
+            const first = from + 4 * i;
+            for (let j = i; j < 2; j++) {
+              const second = from + 4 * j;
+              gram[family * 3 + i + j]! +=
+                2 *
+                weight *
+                (at[first + 2]! * at[second + 2]! + s2 * at[first + 3]! * at[second + 3]!);
+            }
+          }
+        }
+        for (let i = 0; i < 2; i++) {
+          sums[i]! += 2 * weight * at[4 * i]!;
+          sums[2 + i]! += 2 * weight * at[8 + 4 * i]! * xi;
+          sums[4 + i]! += 2 * weight * at[8 + 4 * i + 1]!;
         }
       });
-      const halves = [0, 1].map((family) => {
-        const [a, b, c, d] = endMatrix(atEnd, family * 8).inverse;
-        const [p, q, r] = [gram[family * 3]!, gram[family * 3 + 1]!, gram[family * 3 + 2]!];
-        return [
-          p * a * a + 2 * q * a * c + r * c * c,
-          p * a * b + q * (a * d + b * c) + r * c * d,
-          p * b * b + 2 * q * b * d + r * d * d,
-        ] as const;
-      });
-      setFromHalves(m, halves[0]!, halves[1]!, mass * length ** 3, length);
+      const strain = new Float64Array(16);
+      setStrain(strain, 0, even, gram.subarray(0, 3), bending / length);
+      setStrain(strain, 8, odd, gram.subarray(3), bending / length);
+      const momenta = new Float64Array(12);
+      for (let d = 0; d < 4; d++) {
+        const line = mass * length * length;
+        momenta[d] = line * (sums[0]! * even[d]! + sums[1]! * even[4 + d]!);
+        momenta[4 + d] = line * length * (sums[2]! * odd[d]! + sums[3]! * odd[4 + d]!);
+        momenta[8 + d] = inertia * length * (sums[4]! * odd[d]! + sums[5]! * odd[4 + d]!);
+      }
+      return { mass: m, strain, momenta };
     },
-    wave(omega, d): Wave {
-      const waves = wavesAt(omega);
+    shape(omega, xi, N) {
+      const waves = flexuralWaves(slowness * omega, r2, s2);
       flexuralWave(waves, 0.5, atEnd);
-      const amplitude = [
-        ...amplitudes(endMatrix(atEnd, 0), (d[2]! + d[0]!) / (2 * length), 0.5 * (d[3]! - d[1]!)),
-        ...amplitudes(endMatrix(atEnd, 8), (d[2]! - d[0]!) / (2 * length), 0.5 * (d[3]! + d[1]!)),
-      ] as const;
-      return {
-        phase: Math.sqrt(waves.e),
-        at(xi, point) {
-          flexuralWave(waves, xi, at);
-          const sum = (value: number) =>
-            amplitude[0] * at[value]! +
-            amplitude[1] * at[4 + value]! +
-            amplitude[2] * at[8 + value]! +
-            amplitude[3] * at[12 + value]!;
-          point.displacement = length * sum(0);
-          point.rotation = sum(1);
-          point.strain = (bending / (length * length)) * (sum(2) ** 2 + s2 * sum(3) ** 2);
-        },
-      };
+      const even = amplitudes(endMatrix(atEnd, 0).inverse, length, 1);
+      const odd = amplitudes(endMatrix(atEnd, 8).inverse, length, -1);
+      flexuralWave(waves, xi, at);
+      for (let value = 0; value < 2; value++) {
+        const unit = value === 0 ? length : 1;
+        for (let d = 0; d < 4; d++) {
+          N[value * 4 + d] =
+            unit *
+            (at[value]! * even[d]! +
+              at[4 + value]! * even[4 + d]! +
+              at[8 + value]! * odd[d]! +
+              at[12 + value]! * odd[4 + d]!);
+        }
+      }
     },
   };
+}
+
+/** ∫ w² + r²ψ² of each family's two functions from the middle to the end: 11, 12, 22 of the even, of the odd. */
+function massGram(waves: FlexuralWaves, r2: number, at: Float64Array): Float64Array {
+  const gram = new Float64Array(6);
+  integrate(0.5, 0.5 * Math.sqrt(waves.e), (xi, weight) => {
+    flexuralWave(waves, xi, at);
+    for (let family = 0; family < 2; family++) {
+      const w1 = at[family * 8]!;
+      const psi1 = at[family * 8 + 1]!;
+      const w2 = at[family * 8 + 4]!;
+      const psi2 = at[family * 8 + 5]!;
+      gram[family * 3]! += weight * (w1 * w1 + r2 * psi1 * psi1);
+      gram[family * 3 + 1]! += weight * (w1 * w2 + r2 * psi1 * psi2);
+      gram[family * 3 + 2]! += weight * (w2 * w2 + r2 * psi2 * psi2);
+    }
+  });
+  return gram;
+}
+
+function halfMass([a, b, c, d]: EndMatrix['inverse'], gram: Float64Array, from: number) {
+  const p = gram[from]!;
+  const q = gram[from + 1]!;
+  const r = gram[from + 2]!;
+  return [
+    p * a * a + 2 * q * a * c + r * c * c,
+    p * a * b + q * (a * d + b * c) + r * c * d,
+    p * b * b + 2 * q * b * d + r * d * d,
+  ] as const;
+}
+
+/**
+ * Amplitudes of a family's two functions for unit displacements of the ends, 2 × 4: an even motion (1) has
+ * (w₂ + w₁)/2L and (ψ₂ − ψ₁)/2 at the end, an odd one (−1) has (w₂ − w₁)/2L and (ψ₂ + ψ₁)/2.
+ */
+function amplitudes(
+  [a, b, c, d]: EndMatrix['inverse'],
+  length: number,
+  parity: 1 | -1,
+): Float64Array {
+  const w = 0.5 / length;
+  return Float64Array.of(
+    ...[parity * a * w, -parity * b * 0.5, a * w, b * 0.5],
+    ...[parity * c * w, -parity * d * 0.5, c * w, d * 0.5],
+  );
+}
+
+/** Two rows of R: p a₁² + 2q a₁a₂ + r a₂² = r (a₂ + q/r a₁)² + (p − q²/r) a₁²; a rigid function has p = 0. */
+function setStrain(
+  R: Float64Array,
+  from: number,
+  amplitude: Float64Array,
+  [p, q, r]: Float64Array,
+  unit: number,
+): void {
+  const share = q! / r!;
+  const outer = Math.sqrt(unit * r!);
+  const inner = Math.sqrt(unit * Math.max(p! - q! * share, 0));
+  for (let d = 0; d < 4; d++) {
+    R[from + d] = outer * (amplitude[4 + d]! + share * amplitude[d]!);
+    R[from + 4 + d] = inner * amplitude[d]!;
+  }
 }
 
 /** Natural frequencies below ω of the piece with both ends pinned. */
@@ -126,10 +205,6 @@ function endMatrix(at: Float64Array, from: number): EndMatrix {
     M: [at[from + 2]!, at[from + 6]!],
     Q: [at[from + 3]!, at[from + 7]!],
   };
-}
-
-function amplitudes({ inverse: [a, b, c, d] }: EndMatrix, w: number, psi: number) {
-  return [a * w + b * psi, c * w + d * psi] as const;
 }
 
 /** Force by deflection, moment by deflection (= force by slope), moment by slope; dimensionless. */

@@ -1,5 +1,5 @@
 import { halfWavesBelow } from './DynamicElement.ts';
-import type { DynamicElement, Wave } from './DynamicElement.ts';
+import type { DynamicElement, MotionIntegrals } from './DynamicElement.ts';
 import { integrate } from './gaussPanels.ts';
 
 export interface RodProperties {
@@ -21,14 +21,9 @@ export interface RodProperties {
 export function dynamicRod({ rigidity, inertia, length, twists }: RodProperties): DynamicElement {
   const slowness = length * Math.sqrt(inertia / rigidity);
   const k0 = rigidity / length;
-  const even = (phase: number, xi: number) => Math.cos(phase * xi) / Math.cos(0.5 * phase);
-  const odd = (phase: number, xi: number) =>
-    phase === 0 ? 2 * xi : Math.sin(phase * xi) / Math.sin(0.5 * phase);
 
   return {
     rows: 2,
-    massPerLength: twists ? 0 : inertia,
-    inertiaPerLength: twists ? inertia : 0,
     stiffness(omega, k) {
       const phase = slowness * omega;
       const tangent = Math.tan(0.5 * phase);
@@ -36,33 +31,70 @@ export function dynamicRod({ rigidity, inertia, length, twists }: RodProperties)
       return halfWavesBelow(phase);
     },
     mass(omega, m) {
-      const phase = slowness * omega;
-      let evenMass = 0;
-      let oddMass = 0;
-      integrate(0.5, 0.5 * phase, (xi, weight) => {
-        evenMass += weight * even(phase, xi) ** 2;
-        oddMass += weight * odd(phase, xi) ** 2;
-      });
-      setFromHalves(m, evenMass * inertia * length, oddMass * inertia * length);
+      const [even, odd] = massHalves(slowness * omega);
+      setFromHalves(m, even * inertia * length, odd * inertia * length);
     },
-    wave(omega, d): Wave {
+    integrals(omega): MotionIntegrals {
       const phase = slowness * omega;
-      const mean = 0.5 * (d[1]! + d[0]!);
-      const half = 0.5 * (d[1]! - d[0]!);
-      return {
-        phase,
-        at(xi, point) {
-          const value = mean * even(phase, xi) + half * odd(phase, xi);
-          const slope =
-            (-mean * phase * Math.sin(phase * xi)) / Math.cos(0.5 * phase) +
-            half * (phase === 0 ? 2 : (phase * Math.cos(phase * xi)) / Math.sin(0.5 * phase));
-          point.displacement = twists ? 0 : value;
-          point.rotation = twists ? value : 0;
-          point.strain = rigidity * (slope / length) ** 2;
-        },
-      };
+      const [even, odd] = massHalves(phase);
+      const mass = new Float64Array(4);
+      setFromHalves(mass, even * inertia * length, odd * inertia * length);
+      let evenStrain = 0;
+      let oddStrain = 0;
+      let evenSum = 0;
+      let oddMoment = 0;
+      integrate(0.5, 0.5 * phase, (xi, weight) => {
+        evenStrain += 2 * weight * evenSlope(phase, xi) ** 2;
+        oddStrain += 2 * weight * oddSlope(phase, xi) ** 2;
+        evenSum += 2 * weight * evenAt(phase, xi);
+        oddMoment += 2 * weight * oddAt(phase, xi) * xi;
+      });
+      const a = 0.5 * Math.sqrt(k0 * evenStrain);
+      const b = 0.5 * Math.sqrt(k0 * oddStrain);
+      const momenta = new Float64Array(6);
+      const sum = 0.5 * inertia * length * evenSum;
+      const moment = 0.5 * inertia * length * length * oddMoment;
+      if (twists) momenta.set([sum, sum], 4);
+      else momenta.set([sum, sum, -moment, moment]);
+      return { mass, strain: Float64Array.of(a, a, -b, b), momenta };
+    },
+    shape(omega, xi, N) {
+      const phase = slowness * omega;
+      const even = 0.5 * evenAt(phase, xi);
+      const odd = 0.5 * oddAt(phase, xi);
+      N.fill(0, 0, 4);
+      const at = twists ? 2 : 0;
+      N[at] = even - odd;
+      N[at + 1] = even + odd;
     },
   };
+}
+
+function evenAt(phase: number, xi: number): number {
+  return Math.cos(phase * xi) / Math.cos(0.5 * phase);
+}
+
+function oddAt(phase: number, xi: number): number {
+  return phase === 0 ? 2 * xi : Math.sin(phase * xi) / Math.sin(0.5 * phase);
+}
+
+function evenSlope(phase: number, xi: number): number {
+  return (-phase * Math.sin(phase * xi)) / Math.cos(0.5 * phase);
+}
+
+function oddSlope(phase: number, xi: number): number {
+  return phase === 0 ? 2 : (phase * Math.cos(phase * xi)) / Math.sin(0.5 * phase);
+}
+
+/** ∫ of the squares of the even and the odd motion from the middle to the end. */
+function massHalves(phase: number): [number, number] {
+  let even = 0;
+  let odd = 0;
+  integrate(0.5, 0.5 * phase, (xi, weight) => {
+    even += weight * evenAt(phase, xi) ** 2;
+    odd += weight * oddAt(phase, xi) ** 2;
+  });
+  return [even, odd];
 }
 
 /** 2×2 from what an even (d, d) and an odd (−d, d) motion meet at each end. */

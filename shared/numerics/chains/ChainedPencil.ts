@@ -90,6 +90,7 @@ export class ChainedPencil {
   readonly #elimination: Elimination;
   readonly #ends: number;
   readonly #work: number;
+  readonly #diagonals: { K?: Float64Array; M?: Float64Array } = {};
   #smallestInnerPivot = Infinity;
 
   constructor(arena: Arena, pair: ChainedPair, analysis: ChainAnalysis) {
@@ -344,22 +345,28 @@ export class ChainedPencil {
 
   /**
    * n: size of each diagonal entry of K or M, taken from the elements' own diagonals; what unknowns of
-   * different units are scaled by.
+   * different units are scaled by. Treat it as read-only.
    */
   diagonal(which: 'K' | 'M'): Float64Array {
+    const known = this.#diagonals[which];
+    if (known !== undefined) return known;
     const { joints, classes, [which]: sparse } = this.pair;
     const result = new Float64Array(this.n);
     for (let j = 0; j < joints; j++) result[j] = sparse.values[sparse.colPtr[j]!]!;
     let first = joints;
     for (const { inner, ends, chains, [which]: A } of classes) {
-      const own = (i: number) => A[i * (inner + ends + 1)]!;
+      const own = Float64Array.from({ length: inner + ends }, (_, i) => A[i * (inner + ends + 1)]!);
       for (const { dofs, T } of chains) {
-        for (let i = 0; i < inner; i++) result[first++] = own(i);
-        dofs.forEach((dof, b) => {
-          for (let e = 0; e < ends; e++) result[dof]! += T[b * ends + e]! ** 2 * own(inner + e);
-        });
+        result.set(own.subarray(0, inner), first);
+        first += inner;
+        for (let b = 0, at = 0; b < dofs.length; b++) {
+          let sum = 0;
+          for (let e = inner; e < inner + ends; e++, at++) sum += T[at]! * T[at]! * own[e]!;
+          result[dofs[b]!]! += sum;
+        }
       }
     }
+    this.#diagonals[which] = result;
     return result;
   }
 
@@ -412,6 +419,32 @@ export class ChainedPencil {
         ends: arena.view(this.#ends, count * ends),
       });
     });
+    arena.rewind(used);
+  }
+
+  /**
+   * y += what the chains of one class answer to some numbers each: rows × numbers over their inner unknowns,
+   * and over their ends by Tᵀ.
+   *   rows     (inner + ends) × inputs, row by row     numbers  chains × inputs
+   */
+  addAnswers(classIndex: number, rows: Float64Array, numbers: Float64Array, y: number): void {
+    const { arena } = this;
+    const { kernels } = arena;
+    const { chainClass, count, first, table } = this.#classes[classIndex]!;
+    const { inner, ends } = chainClass;
+    const inputs = rows.length / (inner + ends);
+    const used = arena.used;
+    const part = (from: number, outputs: number) =>
+      packTiles(arena, outputs, inputs, (i, j) => rows[(from + i) * inputs + j]!);
+    const ofInner = part(0, inner);
+    const ofEnds = part(inner, ends);
+    const given = arena.place(numbers);
+    const B = arena.numbers(count * ends);
+    const Y = y + 8 * first;
+    const [i, o, n] = [8 * inner, 8 * ends, 8 * inputs];
+    kernels.multiplyBatch(count, given, n, inputs, ofInner, inner, Y, i, true);
+    kernels.multiplyBatch(count, given, n, inputs, ofEnds, ends, B, o, false);
+    kernels.scatterEnds(count, table, ends, B, y);
     arena.rewind(used);
   }
 
