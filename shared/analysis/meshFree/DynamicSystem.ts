@@ -1,14 +1,18 @@
 import { AppError } from '../../errors/AppError.ts';
 import type { FrameModel } from '../../frame/assembly/FrameModel.ts';
-import { SymmetricTriplets } from '../../frame/assembly/SymmetricTriplets.ts';
+import type { DynamicElement } from '../../frame/elements/DynamicElement.ts';
 import { barConsistentMass } from '../../frame/elements/bar.ts';
 import type { Combination } from '../../frame/freedoms/Combination.ts';
-import { analyse } from '../../numerics/factor/analyse.ts';
+import { analyseChains } from '../../numerics/chains/analyseChains.ts';
+import type { ChainAnalysis } from '../../numerics/chains/analyseChains.ts';
+import { unchained } from '../../numerics/chains/ChainedPair.ts';
+import type { ChainedPair } from '../../numerics/chains/ChainedPair.ts';
 import { factorise } from '../../numerics/factor/factorise.ts';
 import type { Ldlt } from '../../numerics/factor/Ldlt.ts';
-import type { SymbolicFactor } from '../../numerics/factor/SymbolicFactor.ts';
 import { ZeroPivotError } from '../../numerics/factor/ZeroPivotError.ts';
 import type { SymmetricCsc } from '../../numerics/sparse/SymmetricCsc.ts';
+import { addElement, assemblyPlan } from './assemblyPlan.ts';
+import type { Places } from './assemblyPlan.ts';
 import type { MemberPiece } from './memberPieces.ts';
 
 /** Part of ω by which a frequency is moved where K_D has no certain inertia. */
@@ -18,6 +22,7 @@ const MOST_NUDGES = 6;
 /** The dynamic stiffness at one frequency, factored, and what it counts. */
 export interface Evaluation {
   readonly omega: number;
+  /** Good until the next evaluation, which takes over its storage. */
   readonly ldlt: Ldlt | null;
   /** Natural frequencies below omega: J₀ + s{K_D}. */
   readonly below: number;
@@ -29,12 +34,13 @@ export interface Evaluation {
 function acrossMass(
   model: FrameModel,
 ): { motion: Combination; mass: Float64Array; part: number }[] {
-  return model.segments
+  return model.chains
+    .flat()
     .filter(({ part }) => part.member.kind === 'bar')
-    .map(({ part, motion }) => {
+    .map(({ part, ends }) => {
       const mass = barConsistentMass(part.properties, part.axes.length);
       mass[0] = mass[3] = mass[18] = mass[21] = 0;
-      return { motion, mass, part: part.index };
+      return { motion: ends, mass, part: part.index };
     });
 }
 
@@ -51,13 +57,20 @@ export class DynamicSystem {
   readonly pieces: readonly MemberPiece[];
   /** Mass of each bar across its axis [kg]. */
   readonly bars: ReturnType<typeof acrossMass>;
-  readonly symbolic: SymbolicFactor;
+  /** The distinct elements of the pieces, and which of them each piece has. */
+  readonly elements: readonly DynamicElement[];
+  readonly elementOf: Int32Array;
+  readonly analysis: ChainAnalysis;
+  readonly #pair: ChainedPair;
   readonly #K0: Float64Array;
   readonly #M0: Float64Array;
   readonly #pattern: SymmetricCsc;
-  /** Per piece: place in the values of each pair of its unknowns, a ≥ b, row by row. */
-  readonly #places: readonly Int32Array[];
-  readonly #k = new Float64Array(16);
+  /** Per piece. */
+  readonly #places: readonly Places[];
+  /** Matrices of the distinct elements at one ω. */
+  readonly #k: readonly Float64Array[];
+  readonly #clampedOf: Int32Array;
+  #ldlt: Ldlt | undefined;
 
   constructor(
     model: FrameModel,
@@ -68,44 +81,65 @@ export class DynamicSystem {
     this.n = unknowns;
     this.pieces = pieces;
     this.bars = acrossMass(model);
+    const numbers = new Map<DynamicElement, number>();
+    for (const { element } of pieces) {
+      if (!numbers.has(element)) numbers.set(element, numbers.size);
+    }
+    this.elements = [...numbers.keys()];
+    this.elementOf = Int32Array.from(pieces, ({ element }) => numbers.get(element)!);
+    this.#k = this.elements.map(({ rows }) => new Float64Array(rows * rows));
+    this.#clampedOf = new Int32Array(this.elements.length);
+
     const all = [...pieces, ...this.bars, ...model.ties, ...model.bodies];
-    const assembled = (fill: (into: SymmetricTriplets) => void): SymmetricCsc => {
-      const triplets = new SymmetricTriplets([...all, ...all]);
-      // Zeros give K₀, M₀ and K_D one pattern.
-      for (const { motion } of all) triplets.add(motion, new Float64Array(motion.rows ** 2));
-      fill(triplets);
-      return triplets.assemble(unknowns);
-    };
-    this.#pattern = assembled((into) => {
-      for (const { motion, stiffness } of model.ties) into.add(motion, Float64Array.of(stiffness));
-    });
-    this.#K0 = this.#pattern.values;
-    this.#M0 = assembled((into) => {
-      for (const { motion, mass } of [...this.bars, ...model.bodies]) into.add(motion, mass);
-    }).values;
-    this.#places = pieces.map(({ motion }) => placesOf(this.#pattern, motion.dofs));
-    this.symbolic = analyse(this.#pattern, null, clock);
+    const { pattern, places } = assemblyPlan(
+      unknowns,
+      all.map(({ motion }) => motion),
+    );
+    this.#pattern = pattern;
+    this.#places = places;
+    this.#K0 = pattern.values.slice();
+    this.#M0 = pattern.values.slice();
+    let at = pieces.length;
+    for (const { motion, mass } of this.bars) addElement(this.#M0, places[at++]!, motion, mass);
+    for (const { motion, stiffness } of model.ties) {
+      addElement(this.#K0, places[at++]!, motion, Float64Array.of(stiffness));
+    }
+    for (const { motion, mass } of model.bodies) addElement(this.#M0, places[at++]!, motion, mass);
+    this.#pair = unchained(pattern, pattern);
+    this.analysis = analyseChains(this.#pair, clock);
   }
 
   /** K_D(ω) [N/m], and J₀. */
   stiffness(omega: number): { K: SymmetricCsc; clamped: number } {
-    const values = this.#K0.map((value, i) => value - omega * omega * this.#M0[i]!);
+    const square = omega * omega;
+    const values = this.#K0.slice();
+    for (let i = 0; i < values.length; i++) values[i]! -= square * this.#M0[i]!;
+    for (let e = 0; e < this.elements.length; e++) {
+      this.#clampedOf[e] = this.elements[e]!.stiffness(omega, this.#k[e]!);
+    }
+    this.#addPieces(values);
     let clamped = 0;
-    this.pieces.forEach((piece, i) => {
-      clamped += piece.element.stiffness(omega, this.#k);
-      addPiece(values, this.#places[i]!, piece.motion, this.#k);
-    });
+    for (const element of this.elementOf) clamped += this.#clampedOf[element]!;
     return { K: { ...this.#pattern, values }, clamped };
   }
 
   /** −∂K_D/∂ω² [kg]: the mass of the continuous frame in the motions that go with its unknowns at ω. */
   mass(omega: number): SymmetricCsc {
     const values = this.#M0.slice();
-    this.pieces.forEach((piece, i) => {
-      piece.element.mass(omega, this.#k);
-      addPiece(values, this.#places[i]!, piece.motion, this.#k);
-    });
+    for (let e = 0; e < this.elements.length; e++) this.elements[e]!.mass(omega, this.#k[e]!);
+    this.#addPieces(values);
     return { ...this.#pattern, values };
+  }
+
+  #addPieces(values: Float64Array): void {
+    for (let i = 0; i < this.pieces.length; i++) {
+      addElement(values, this.#places[i]!, this.pieces[i]!.motion, this.#k[this.elementOf[i]!]!);
+    }
+  }
+
+  /** The frame at rest, K_D(0) and −∂K_D/∂ω²(0): one consistent element per piece. */
+  atRest(): ChainedPair {
+    return { ...this.#pair, K: this.stiffness(0).K, M: this.mass(0) };
   }
 
   /** √ of the lowest K_ii / M_ii at rest: above the first modes, and of their order [rad/s]. */
@@ -132,8 +166,9 @@ export class DynamicSystem {
       const { K, clamped } = this.stiffness(shifted);
       if (this.n === 0) return { omega: shifted, ldlt: null, below: clamped, clamped };
       try {
-        const ldlt = factorise(this.symbolic, K, null, 0);
-        return { omega: shifted, ldlt, below: clamped + ldlt.negativePivots, clamped };
+        this.#ldlt = factorise(this.analysis.symbolic, K, null, 0, this.#ldlt);
+        const below = clamped + this.#ldlt.negativePivots;
+        return { omega: shifted, ldlt: this.#ldlt, below, clamped };
       } catch (error) {
         if (!(error instanceof ZeroPivotError)) throw error;
         if (nudge === MOST_NUDGES) throw uncertain(error);
@@ -147,55 +182,4 @@ function uncertain(cause: ZeroPivotError): AppError {
     'The stiffnesses of this frame lie too far apart to count its modes: replace members that are very short or ' +
     'very stiff beside the others by rigid links or arms.';
   return new AppError('unsolvable', message, { issues: [{ path: '', message }] }, cause);
-}
-
-/** values += Tᵀ k T at the given places. */
-function addPiece(
-  values: Float64Array,
-  places: Int32Array,
-  { rows, dofs, T }: Combination,
-  k: Float64Array,
-): void {
-  const width = dofs.length;
-  for (let b = 0, at = 0; b < width; b++) {
-    let c0 = 0;
-    let c1 = 0;
-    let c2 = 0;
-    let c3 = 0;
-    for (let j = 0; j < rows; j++) {
-      const t = T[j * width + b]!;
-      if (t === 0) continue;
-      c0 += k[j]! * t;
-      c1 += k[rows + j]! * t;
-      if (rows === 2) continue;
-      c2 += k[8 + j]! * t;
-      c3 += k[12 + j]! * t;
-    }
-    for (let a = b; a < width; a++, at++) {
-      let sum = T[a]! * c0 + T[width + a]! * c1;
-      if (rows === 4) sum += T[2 * width + a]! * c2 + T[3 * width + a]! * c3;
-      values[places[at]!]! += sum;
-    }
-  }
-}
-
-/** Places of pairs (a, b), a ≥ b, column by column, in the values of a matrix. */
-function placesOf({ colPtr, rowIdx }: SymmetricCsc, dofs: Int32Array): Int32Array {
-  const places = new Int32Array((dofs.length * (dofs.length + 1)) / 2);
-  let at = 0;
-  dofs.forEach((dof, b) => {
-    for (let a = b; a < dofs.length; a++) {
-      const column = Math.min(dof, dofs[a]!);
-      const row = Math.max(dof, dofs[a]!);
-      let low = colPtr[column]!;
-      let high = colPtr[column + 1]!;
-      while (low < high) {
-        const middle = (low + high) >> 1;
-        if (rowIdx[middle]! < row) low = middle + 1;
-        else high = middle;
-      }
-      places[at++] = low;
-    }
-  });
-  return places;
 }

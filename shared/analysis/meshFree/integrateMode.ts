@@ -1,9 +1,8 @@
+import type { FrameModel } from '../../frame/assembly/FrameModel.ts';
 import { displacements } from '../../frame/freedoms/Combination.ts';
-import { integrate } from '../../frame/elements/gaussPanels.ts';
-import type { WavePoint } from '../../frame/elements/DynamicElement.ts';
-import { add, dot, scale } from '../../frame/vector3.ts';
+import { add, cross, dot, scale, subtract } from '../../frame/vector3.ts';
 import type { Vector3 } from '../../schemas/frameDocument.ts';
-import { rigidMotionAt } from '../massProperties.ts';
+import { rigidMotionAt, six } from '../massProperties.ts';
 import type { Six } from '../massProperties.ts';
 import type { ModeEnergies } from '../modeEnergies.ts';
 import type { DynamicSystem } from './DynamicSystem.ts';
@@ -22,9 +21,8 @@ export interface IntegratedMode {
 
 /**
  * Energies and participation of a mode of the continuous frame, with the members' own functions at ω between
- * the joint displacements x. Gauss quadrature in panels of 1 rad of the shortest wave makes each integral good to
- * about 1e-13 of itself; strain energies are sums of squares, so none cancels, and the Rayleigh quotient errs only by the
- * square of the shape's error.
+ * the joint displacements x. Strain energies are sums of squares, so none cancels, and the Rayleigh quotient errs only
+ * by the square of the shape's error.
  *   omega [rad/s]   x over the unknowns of `system`   centre of mass [m]
  */
 export function integrateMode(
@@ -33,60 +31,50 @@ export function integrateMode(
   omega: number,
   x: Float64Array,
 ): IntegratedMode {
-  const { model } = system;
+  const { model, pieces, elementOf } = system;
   const members = new Float64Array(model.parts.length);
   const kineticMembers = new Float64Array(model.parts.length);
   const kineticMasses = new Float64Array(model.bodies.length);
-  const participation: Six = [0, 0, 0, 0, 0, 0];
   const d = new Float64Array(6);
-  const point: WavePoint = { displacement: 0, rotation: 0, strain: 0 };
-
-  for (const { element, part, from, length, motion, direction, axis } of system.pieces) {
+  const integrals = system.elements.map((element) => element.integrals(omega));
+  // Momentum along the axes and about them, through the centre.
+  let along: Vector3 = [0, 0, 0];
+  let about: Vector3 = [0, 0, 0];
+  for (let i = 0; i < pieces.length; i++) {
+    const { element, part, from, length, motion, direction, axis } = pieces[i]!;
+    const { mass, strain, momenta } = integrals[elementOf[i]!]!;
+    const { rows } = element;
     displacements(motion, x, d);
-    const wave = element.wave(omega, d);
-    let momentum = 0;
-    let firstMoment = 0;
-    let spin = 0;
-    integrate(length, wave.phase, (at, weight) => {
-      wave.at(at / length - 0.5, point);
-      const moving = element.massPerLength * point.displacement;
-      const turning = element.inertiaPerLength * point.rotation;
-      members[part.index]! += 0.5 * weight * point.strain;
-      kineticMembers[part.index]! +=
-        0.5 * weight * (moving * point.displacement + turning * point.rotation);
-      momentum += weight * moving;
-      firstMoment += weight * moving * (from + at);
-      spin += weight * turning;
-    });
-    for (const r of DIRECTIONS) {
-      if (!model.exists[r]) continue;
-      const [t, turn] = rigidMotionAt(r, part.start, centre);
-      // The motion of the point at distance s along the member is t + s (turn × x).
-      const [far] = rigidMotionAt(r, add(part.start, part.axes.x), centre);
-      const slope = add(far, scale(t, -1));
-      participation[r] +=
-        momentum * dot(direction, t) + firstMoment * dot(direction, slope) + spin * dot(axis, turn);
-    }
+    members[part.index]! += 0.5 * squareOf(strain, d, rows);
+    kineticMembers[part.index]! += 0.5 * bilinear(mass, d, d, rows);
+    const momentum = product(momenta, 0, d, rows);
+    const firstMoment = product(momenta, rows, d, rows);
+    const spin = product(momenta, 2 * rows, d, rows);
+    const middle = add(part.start, scale(part.axes.x, from + 0.5 * length));
+    const arm = add(scale(subtract(middle, centre), momentum), scale(part.axes.x, firstMoment));
+    along = add(along, scale(direction, momentum));
+    about = add(add(about, cross(arm, direction)), scale(axis, spin));
   }
+  const participation = ofModel(model, [...along, ...about]);
   for (const { motion, mass, part } of system.bars) {
     const { start, end, axes } = model.parts[part]!;
     displacements(motion, x, d);
-    kineticMembers[part]! += 0.5 * bilinear(mass, d, d);
+    kineticMembers[part]! += 0.5 * bilinear(mass, d, d, 6);
     for (const r of DIRECTIONS) {
       if (!model.exists[r]) continue;
       const ends = [start, end].flatMap((at) => {
         const [t] = rigidMotionAt(r, at, centre);
         return [axes.x, axes.y, axes.z].map((unit) => dot(unit, t));
       });
-      participation[r] += bilinear(mass, d, ends);
+      participation[r] += bilinear(mass, d, ends, 6);
     }
   }
   for (const { index, at, motion, mass } of model.bodies) {
     displacements(motion, x, d);
-    kineticMasses[index] = 0.5 * bilinear(mass, d, d);
+    kineticMasses[index] = 0.5 * bilinear(mass, d, d, 6);
     for (const r of DIRECTIONS) {
       if (model.exists[r])
-        participation[r] += bilinear(mass, d, rigidMotionAt(r, at, centre).flat());
+        participation[r] += bilinear(mass, d, rigidMotionAt(r, at, centre).flat(), 6);
     }
   }
   const ties = Float64Array.from(model.ties, ({ motion, stiffness }) => {
@@ -114,10 +102,33 @@ export function integrateMode(
   };
 }
 
-function bilinear(m: Float64Array, a: ArrayLike<number>, b: ArrayLike<number>): number {
+/** Participation in the rigid motions that the model has. */
+function ofModel({ exists }: FrameModel, all: Six): Six {
+  return six((r) => (exists[r] ? all[r]! : 0));
+}
+
+function bilinear(
+  m: Float64Array,
+  a: ArrayLike<number>,
+  b: ArrayLike<number>,
+  rows: number,
+): number {
   let sum = 0;
-  for (let i = 0; i < 6; i++) {
-    for (let j = 0; j < 6; j++) sum += a[i]! * m[i * 6 + j]! * b[j]!;
+  for (let i = 0; i < rows; i++) {
+    for (let j = 0; j < rows; j++) sum += a[i]! * m[i * rows + j]! * b[j]!;
   }
+  return sum;
+}
+
+/** |R d|². */
+function squareOf(R: Float64Array, d: Float64Array, rows: number): number {
+  let square = 0;
+  for (let i = 0; i < rows; i++) square += product(R, i * rows, d, rows) ** 2;
+  return square;
+}
+
+function product(a: Float64Array, from: number, d: Float64Array, rows: number): number {
+  let sum = 0;
+  for (let j = 0; j < rows; j++) sum += a[from + j]! * d[j]!;
   return sum;
 }

@@ -1,6 +1,5 @@
-import { combine } from '../../frame/freedoms/Combination.ts';
-import type { Combination, Terms } from '../../frame/freedoms/Combination.ts';
-import type { DividedPart, FrameModel } from '../../frame/assembly/FrameModel.ts';
+import type { Combination } from '../../frame/freedoms/Combination.ts';
+import type { DividedPart, FrameModel, Segment } from '../../frame/assembly/FrameModel.ts';
 import { inModel } from '../../frame/assembly/chains.ts';
 import { bendingInertia } from '../../frame/elements/beamProperties.ts';
 import type { DynamicElement } from '../../frame/elements/DynamicElement.ts';
@@ -11,6 +10,7 @@ import type { Vector3 } from '../../schemas/frameDocument.ts';
 
 /** A stretch of a member in one kind of vibration. */
 export interface MemberPiece {
+  /** Shared by pieces of equal section, material, theory and length. */
   readonly element: DynamicElement;
   readonly part: DividedPart;
   /** Distance of its start from the member's, and its length [m]. */
@@ -23,8 +23,17 @@ export interface MemberPiece {
   readonly axis: Vector3;
 }
 
-/** Displacements u v w rx ry rz of one end in member axes. */
-type End = readonly Terms[];
+/** One row of an element over the rows of a segment's ends: Σ factor × row. */
+type RowMix = readonly (readonly [row: number, factor: number])[];
+
+/** What segments of one make in one set of unknowns share. */
+interface PieceMake {
+  readonly element: DynamicElement;
+  readonly rows: readonly RowMix[];
+  /** Direction and axis over the member's x, y and z. */
+  readonly direction: Vector3;
+  readonly axis: Vector3;
+}
 
 /**
  * Every member of a frame as uncoupled dynamic elements: stretching, twisting, and bending in the two principal
@@ -40,21 +49,65 @@ export function memberPieces(
   barPieces: (part: DividedPart) => number,
 ): { pieces: MemberPiece[]; unknowns: number } {
   let unknowns = model.free;
-  const pieces = model.segments.flatMap(({ part, number, motion }) => {
-    if (part.member.kind === 'beam') return beamPieces(model, part, number, motion);
+  const pieces: MemberPiece[] = [];
+  const beams = new Map<string, readonly PieceMake[]>();
+  const bars = new Map<string, DynamicElement>();
+  for (const { part, number, motion } of segmentsOf(model)) {
+    const { axes, make, segmentLength } = part;
+    if (part.member.kind === 'beam') {
+      const exists = [0, 1, 2, 3].map((i) => inModel([axes.x, axes.y, axes.z], i, model.exists));
+      const key = `${make} ${exists.join()}`;
+      let makes = beams.get(key);
+      if (makes === undefined) {
+        makes = beamMakes(part, exists);
+        beams.set(key, makes);
+      }
+      for (const { element, rows, direction, axis } of makes) {
+        pieces.push({
+          element,
+          part,
+          from: number * segmentLength,
+          length: segmentLength,
+          motion: mixed(motion, rows),
+          direction: turned(part, direction),
+          axis: turned(part, axis),
+        });
+      }
+      continue;
+    }
     const count = barPieces(part);
-    const inner = Array.from({ length: count - 1 }, (): Terms => [[unknowns++, 1]]);
-    const stations = [rowTerms(motion, 0), ...inner, rowTerms(motion, 3)];
-    const length = part.axes.length / count;
-    return Array.from({ length: count }, (_, i): MemberPiece => {
-      return {
-        ...stretch(part, length),
+    const length = axes.length / count;
+    const key = `${make} ${count}`;
+    let element = bars.get(key);
+    if (element === undefined) {
+      element = stretching(part, length);
+      bars.set(key, element);
+    }
+    const whole = mixed(motion, [[[0, 1]], [[3, 1]]]);
+    const first = unknowns;
+    unknowns += count - 1;
+    for (let i = 0; i < count; i++) {
+      pieces.push({
+        element,
+        part,
         from: i * length,
-        motion: combine([stations[i]!, stations[i + 1]!]),
-      };
-    });
-  });
+        length,
+        motion: count === 1 ? whole : betweenStations(whole, first, i, count),
+        direction: axes.x,
+        axis: axes.x,
+      });
+    }
+  }
   return { pieces, unknowns };
+}
+
+/** Segments in the order of members; those of undivided members are their chains. */
+function segmentsOf(model: FrameModel): readonly Segment[] {
+  if (model.parts.some(({ divisions }) => divisions > 1)) return model.segments;
+  return model.chains
+    .flat()
+    .map(({ part, ends }) => ({ part, number: 0, motion: ends }))
+    .sort((a, b) => a.part.index - b.part.index);
 }
 
 /** Members whose planes of bending are coupled by shear, which the mesh-free pieces leave out. */
@@ -65,52 +118,32 @@ export function crossShear(model: FrameModel): DividedPart[] {
   });
 }
 
-function stretch(
-  part: DividedPart,
-  length: number,
-): Pick<MemberPiece, 'element' | 'part' | 'length' | 'direction' | 'axis'> {
-  const { E, A, rho, massPerLength } = part.properties;
+function stretching({ properties }: DividedPart, length: number): DynamicElement {
+  const { E, A, rho, massPerLength } = properties;
   const inertia = rho * A + massPerLength;
-  return {
-    element: dynamicRod({ rigidity: E * A, inertia, length, twists: false }),
-    part,
-    length,
-    direction: part.axes.x,
-    axis: part.axes.x,
-  };
+  return dynamicRod({ rigidity: E * A, inertia, length, twists: false });
 }
 
-function beamPieces(
-  model: FrameModel,
-  part: DividedPart,
-  number: number,
-  motion: Combination,
-): MemberPiece[] {
-  const { properties, axes, segmentLength: length } = part;
+/** exists: of the displacements u v w and the rotation rx in the member's axes. */
+function beamMakes(part: DividedPart, exists: readonly boolean[]): PieceMake[] {
+  const { properties, segmentLength: length } = part;
   const { E, G, A, J, rho, Iy, Iz, massPerLength, theory } = properties;
-  const directions = [axes.x, axes.y, axes.z] as const;
-  const from = number * length;
-  const exists = (i: number) => inModel(directions, i, model.exists);
-  const rows = Array.from({ length: 12 }, (_, i) => rowTerms(motion, i));
-  const ends: readonly End[] = [rows.slice(0, 6), rows.slice(6)];
-  const pieces: MemberPiece[] = [];
-  if (exists(0)) {
-    const along = combine(ends.map((end) => end[0]!));
-    pieces.push({ ...stretch(part, length), from, motion: along });
+  const makes: PieceMake[] = [];
+  const along: Vector3 = [1, 0, 0];
+  if (exists[0]) {
+    const rows = [[[0, 1]], [[6, 1]]] as const;
+    makes.push({ element: stretching(part, length), rows, direction: along, axis: along });
   }
-  if (exists(3)) {
-    pieces.push({
+  if (exists[3]) {
+    makes.push({
       element: dynamicRod({ rigidity: G * J, inertia: rho * (Iy + Iz), length, twists: true }),
-      part,
-      from,
-      length,
-      motion: combine(ends.map((end) => end[3]!)),
-      direction: axes.x,
-      axis: axes.x,
+      rows: [[[3, 1]], [[9, 1]]],
+      direction: along,
+      axis: along,
     });
   }
-  for (const { y, z, I, kappa } of bendingPlanes(part, exists(1), exists(2))) {
-    pieces.push({
+  for (const { y, z, I, kappa } of bendingPlanes(part, exists[1]!, exists[2]!)) {
+    makes.push({
       element: dynamicFlexure({
         bending: E * I,
         shear: theory === 'timoshenko' ? kappa * G * A : Infinity,
@@ -118,18 +151,26 @@ function beamPieces(
         inertia: theory === 'timoshenko' ? rho * I : 0,
         length,
       }),
-      part,
-      from,
-      length,
       // The slope of a deflection along n = y-part + z-part is the rotation about x × n.
-      motion: combine(
-        ends.flatMap((end) => [mix(end[1]!, y, end[2]!, z), mix(end[5]!, y, end[4]!, -z)]),
-      ),
-      direction: add(scale(axes.y, y), scale(axes.z, z)),
-      axis: add(scale(axes.z, y), scale(axes.y, -z)),
+      rows: [0, 6].flatMap((end): RowMix[] => [
+        [
+          [end + 1, y],
+          [end + 2, z],
+        ],
+        [
+          [end + 5, y],
+          [end + 4, -z],
+        ],
+      ]),
+      direction: [0, y, z],
+      axis: [0, -z, y],
     });
   }
-  return pieces;
+  return makes;
+}
+
+function turned({ axes }: DividedPart, [x, y, z]: Vector3): Vector3 {
+  return add(add(scale(axes.x, x), scale(axes.y, y)), scale(axes.z, z));
 }
 
 interface BendingPlane {
@@ -162,18 +203,42 @@ function bendingPlanes({ properties }: DividedPart, v: boolean, w: boolean): Ben
   }));
 }
 
-function rowTerms({ dofs, T }: Combination, row: number): Terms {
-  const terms: [number, number][] = [];
-  dofs.forEach((dof, j) => {
-    const value = T[row * dofs.length + j]!;
-    if (value !== 0) terms.push([dof, value]);
-  });
-  return terms;
+/** Mixed rows of a combination, over the unknowns that take part in them. */
+function mixed({ dofs, T }: Combination, rows: readonly RowMix[]): Combination {
+  const width = dofs.length;
+  const values = new Float64Array(rows.length * width);
+  const kept: number[] = [];
+  for (let j = 0; j < width; j++) {
+    let takesPart = false;
+    for (let i = 0; i < rows.length; i++) {
+      let sum = 0;
+      for (const [row, factor] of rows[i]!) sum += factor * T[row * width + j]!;
+      values[i * width + j] = sum;
+      if (sum !== 0) takesPart = true;
+    }
+    if (takesPart) kept.push(j);
+  }
+  const result = new Float64Array(rows.length * kept.length);
+  for (let i = 0; i < rows.length; i++) {
+    kept.forEach((j, k) => (result[i * kept.length + k] = values[i * width + j]!));
+  }
+  return { rows: rows.length, dofs: Int32Array.from(kept, (j) => dofs[j]!), T: result };
 }
 
-function mix(a: Terms, factorA: number, b: Terms, factorB: number): Terms {
-  return [
-    ...a.map(([dof, value]): [number, number] => [dof, factorA * value]),
-    ...b.map(([dof, value]): [number, number] => [dof, factorB * value]),
-  ].filter(([, value]) => value !== 0);
+/** Ends of the `i`-th of `count` pieces of a bar whose inner stations are the unknowns from `first`. */
+function betweenStations(whole: Combination, first: number, i: number, count: number): Combination {
+  const outer = i === 0 ? mixed(whole, [[[0, 1]]]) : mixed(whole, [[[1, 1]]]);
+  if (i > 0 && i < count - 1) {
+    return {
+      rows: 2,
+      dofs: Int32Array.of(first + i - 1, first + i),
+      T: Float64Array.of(1, 0, 0, 1),
+    };
+  }
+  const width = outer.dofs.length + 1;
+  const T = new Float64Array(2 * width);
+  const outerRow = i === 0 ? 0 : 1;
+  T.set(outer.T, outerRow * width);
+  T[(1 - outerRow) * width + width - 1] = 1;
+  return { rows: 2, dofs: Int32Array.of(...outer.dofs, i === 0 ? first : first + count - 2), T };
 }

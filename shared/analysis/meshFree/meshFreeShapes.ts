@@ -1,11 +1,14 @@
 import type { DividedPart } from '../../frame/assembly/FrameModel.ts';
-import type { WavePoint } from '../../frame/elements/DynamicElement.ts';
+import type { DynamicElement } from '../../frame/elements/DynamicElement.ts';
 import { displacements } from '../../frame/freedoms/Combination.ts';
 import { dot } from '../../frame/vector3.ts';
 import { shapePoints, spreadBar, writeGlobal } from '../shapesAtPoints.ts';
 import type { ModeShapes } from '../shapesFile.ts';
 import type { DynamicSystem } from './DynamicSystem.ts';
 import type { MemberPiece } from './memberPieces.ts';
+
+/** Digits to which stations stand at the same place of equal pieces: shapes are stored in single precision. */
+const SAME_PLACE_DIGITS = 12;
 
 /**
  * Mode shapes at every node and at stations along every member, from the members' own functions: the stations only
@@ -23,7 +26,7 @@ export function meshFreeShapes(
   const barMotion = new Map(system.bars.map(({ part, motion }) => [part, motion]));
   const d = new Float64Array(6);
   const local = new Float64Array(12);
-  const point: WavePoint = { displacement: 0, rotation: 0, strain: 0 };
+  const runs = stationRuns(system, drawn);
   modes.forEach(({ omega, x }, mode) => {
     const base = mode * points * 6;
     model.nodes.forEach((motion, i) => {
@@ -31,14 +34,23 @@ export function meshFreeShapes(
       shapes.set(d, base + i * 6);
     });
     const stations = drawn.map(({ divisions }) => new Float64Array((divisions + 1) * 6));
-    for (const piece of system.pieces) {
-      const part = drawn[piece.part.index]!;
-      displacements(piece.motion, x, d);
-      const wave = piece.element.wave(omega, d);
-      for (const station of stationsOn(piece, part)) {
-        const xi = (station * part.segmentLength - piece.from) / piece.length - 0.5;
-        wave.at(Math.min(Math.max(xi, -0.5), 0.5), point);
-        addPoint(piece, point, stations[part.index]!, station * 6);
+    for (const { element, xi, pieces } of runs) {
+      const { rows } = element;
+      const size = 2 * rows;
+      const N = new Float64Array(xi.length * size);
+      xi.forEach((at, i) => element.shape(omega, at, N.subarray(i * size, (i + 1) * size)));
+      for (const { piece, first } of pieces) {
+        displacements(piece.motion, x, d);
+        const values = stations[piece.part.index]!;
+        for (let i = 0; i < xi.length; i++) {
+          let displacement = 0;
+          let rotation = 0;
+          for (let j = 0; j < rows; j++) {
+            displacement += N[i * size + j]! * d[j]!;
+            rotation += N[i * size + rows + j]! * d[j]!;
+          }
+          addPoint(piece, displacement, rotation, values, (first + i) * 6);
+        }
       }
     }
     for (const [index, motion] of barMotion) {
@@ -67,26 +79,56 @@ export function meshFreeShapes(
   };
 }
 
+/** Pieces of one element with stations drawn at the same places on them. */
+interface StationRun {
+  readonly element: DynamicElement;
+  /** Places of the stations, −½ … ½. */
+  readonly xi: readonly number[];
+  readonly pieces: { readonly piece: MemberPiece; readonly first: number }[];
+}
+
+function stationRuns(system: DynamicSystem, drawn: readonly DividedPart[]): StationRun[] {
+  const runs = new Map<string, StationRun>();
+  system.pieces.forEach((piece, i) => {
+    const { from, length, element } = piece;
+    const part = drawn[piece.part.index]!;
+    const { first, count } = stationsOn(piece, part);
+    const xi = Array.from({ length: count }, (_, k) => {
+      const at = ((first + k) * part.segmentLength - from) / length - 0.5;
+      return Math.min(Math.max(at, -0.5), 0.5);
+    });
+    const key = `${system.elementOf[i]!} ${xi.map((at) => at.toPrecision(SAME_PLACE_DIGITS)).join()}`;
+    const run = runs.get(key);
+    if (run) run.pieces.push({ piece, first });
+    else runs.set(key, { element, xi, pieces: [{ piece, first }] });
+  });
+  return [...runs.values()];
+}
+
 /** Stations on a piece; one between two pieces belongs to the later, the last to the last. */
-function stationsOn({ from, length }: MemberPiece, part: DividedPart): number[] {
+function stationsOn({ from, length }: MemberPiece, part: DividedPart) {
   const tolerance = 1e-9 * part.axes.length;
   const ends = from + length >= part.axes.length - tolerance;
-  const all = Array.from({ length: part.divisions + 1 }, (_, station) => station);
-  return all.filter((station) => {
-    const at = station * part.segmentLength;
-    return at >= from - tolerance && (ends || at < from + length - tolerance);
-  });
+  const first = Math.ceil((from - tolerance) / part.segmentLength);
+  const next = ends
+    ? part.divisions + 1
+    : Math.ceil((from + length - tolerance) / part.segmentLength);
+  return { first, count: next - first };
 }
 
 /** Adds what one kind of vibration does at a station, in member axes. */
 function addPoint(
   { part: { axes }, direction, axis }: MemberPiece,
-  { displacement, rotation }: WavePoint,
+  displacement: number,
+  rotation: number,
   values: Float64Array,
   at: number,
 ): void {
-  [axes.x, axes.y, axes.z].forEach((unit, k) => {
-    values[at + k]! += displacement * dot(unit, direction);
-    values[at + 3 + k]! += rotation * dot(unit, axis);
-  });
+  const { x, y, z } = axes;
+  values[at]! += displacement * dot(x, direction);
+  values[at + 1]! += displacement * dot(y, direction);
+  values[at + 2]! += displacement * dot(z, direction);
+  values[at + 3]! += rotation * dot(x, axis);
+  values[at + 4]! += rotation * dot(y, axis);
+  values[at + 5]! += rotation * dot(z, axis);
 }

@@ -118,8 +118,8 @@ export function solveMeshFree(
     complete,
     warnings: crossShear(model).map(crossShearWarning),
     timing: {
-      order: joints.symbolic.timing.order,
-      symbolic: joints.symbolic.timing.symbolic,
+      order: joints.analysis.symbolic.timing.order,
+      symbolic: joints.analysis.symbolic.timing.symbolic,
       factor: 0,
       assemble: assembled - began,
       iterate: searched - checked,

@@ -66,7 +66,7 @@ export function dynamicFlexure(properties: FlexureProperties): DynamicElement {
       const waves = flexuralWaves(slowness * omega, r2, s2);
       const m = new Float64Array(16);
       this.mass(omega, m);
-      // mass() leaves the functions at the end in `atEnd`.
+      flexuralWave(waves, 0.5, atEnd);
       const even = amplitudes(endMatrix(atEnd, 0).inverse, length, 1);
       const odd = amplitudes(endMatrix(atEnd, 8).inverse, length, -1);
       const gram = new Float64Array(6);
