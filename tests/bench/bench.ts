@@ -3,7 +3,14 @@ import { coldSolve } from './coldSolve.ts';
 import { documentOf, FRAMES, MESH_FREE_RACK, MODE_COUNTS } from './frames.ts';
 import type { BenchFrame } from './frames.ts';
 import { comparedTime, medianSolve } from './measureSolve.ts';
-import { growthLines, largestDifference, machineLine, scipyTable, stageTable } from './report.ts';
+import {
+  growthLines,
+  largestDifference,
+  load,
+  machineLine,
+  scipyTable,
+  stageTable,
+} from './report.ts';
 import type { BenchRow } from './report.ts';
 import { scipyTimes, scipyVersions } from './scipy.ts';
 
@@ -77,10 +84,13 @@ function meshFreeLine(runs: number): string {
 function main(): void {
   const { frames, runs } = readChoice();
   const scipy = scipyVersions();
+  const loadBefore = load();
   const rows = frames.flatMap((frame) => measure(frame, runs ?? frame.runs, scipy !== null));
   const meshFree = meshFreeLine(runs ?? 5);
 
-  console.log(`${machineLine(scipy)}. Milliseconds, one thread, median of warm runs.\n`);
+  console.log(
+    `${machineLine(scipy)}. Milliseconds, one thread, median of warm runs; system load ${loadBefore} before, ${load()} after.\n`,
+  );
   console.log(`${stageTable(rows)}\n`);
   if (scipy !== null) console.log(`${scipyTable(rows)}\n`);
   for (const line of [...growthLines(rows), meshFree]) console.log(`- ${line}`);

@@ -1,4 +1,4 @@
-import { cpus, totalmem } from 'node:os';
+import { cpus, loadavg, totalmem } from 'node:os';
 import type { SolveSummary } from '#shared/schemas/solveResult.ts';
 import type { ColdSolve } from './coldSolve.ts';
 import type { BenchFrame, MassKind } from './frames.ts';
@@ -105,6 +105,11 @@ export function largestDifference({ warm, scipy }: BenchRow): number {
       Math.abs(frequencyHz / (Math.sqrt(scipy.lambda[i]!) / (2 * Math.PI)) - 1),
     ),
   );
+}
+
+/** Load average of the last minute. Where others work at the same time, before the run it is well above 0. */
+export function load(): string {
+  return loadavg()[0]!.toFixed(1);
 }
 
 /** How time grows with the unknowns of the racks, and the share of assembly, in sentences. */
