@@ -26,7 +26,7 @@ export interface BracketedMode {
   /** [rad/s] */
   readonly omega: number;
   readonly x: Float64Array;
-  /** The counts on either side of omega (1 ± halfWidth) differ by the modes found there, and no more. */
+  /** The natural frequency lies in omega (1 ± halfWidth): by two counts, or by the bound of Newton's last step. */
   readonly halfWidth: number;
 }
 
@@ -35,6 +35,7 @@ export interface BracketedMode {
  * how many modes each holds and iteration finds that many inside; two more counts just below and above confirm them.
  * Where iteration fails, bisection goes on until the bracket itself is as narrow as the answer need be.
  *   evaluate  factors K_D and counts; reports progress and stops the solve
+ *   known     modes whose frequencies are certain, ascending: where they are all that a bracket holds, it is done
  * Source: Wittrick and Williams 1971 for the count; Williams and Kennedy 1988, Int. J. Numer. Meth. Eng. 26,
  * 1825–1831, for safeguarded refinement in its brackets.
  */
@@ -43,10 +44,16 @@ export function* bracketModes(
   evaluate: (omega: number) => Evaluation,
   low: Counted,
   high: Counted,
+  known: readonly BracketedMode[] = [],
   tryWidth = TRY_WIDTH,
 ): Generator<BracketedMode> {
   const count = high.below - low.below;
   if (count <= 0) return;
+  const inside = known.filter(({ omega }) => omega > low.omega && omega < high.omega);
+  if (inside.length === count) {
+    yield* inside;
+    return;
+  }
   const width = (high.omega - low.omega) / high.omega;
   let split = width > 0.5 ? Math.sqrt(low.omega * high.omega) : 0.5 * (low.omega + high.omega);
   let next = tryWidth;
@@ -67,8 +74,8 @@ export function* bracketModes(
     }
   }
   const middle = evaluate(split);
-  yield* bracketModes(system, evaluate, low, middle, next);
-  yield* bracketModes(system, evaluate, middle, high, next);
+  yield* bracketModes(system, evaluate, low, middle, inside, next);
+  yield* bracketModes(system, evaluate, middle, high, inside, next);
 }
 
 /** The modes of a bracket; or where to split it, since they are apart; or null. */
@@ -123,6 +130,6 @@ function narrowest(
   count: number,
 ): BracketedMode[] {
   const omega = 0.5 * (low.omega + high.omega);
-  const x = ritzBlock(system, evaluate(omega), count, undefined)?.x ?? [];
+  const x = ritzBlock(system, evaluate(omega), count)?.x ?? [];
   return x.map((vector) => ({ omega, x: vector, halfWidth: FINEST }));
 }

@@ -49,18 +49,24 @@ export function solveMeshFree(
   const assembled = clock();
   stopIfAsked();
 
-  progress(0.05, 'looking for mechanisms');
-  const rigid = rigidModes(joints, totalMass).length;
-  refuseMechanismsOf(model);
+  progress(0.1, 'finding modes');
+  const rigidOfJoints = rigidModes(joints, totalMass);
+  const rigid = rigidOfJoints.length;
+  const upTo = settings.upToHz === undefined ? undefined : 2 * Math.PI * settings.upToHz;
+  const most = settings.modes ?? DEFAULT_SOLVE_SETTINGS.modes!;
+  const atRest = modesAtRest(joints, {
+    rigid: rigidOfJoints,
+    inDoubt: () => refuseMechanismsOf(model),
+    count: () => SPARE_ESTIMATES + (upTo === undefined ? most : joints.evaluate(upTo).below),
+    shouldStop,
+  });
   const checked = clock();
   stopIfAsked();
 
-  progress(0.1, 'finding modes');
-  const upTo = settings.upToHz === undefined ? undefined : 2 * Math.PI * settings.upToHz;
-  const most = settings.modes ?? DEFAULT_SOLVE_SETTINGS.modes!;
   const found = findMeshFreeModes({
     joints,
     divided: (omega) => dividedSystem(joints, omega, clock),
+    estimates: (system, count) => system === joints ? atRest : modesAtRest(system, {rigid: rigidModes(system, totalMass), inDoubt: () => undefined, count, shouldStop}),
     rigid,
     wanted: upTo === undefined ? { count: most } : { upTo },
     onProgress: (fraction) => progress(0.1 + 0.8 * fraction, 'finding modes'),

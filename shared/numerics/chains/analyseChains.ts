@@ -19,7 +19,7 @@ export interface ChainAnalysis {
 /**
  * Analysis of K − σM with its chains eliminated: they join the blocks at their ends.
  *   clock  milliseconds, for the timing kept in the result
- * Throws RangeError when L would not fit into the memory there is.
+ * Throws AppError `memory-limit` when L would not fit into the memory there is.
  */
 export function analyseChains(pair: ChainedPair, clock: () => number = () => 0): ChainAnalysis {
   const begin = clock();

@@ -11,12 +11,19 @@ import { shiftBelow } from './shiftBelow.ts';
  * Residual norm, relative to θ, at which a Ritz pair counts as converged: the error of λ is its
  * square over the gap, that of the shape falls by a further factor in the purification step.
  */
-const CONVERGED_TOL = 1e-8;
+const CONVERGED_TOL = 1e-10;
+/**
+ * From this residual on, relative to θ, a shape is sent through A once more by a solve: it shrinks the higher
+ * modes in it. Where M is singular all are: what recurrence lets in of its null space is more than rounding.
+ */
+const PURE_TOL = 1e-13;
 /** The same for the neighbour beyond the wanted ones, which only places the gap (CLEAR_GAP). */
 const NEIGHBOUR_TOL = 1e-4;
 /** Dimension of one Krylov space: room for the wanted and their convergence, memory for the rest. */
 const LEAST_DIMENSION = 100;
 const MOST_DIMENSION = 1000;
+/** Modes beyond those missing that one run may keep. */
+const MOST_EXTRA = 24;
 /** Runs of the search and of the recovery; each that finds nothing makes the next one larger. */
 const MOST_RUNS = 60;
 const MOST_BARREN_RUNS = 3;
@@ -185,7 +192,7 @@ export class ModeSearch {
       shouldStop: this.#options.shouldStop ?? (() => false),
     };
     // Room for the modes first, so that the space behind it can be given up.
-    this.modes.reserve(settings.maxDimension);
+    this.modes.reserve(missing + MOST_EXTRA);
     const kept = arena.used;
     const pairs = lanczos(this.#pencil, this.modes, this.#random, settings);
     this.timing.iterate += this.#clock() - begin;
@@ -195,30 +202,40 @@ export class ModeSearch {
       this.exhausted = true;
     } else {
       this.stopped = pairs.stopped;
-      count = this.#keep(pairs, limit);
+      count = this.#keep(pairs, missing, limit);
     }
     arena.rewind(kept > used ? kept : used);
     return count;
   }
 
-  #keep(pairs: RitzPairs, limit: number): number {
+  #keep(pairs: RitzPairs, missing: number, limit: number): number {
     const begin = this.#clock();
     const { theta, residual } = pairs;
     const converged = convergedPairs(theta, residual);
     const wanted: number[] = [];
-    for (let i = 0; i < converged && this.#lambdaOf(theta[i]!) < limit; i++) wanted.push(i);
+    const most = Math.min(converged, missing + MOST_EXTRA);
+    for (let i = 0; i < most && this.#lambdaOf(theta[i]!) < limit; i++) wanted.push(i);
     const candidates = this.#ritzVectors(pairs, wanted);
     const { arena, size } = this.#pencil;
+    const image = arena.numbers(size);
+    const singular = this.#pencil.diagonal('M').includes(0);
     let count = 0;
     wanted.forEach((i, c) => {
-      arena.view(this.modes.next, size).set(arena.view(candidates + 8 * size * c, size));
+      const candidate = candidates + 8 * size * c;
+      if (singular || residual[i]! > PURE_TOL * theta[i]!) {
+        this.#pencil.multiplyMass(candidate, image);
+        this.#pencil.solve(image, this.modes.next);
+      } else {
+        arena.view(this.modes.next, size).set(arena.view(candidate, size));
+      }
       if (this.modes.add() === 0) return;
       this.lambda.push(this.#lambdaOf(theta[i]!));
       count += 1;
     });
-    if (!pairs.invariant && converged < theta.length) {
-      if (residual[converged]! <= NEIGHBOUR_TOL * theta[converged]!) {
-        this.next = this.#lambdaOf(theta[converged]!);
+    const beyond = wanted.length;
+    if ((!pairs.invariant || beyond < converged) && beyond < theta.length) {
+      if (residual[beyond]! <= NEIGHBOUR_TOL * theta[beyond]!) {
+        this.next = this.#lambdaOf(theta[beyond]!);
       }
     }
     this.timing.finish += this.#clock() - begin;

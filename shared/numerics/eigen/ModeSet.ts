@@ -75,8 +75,8 @@ export class ModeSet {
       const c = this.#coefficients;
       kernels.dots(size, this.images, this.stride, this.count, w, c);
       kernels.subtractCombination(size, this.vectors, this.stride, this.count, c, w);
-      kernels.subtractCombination(size, this.images, this.stride, this.count, c, image);
     }
+    if (this.count > 0) this.#pencil.multiplyMass(w, image);
     const norm = Math.sqrt(Math.max(kernels.dot(size, w, image), 0));
     if (!(norm > COPY_TOL * before)) return 0;
     kernels.multiply(size, 1 / norm, w);

@@ -1,3 +1,4 @@
+import { tooLarge } from '../kernels/Arena.ts';
 import { approximateMinimumDegree } from '../ordering/approximateMinimumDegree.ts';
 import { columnCounts } from '../ordering/columnCounts.ts';
 import { compressGraph, type CompressedGraph } from '../ordering/compressGraph.ts';
@@ -15,7 +16,7 @@ const MAX_VALUES = 2 ** 28;
  * Symbolic factorisation of K − σM for any σ: order, supernodes, rows of L, assembly tree.
  *   K, M   patterns, n×n; M null where only K will be factorised
  *   clock  milliseconds, for the timing kept in the result
- * Throws RangeError when the orders differ, or L would not fit into the memory there is.
+ * Throws RangeError when the orders differ, AppError `memory-limit` where L would not fit into the memory there is.
  * Source: Duff and Reid 1983, The multifrontal solution of indefinite sparse symmetric linear
  * systems, ACM Trans. Math. Softw. 9(3), 302–325; Liu 1990 for trees and supernodes.
  */
@@ -126,7 +127,7 @@ function expand(
     rowCount[s] = rows;
     rowPtr[s + 1] = rowPtr[s]! + toTiles(rows);
     const end = panelPtr[s]! + columns * (columns + toTiles(rows));
-    if (end > MAX_VALUES) throw new RangeError('The factor needs more than 2 GiB of memory.');
+    if (end > MAX_VALUES) throw tooLarge();
     panelPtr[s + 1] = end;
     if (columns > maxColumns) maxColumns = columns;
   }

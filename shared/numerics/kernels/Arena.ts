@@ -1,3 +1,4 @@
+import { AppError } from '../../errors/AppError.ts';
 import type { Kernels } from './Kernels.ts';
 import { kernelBytes } from './kernelBytes.ts';
 import { scriptKernels } from './scriptKernels.ts';
@@ -19,7 +20,7 @@ export interface Arena {
   readonly i32: Int32Array;
   /** Bytes in use. */
   readonly used: number;
-  /** Address of room for `count` numbers; what it holds is undefined. Throws RangeError beyond 2 GiB. */
+  /** Address of room for `count` numbers; what it holds is undefined. Throws AppError `memory-limit`. */
   numbers(count: number): number;
   indices(count: number): number;
   /** Copies an array into the memory and gives its address. */
@@ -33,6 +34,13 @@ export interface Arena {
 
 /** Which implementation of the kernels to use; `auto`: SIMD where the engine has it. */
 export type KernelChoice = 'auto' | 'script';
+
+/** What is said of a frame whose solve would not fit into the 2 GiB that one linear memory can have. */
+export function tooLarge(): AppError {
+  const message =
+    'The frame is too large: solving it needs more than 2 GiB of memory. Take fewer divisions, or solve it in parts.';
+  return new AppError('memory-limit', message, { issues: [{ path: '', message }] });
+}
 
 class LinearMemory implements Arena {
   readonly kernels: Kernels;
@@ -91,7 +99,7 @@ class LinearMemory implements Arena {
   #allocate(bytes: number): number {
     const address = this.#used;
     const end = Math.ceil((address + bytes) / ALIGNMENT) * ALIGNMENT;
-    if (end > MOST_BYTES) throw new RangeError('The solve needs more than 2 GiB of memory.');
+    if (end > MOST_BYTES) throw tooLarge();
     if (end > this.#buffer.byteLength) this.#grow(end);
     this.#used = end;
     return address;
@@ -136,10 +144,12 @@ export function withArena<Result>(
 ): Result {
   const arena = kept[choice] ?? newArena(choice);
   delete kept[choice];
-  const result = use(arena);
-  arena.rewind(ALIGNMENT);
-  if (arena.f64.byteLength <= MOST_KEPT) kept[choice] = arena;
-  return result;
+  try {
+    return use(arena);
+  } finally {
+    arena.rewind(ALIGNMENT);
+    if (arena.f64.byteLength <= MOST_KEPT) kept[choice] = arena;
+  }
 }
 
 /** An arena of its own, for a caller that keeps it between calls. */
