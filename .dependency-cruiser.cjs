@@ -43,13 +43,25 @@ const shared = [
     'ordering-imports-lower-layers',
     '^shared/numerics/ordering/',
     ['shared/numerics/(ordering|sparse)/', 'shared/errors/'],
-    'sparse ← ordering ← factor ← eigen.',
+    'kernels, sparse ← ordering ← factor ← chains ← eigen.',
+  ),
+  only(
+    'kernels-import-errors',
+    '^shared/numerics/kernels/',
+    ['shared/numerics/kernels/', 'shared/errors/'],
+    'Loops over one memory; they know no matrix.',
   ),
   only(
     'factor-imports-lower-layers',
     '^shared/numerics/factor/',
-    ['shared/numerics/(factor|ordering|sparse)/', 'shared/errors/'],
-    'sparse ← ordering ← factor ← eigen.',
+    ['shared/numerics/(factor|ordering|sparse|kernels)/', 'shared/errors/'],
+    'kernels, sparse ← ordering ← factor ← chains ← eigen.',
+  ),
+  only(
+    'chains-import-lower-layers',
+    '^shared/numerics/chains/',
+    ['shared/numerics/(chains|factor|ordering|sparse|kernels)/', 'shared/errors/'],
+    'kernels, sparse ← ordering ← factor ← chains ← eigen.',
   ),
   only(
     'numerics-import-numerics',

@@ -22,7 +22,8 @@ async function main() {
     const stageBegan = performance.now();
     const outcome = await stage();
     passed += outcome.passed ?? 0;
-    failed += outcome.failed ?? 0;
+    // A stage that fails before it has counted its tests has failed all the same.
+    failed += outcome.ok ? 0 : Math.max(outcome.failed ?? 0, 1);
     const time = formatDuration(performance.now() - stageBegan);
     console.log(`── ${name}: ${outcome.ok ? 'passed' : 'FAILED'}, ${outcome.count}, ${time}`);
     if (!outcome.ok) {
