@@ -15,9 +15,11 @@ import { addElement, assemblyPlan } from './assemblyPlan.ts';
 import type { Places } from './assemblyPlan.ts';
 import type { MemberPiece } from './memberPieces.ts';
 
-/** Part of ω by which a frequency is moved where K_D has no certain inertia. */
-const NUDGE = 1e-11;
-const MOST_NUDGES = 6;
+/**
+ * Parts of ω by which a frequency is moved, in turn, where K_D has no certain inertia: a low mode of short, stiff pieces
+ * leaves a pivot of rounding on either side of it.
+ */
+const NUDGES = [0, 1e-11, 4e-11, 1.6e-10, 6.4e-10, 2.5e-9, 1e-8] as const;
 
 /** The dynamic stiffness at one frequency, factored, and what it counts. */
 export interface Evaluation {
@@ -157,12 +159,13 @@ export class DynamicSystem {
 
   /**
    * Factors K_D and counts (Wittrick and Williams 1971). On a frequency at which a pivot vanishes the count has no
-   * meaning: ω is then moved up by some 1e-11 of itself. Throws AppError `unsolvable`
+   * meaning: ω is then moved up by 1e-11 to 1e-8 of itself. Throws AppError `unsolvable`
    * where that does not help.
    */
   evaluate(omega: number): Evaluation {
-    for (let nudge = 0; ; nudge++) {
-      const shifted = omega * (1 + nudge * NUDGE);
+    let cause: ZeroPivotError | undefined;
+    for (const nudge of NUDGES) {
+      const shifted = omega * (1 + nudge);
       const { K, clamped } = this.stiffness(shifted);
       if (this.n === 0) return { omega: shifted, ldlt: null, below: clamped, clamped };
       try {
@@ -171,13 +174,14 @@ export class DynamicSystem {
         return { omega: shifted, ldlt: this.#ldlt, below, clamped };
       } catch (error) {
         if (!(error instanceof ZeroPivotError)) throw error;
-        if (nudge === MOST_NUDGES) throw uncertain(error);
+        cause = error;
       }
     }
+    throw uncertain(cause);
   }
 }
 
-function uncertain(cause: ZeroPivotError): AppError {
+function uncertain(cause: ZeroPivotError | undefined): AppError {
   const message =
     'The stiffnesses of this frame lie too far apart to count its modes: replace members that are very short or ' +
     'very stiff beside the others by rigid links or arms.';

@@ -15,7 +15,7 @@ const ABOVE_ALL = 1e7;
 const RAISE = 1.05;
 const MOST_RAISES = 20;
 /** Estimates past the wanted ones among which to look for the gap. */
-export const SPARE_ESTIMATES = 4;
+const SPARE_ESTIMATES = 4;
 /** Distance over λ by which estimates must stand apart for a clear gap to be expected between them. */
 const EXPECTED_GAP = 20 * CLEAR_GAP;
 /** Room above the wanted frequencies in which to look for the gap. */
@@ -28,8 +28,8 @@ export interface MeshFreeSearch {
   readonly joints: DynamicSystem;
   /** The frame with pieces short enough that none resonates, clamped, below omega [rad/s]. */
   readonly divided: (omega: number) => DynamicSystem;
-  /** Lowest elastic modes of a system estimated, ascending, as far as it has them. */
-  readonly estimates: (system: DynamicSystem) => readonly ModeEstimate[];
+  /** Elastic ones of the lowest `count` modes of a system estimated, ascending, as far as it has them. */
+  readonly estimates: (system: DynamicSystem, count: number) => readonly ModeEstimate[];
   /** Rigid-body modes, which lie at 0. */
   readonly rigid: number;
   /** How many modes are wanted, rigid ones included; or all up to a frequency [rad/s]. */
@@ -92,12 +92,13 @@ interface RefinedModes {
 function refinedModes(search: MeshFreeSearch, target: number): RefinedModes | null {
   const { joints, rigid, stopIfAsked, onProgress } = search;
   const needed = target - rigid;
-  const first = upToGap(search.estimates(joints), needed);
+  const count = target + SPARE_ESTIMATES;
+  const first = upToGap(search.estimates(joints, count), needed);
   const top = first?.at(-1);
   if (first === null || top === undefined) return null;
   const system = search.divided(top.omega);
   // Shapes with members' own vibrations, and so lower estimates.
-  const estimates = system === joints ? first : upToGap(search.estimates(system), needed);
+  const estimates = system === joints ? first : upToGap(search.estimates(system, count), needed);
   if (estimates === null) return null;
   const evaluate = (omega: number): Evaluation => {
     stopIfAsked();
@@ -110,7 +111,10 @@ function refinedModes(search: MeshFreeSearch, target: number): RefinedModes | nu
 }
 
 /** The needed estimates and those up to the next gap; null where there are too few. */
-function upToGap(estimates: readonly ModeEstimate[], needed: number): readonly ModeEstimate[] | null {
+function upToGap(
+  estimates: readonly ModeEstimate[],
+  needed: number,
+): readonly ModeEstimate[] | null {
   if (estimates.length < needed) return null;
   const lambda = estimates.map(({ omega }) => omega * omega);
   let end = needed;

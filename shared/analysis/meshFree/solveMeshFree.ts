@@ -23,6 +23,7 @@ import { integrateMode } from './integrateMode.ts';
 import type { IntegratedMode } from './integrateMode.ts';
 import { crossShear, memberPieces } from './memberPieces.ts';
 import { meshFreeShapes } from './meshFreeShapes.ts';
+import { modesAtRest, resistsEveryMotion } from './modesAtRest.ts';
 
 /**
  * Natural frequencies and shapes of a frame of continuous members: transcendental dynamic stiffness, frequencies
@@ -36,7 +37,7 @@ import { meshFreeShapes } from './meshFreeShapes.ts';
 export function solveMeshFree(
   document: FrameDocument,
   settings: SolveSettings,
-  { clock, progress, stopIfAsked }: SolveProgress,
+  { clock, progress, shouldStop, stopIfAsked }: SolveProgress,
 ): SolvedFrame {
   const began = clock();
   const model = buildModel(document, { massKind: 'consistent', divisionsOf: () => 1 });
@@ -54,19 +55,17 @@ export function solveMeshFree(
   const rigid = rigidOfJoints.length;
   const upTo = settings.upToHz === undefined ? undefined : 2 * Math.PI * settings.upToHz;
   const most = settings.modes ?? DEFAULT_SOLVE_SETTINGS.modes!;
-  const atRest = modesAtRest(joints, {
-    rigid: rigidOfJoints,
-    inDoubt: () => refuseMechanismsOf(model),
-    count: () => SPARE_ESTIMATES + (upTo === undefined ? most : joints.evaluate(upTo).below),
-    shouldStop,
-  });
+  if (rigid > 0 || !resistsEveryMotion(joints)) refuseMechanismsOf(model);
   const checked = clock();
   stopIfAsked();
 
   const found = findMeshFreeModes({
     joints,
     divided: (omega) => dividedSystem(joints, omega, clock),
-    estimates: (system, count) => system === joints ? atRest : modesAtRest(system, {rigid: rigidModes(system, totalMass), inDoubt: () => undefined, count, shouldStop}),
+    estimates: (system, count) => {
+      const motions = system === joints ? rigidOfJoints : rigidModes(system, totalMass);
+      return modesAtRest(system, motions, count, shouldStop);
+    },
     rigid,
     wanted: upTo === undefined ? { count: most } : { upTo },
     onProgress: (fraction) => progress(0.1 + 0.8 * fraction, 'finding modes'),
@@ -142,12 +141,14 @@ interface FoundMode extends IntegratedMode {
 /** Rigid-body modes over the unknowns of a system, those inside bars included. */
 function rigidModes(system: DynamicSystem, totalMass: number): Float64Array[] {
   const { model, pieces, n } = system;
+  const motions = rigidMotions(model);
+  if (motions.length === 0) return [];
   const { M } = assembleMatrices(model);
   const d = new Float64Array(2);
   const multiplyMass = (from: Float64Array, to: Float64Array) => {
     multiplySymmetric(M, from, to);
   };
-  return massNormalised(rigidMotions(model), multiplyMass, model, totalMass).map((motion) => {
+  return massNormalised(motions, multiplyMass, model, totalMass).map((motion) => {
     const x = new Float64Array(n);
     x.set(motion.x);
     for (const { element, motion: ends } of pieces) {
