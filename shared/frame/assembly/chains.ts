@@ -52,11 +52,10 @@ export function layChains(
 ): { chains: ModelChain[][]; joints: number; free: number } {
   const makes = new Map<string, MakeDraft>();
   parts.forEach((part, i) => {
-    const { member, axes, divisions } = part;
+    const { divisions } = part;
     const [start, end] = ends[i]!;
     const last = endMotion(part, end!, carriers, freedoms, ties);
-    const displacements = member.kind === 'bar' ? [0, 1, 2] : [0, 1, 2, 3, 4, 5];
-    const inSet = displacements.map((d) => inModel([axes.x, axes.y, axes.z], d, exists));
+    const inSet = displacementsInSet(part, exists);
     const count = Math.ceil(divisions / MOST_ELEMENTS);
     let before = endMotion(part, start!, carriers, freedoms, ties);
     let from = 0;
@@ -84,10 +83,21 @@ export function layChains(
     drafts.map((draft) => {
       const inner = free;
       free += make.inner;
-      return { ...draft, inner, make };
+      const { part, from, elements, ends: motion } = draft;
+      return { part, from, elements, ends: motion, inner, make };
     }),
   );
   return { chains, joints, free };
+}
+
+const ALL_OF_BEAM: readonly boolean[] = new Array<boolean>(6).fill(true);
+const ALL_OF_BAR: readonly boolean[] = new Array<boolean>(3).fill(true);
+
+/** Which displacements in member axes exist in this model. */
+function displacementsInSet({ member, axes }: DividedPart, exists: Uint8Array): readonly boolean[] {
+  const all = member.kind === 'bar' ? ALL_OF_BAR : ALL_OF_BEAM;
+  if (!exists.includes(0)) return all;
+  return all.map((_, d) => inModel([axes.x, axes.y, axes.z], d, exists));
 }
 
 /** Order of the unknowns of a chain of so many elements. */

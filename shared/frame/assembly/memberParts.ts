@@ -101,7 +101,22 @@ export function partDivider(
       matrices = elementMatrices(part, segmentLength, massKind, makes.size);
       makes.set(key, matrices);
     }
-    return { ...part, divisions: count, segmentLength, ...matrices };
+    const { make, rigidity, stiffness, mass } = matrices;
+    const { index, start, end } = part;
+    return {
+      index,
+      member,
+      axes,
+      start,
+      end,
+      properties,
+      divisions: count,
+      segmentLength,
+      make,
+      rigidity,
+      stiffness,
+      mass,
+    };
   };
 }
 
