@@ -11,7 +11,7 @@ import { factorise } from '../../numerics/factor/factorise.ts';
 import type { Ldlt } from '../../numerics/factor/Ldlt.ts';
 import { ZeroPivotError } from '../../numerics/factor/ZeroPivotError.ts';
 import type { SymmetricCsc } from '../../numerics/sparse/SymmetricCsc.ts';
-import { addElement, assemblyPlan } from './assemblyPlan.ts';
+import { addBlock, assemblyPlan, blockOf, sameTransform, transformed } from './assemblyPlan.ts';
 import type { Places } from './assemblyPlan.ts';
 import type { MemberPiece } from './memberPieces.ts';
 
@@ -46,6 +46,36 @@ function acrossMass(
     });
 }
 
+/** Pieces that enter K_D with the same numbers: of one element, and turned alike. */
+interface PieceBlock {
+  readonly element: number;
+  readonly motion: Combination;
+  /** Tᵀ k T, overwritten. */
+  readonly block: Float64Array;
+  readonly pieces: number[];
+}
+
+/** Orientations of one element that are looked through for one alike; more are kept apart. */
+const MOST_ORIENTATIONS = 16;
+
+function pieceBlocks(pieces: readonly MemberPiece[], elementOf: Int32Array): PieceBlock[] {
+  const blocks: PieceBlock[] = [];
+  const byElement: PieceBlock[][] = [];
+  pieces.forEach(({ motion }, i) => {
+    const element = elementOf[i]!;
+    const known = (byElement[element] ??= []);
+    const alike = known.find((block) => sameTransform(block.motion, motion));
+    if (alike) {
+      alike.pieces.push(i);
+      return;
+    }
+    const block = { element, motion, block: blockOf(motion), pieces: [i] };
+    blocks.push(block);
+    if (known.length < MOST_ORIENTATIONS) known.push(block);
+  });
+  return blocks;
+}
+
 /**
  * The dynamic stiffness of a frame over its unknowns:  K_D(ω) = Σ Tᵀ k(ω) T + K₀ − ω² M₀, with the
  * transcendental k of the member pieces, K₀ of joints, supports and springs, M₀ of masses and of bars across
@@ -72,6 +102,7 @@ export class DynamicSystem {
   /** Matrices of the distinct elements at one ω. */
   readonly #k: readonly Float64Array[];
   readonly #clampedOf: Int32Array;
+  readonly #blocks: readonly PieceBlock[];
   #ldlt: Ldlt | undefined;
 
   constructor(
@@ -102,11 +133,17 @@ export class DynamicSystem {
     this.#K0 = pattern.values.slice();
     this.#M0 = pattern.values.slice();
     let at = pieces.length;
-    for (const { motion, mass } of this.bars) addElement(this.#M0, places[at++]!, motion, mass);
+    const add = (values: Float64Array, motion: Combination, matrix: Float64Array) => {
+      const block = blockOf(motion);
+      transformed(motion, matrix, block);
+      addBlock(values, places[at++]!, block);
+    };
+    for (const { motion, mass } of this.bars) add(this.#M0, motion, mass);
     for (const { motion, stiffness } of model.ties) {
-      addElement(this.#K0, places[at++]!, motion, Float64Array.of(stiffness));
+      add(this.#K0, motion, Float64Array.of(stiffness));
     }
-    for (const { motion, mass } of model.bodies) addElement(this.#M0, places[at++]!, motion, mass);
+    for (const { motion, mass } of model.bodies) add(this.#M0, motion, mass);
+    this.#blocks = pieceBlocks(pieces, this.elementOf);
     this.#pair = unchained(pattern, pattern);
     this.analysis = analyseChains(this.#pair, clock);
   }
@@ -134,8 +171,9 @@ export class DynamicSystem {
   }
 
   #addPieces(values: Float64Array): void {
-    for (let i = 0; i < this.pieces.length; i++) {
-      addElement(values, this.#places[i]!, this.pieces[i]!.motion, this.#k[this.elementOf[i]!]!);
+    for (const { element, motion, block, pieces } of this.#blocks) {
+      transformed(motion, this.#k[element]!, block);
+      for (const piece of pieces) addBlock(values, this.#places[piece]!, block);
     }
   }
 

@@ -54,12 +54,11 @@ function placesOf({ colPtr, rowIdx }: SymmetricCsc, dofs: Int32Array): Places {
   return places;
 }
 
-/** values += Tᵀ k T at an element's places; k rows × rows, symmetric, row by row. */
-export function addElement(
-  values: Float64Array,
-  places: Places,
+/** block ← Tᵀ k T, pairs a ≥ b, column by column; k rows × rows, symmetric, row by row. */
+export function transformed(
   { rows, dofs, T }: Combination,
   k: Float64Array,
+  block: Float64Array,
 ): void {
   const width = dofs.length;
   for (let b = 0, at = 0; b < width; b++) {
@@ -71,7 +70,20 @@ export function addElement(
     for (let a = b; a < width; a++, at++) {
       let sum = 0;
       for (let i = 0; i < rows; i++) sum += T[i * width + a]! * scratch[i]!;
-      values[places[at]!]! += sum;
+      block[at] = sum;
     }
   }
+}
+
+/** values += a block at an element's places. */
+export function addBlock(values: Float64Array, places: Places, block: Float64Array): void {
+  for (let at = 0; at < places.length; at++) values[places[at]!]! += block[at]!;
+}
+
+export function blockOf({ dofs }: Combination): Float64Array {
+  return new Float64Array(pairs(dofs.length));
+}
+
+export function sameTransform(a: Combination, b: Combination): boolean {
+  return a.T.length === b.T.length && a.T.every((value, i) => value === b.T[i]);
 }

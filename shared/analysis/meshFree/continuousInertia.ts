@@ -1,40 +1,91 @@
-import type { FrameModel } from '../../frame/assembly/FrameModel.ts';
 import { SymmetricTriplets } from '../../frame/assembly/SymmetricTriplets.ts';
+import { addForces } from '../../frame/freedoms/Combination.ts';
+import { add, dot, scale } from '../../frame/vector3.ts';
 import type { Vector3 } from '../../schemas/frameDocument.ts';
 import { attainableMassOf } from '../attainableMass.ts';
-import { rigidInertia, six } from '../massProperties.ts';
+import { rigidMotionAt, six } from '../massProperties.ts';
 import type { Six } from '../massProperties.ts';
 import type { DynamicSystem } from './DynamicSystem.ts';
+import type { MemberPiece } from './memberPieces.ts';
 
 /**
  * Rigid inertia of a frame of continuous members, and what all its modes together reach of it. The modes are
  * complete in the space of fields with finite energy, in which fixing a point of a distributed mass takes none of it
  * away: members reach all of theirs. Masses at joints, and bars across their axes, reach bᵀM₀⁺b.
- *   model  one element per member; its consistent masses hold rigid motions exactly
+ *   joints  one piece per member; its masses at rest hold rigid motions exactly
  */
 export function continuousInertia(
-  model: FrameModel,
   joints: DynamicSystem,
   centre: Vector3,
 ): { total: Six; attainable: Six } {
-  const { total } = rigidInertia(model, centre);
-  const across = new Map(joints.bars.map(({ part, mass }) => [part, mass]));
-  const bars = model.segments.flatMap((segment) => {
-    const mass = across.get(segment.part.index);
-    return mass ? [{ ...segment, part: { ...segment.part, mass } }] : [];
-  });
-  const atJoints = rigidInertia({ ...model, segments: bars }, centre);
+  const { model, bars, n } = joints;
+  const members = ofMembers(joints, centre);
   const triplets = new SymmetricTriplets([...bars, ...model.bodies]);
-  for (const { motion, part } of bars) triplets.add(motion, part.mass);
-  for (const { motion, mass } of model.bodies) triplets.add(motion, mass);
-  const M0 = triplets.assemble(model.free);
-  return {
-    total,
-    attainable: six(
-      (direction) =>
-        total[direction]! -
-        atJoints.total[direction]! +
-        attainableMassOf(M0, atJoints.forces[direction]!),
-    ),
-  };
+  for (const { motion, mass } of [...bars, ...model.bodies]) triplets.add(motion, mass);
+  const M0 = triplets.assemble(n);
+  const atJoints = six(() => 0);
+  const attainable = six((direction) => {
+    if (!model.exists[direction]) return 0;
+    const b = new Float64Array(n);
+    for (const { motion, mass, part } of bars) {
+      const { start, end, axes } = model.parts[part]!;
+      const r = [start, end].flatMap((point) => {
+        const [t] = rigidMotionAt(direction, point, centre);
+        return [dot(axes.x, t), dot(axes.y, t), dot(axes.z, t)];
+      });
+      const f = product(mass, r, 6);
+      atJoints[direction]! += inner(r, f);
+      addForces(motion, f, b);
+    }
+    for (const { at, motion, mass } of model.bodies) {
+      const r = rigidMotionAt(direction, at, centre).flat();
+      const f = product(mass, r, 6);
+      atJoints[direction]! += inner(r, f);
+      addForces(motion, f, b);
+    }
+    const reached = atJoints[direction]! > 0 ? attainableMassOf(M0, b) : 0;
+    return members[direction]! + reached;
+  });
+  return { total: six((direction) => members[direction]! + atJoints[direction]!), attainable };
+}
+
+/** rᵀMr of the members' distributed mass in the six rigid motions r. */
+function ofMembers({ model, pieces, elements, elementOf }: DynamicSystem, centre: Vector3): Six {
+  const masses = elements.map(({ rows }) => new Float64Array(rows * rows));
+  elements.forEach((element, e) => element.mass(0, masses[e]!));
+  const total = six(() => 0);
+  pieces.forEach((piece, i) => {
+    const mass = masses[elementOf[i]!]!;
+    for (let direction = 0; direction < 6; direction++) {
+      if (!model.exists[direction]) continue;
+      const r = endsIn(piece, direction, centre);
+      total[direction]! += inner(r, product(mass, r, r.length));
+    }
+  });
+  return total;
+}
+
+/** What a rigid motion does at the ends of a piece, over its element's rows. */
+function endsIn(piece: MemberPiece, direction: number, centre: Vector3): number[] {
+  const { element, part, from, length, direction: along, axis } = piece;
+  return [from, from + length].flatMap((at) => {
+    const point = add(part.start, scale(part.axes.x, at));
+    const [t, turn] = rigidMotionAt(direction, point, centre);
+    if (element.twists) return [dot(axis, turn)];
+    return element.rows === 2 ? [dot(along, t)] : [dot(along, t), dot(axis, turn)];
+  });
+}
+
+function product(m: Float64Array, r: readonly number[], rows: number): Float64Array {
+  const f = new Float64Array(rows);
+  for (let i = 0; i < rows; i++) {
+    for (let j = 0; j < rows; j++) f[i]! += m[i * rows + j]! * r[j]!;
+  }
+  return f;
+}
+
+function inner(a: readonly number[], b: Float64Array): number {
+  let sum = 0;
+  for (let i = 0; i < b.length; i++) sum += a[i]! * b[i]!;
+  return sum;
 }

@@ -1,4 +1,3 @@
-import type { FrameModel } from '../../frame/assembly/FrameModel.ts';
 import { displacements } from '../../frame/freedoms/Combination.ts';
 import { add, cross, dot, scale, subtract } from '../../frame/vector3.ts';
 import type { Vector3 } from '../../schemas/frameDocument.ts';
@@ -7,6 +6,8 @@ import type { Six } from '../massProperties.ts';
 import type { ModeEnergies } from '../modeEnergies.ts';
 import type { DynamicSystem } from './DynamicSystem.ts';
 
+/** Numbers per piece of `leversOf`. */
+const LEVERS = 18;
 const DIRECTIONS = [0, 1, 2, 3, 4, 5] as const;
 
 /** One mode with its continuous shape integrated. */
@@ -23,11 +24,12 @@ export interface IntegratedMode {
  * Energies and participation of a mode of the continuous frame, with the members' own functions at ω between
  * the joint displacements x. Strain energies are sums of squares, so none cancels, and the Rayleigh quotient errs only
  * by the square of the shape's error.
- *   omega [rad/s]   x over the unknowns of `system`   centre of mass [m]
+ *   centre of mass [m]   levers of the system about it   omega [rad/s]   x over the unknowns
  */
 export function integrateMode(
   system: DynamicSystem,
   centre: Vector3,
+  levers: Float64Array,
   omega: number,
   x: Float64Array,
 ): IntegratedMode {
@@ -37,25 +39,21 @@ export function integrateMode(
   const kineticMasses = new Float64Array(model.bodies.length);
   const d = new Float64Array(6);
   const integrals = system.elements.map((element) => element.integrals(omega));
-  // Momentum along the axes and about them, through the centre.
-  let along: Vector3 = [0, 0, 0];
-  let about: Vector3 = [0, 0, 0];
+  const all: Six = [0, 0, 0, 0, 0, 0];
   for (let i = 0; i < pieces.length; i++) {
-    const { element, part, from, length, motion, direction, axis } = pieces[i]!;
+    const { element, part, motion } = pieces[i]!;
     const { mass, strain, momenta } = integrals[elementOf[i]!]!;
     const { rows } = element;
     displacements(motion, x, d);
     members[part.index]! += 0.5 * squareOf(strain, d, rows);
     kineticMembers[part.index]! += 0.5 * bilinear(mass, d, d, rows);
-    const momentum = product(momenta, 0, d, rows);
-    const firstMoment = product(momenta, rows, d, rows);
-    const spin = product(momenta, 2 * rows, d, rows);
-    const middle = add(part.start, scale(part.axes.x, from + 0.5 * length));
-    const arm = add(scale(subtract(middle, centre), momentum), scale(part.axes.x, firstMoment));
-    along = add(along, scale(direction, momentum));
-    about = add(add(about, cross(arm, direction)), scale(axis, spin));
+    for (let k = 0; k < 3; k++) {
+      const amount = product(momenta, k * rows, d, rows);
+      const at = i * LEVERS + k * 6;
+      for (let r = 0; r < 6; r++) all[r]! += amount * levers[at + r]!;
+    }
   }
-  const participation = ofModel(model, [...along, ...about]);
+  const participation = six((r) => (model.exists[r] ? all[r]! : 0));
   for (const { motion, mass, part } of system.bars) {
     const { start, end, axes } = model.parts[part]!;
     displacements(motion, x, d);
@@ -102,9 +100,20 @@ export function integrateMode(
   };
 }
 
-/** Participation in the rigid motions that the model has. */
-function ofModel({ exists }: FrameModel, all: Six): Six {
-  return six((r) => (exists[r] ? all[r]! : 0));
+/**
+ * What a piece's unit momentum, first moment and spin are along the axes and about them through the centre of mass:
+ * three times six numbers per piece.
+ */
+export function leversOf(system: DynamicSystem, centre: Vector3): Float64Array {
+  const levers = new Float64Array(system.pieces.length * LEVERS);
+  system.pieces.forEach(({ part, from, length, direction, axis }, i) => {
+    const middle = add(part.start, scale(part.axes.x, from + 0.5 * length));
+    levers.set(direction, i * LEVERS);
+    levers.set(cross(subtract(middle, centre), direction), i * LEVERS + 3);
+    levers.set(cross(part.axes.x, direction), i * LEVERS + 9);
+    levers.set(axis, i * LEVERS + 15);
+  });
+  return levers;
 }
 
 function bilinear(

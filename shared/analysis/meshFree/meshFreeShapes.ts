@@ -1,7 +1,6 @@
 import type { DividedPart } from '../../frame/assembly/FrameModel.ts';
 import type { DynamicElement } from '../../frame/elements/DynamicElement.ts';
 import { displacements } from '../../frame/freedoms/Combination.ts';
-import { dot } from '../../frame/vector3.ts';
 import { shapePoints, spreadBar, writeGlobal } from '../shapesAtPoints.ts';
 import type { ModeShapes } from '../shapesFile.ts';
 import type { DynamicSystem } from './DynamicSystem.ts';
@@ -26,6 +25,7 @@ export function meshFreeShapes(
   const barMotion = new Map(system.bars.map(({ part, motion }) => [part, motion]));
   const d = new Float64Array(6);
   const local = new Float64Array(12);
+  const across = new Float32Array(12);
   const runs = stationRuns(system, drawn);
   modes.forEach(({ omega, x }, mode) => {
     const base = mode * points * 6;
@@ -33,7 +33,7 @@ export function meshFreeShapes(
       displacements(motion, x, d);
       shapes.set(d, base + i * 6);
     });
-    const stations = drawn.map(({ divisions }) => new Float64Array((divisions + 1) * 6));
+    const values = new Float64Array(points * 6);
     for (const { element, xi, pieces } of runs) {
       const { rows } = element;
       const size = 2 * rows;
@@ -41,15 +41,22 @@ export function meshFreeShapes(
       xi.forEach((at, i) => element.shape(omega, at, N.subarray(i * size, (i + 1) * size)));
       for (const { piece, first } of pieces) {
         displacements(piece.motion, x, d);
-        const values = stations[piece.part.index]!;
-        for (let i = 0; i < xi.length; i++) {
+        const [dx, dy, dz] = piece.direction;
+        const [ax, ay, az] = piece.axis;
+        let at = (members[piece.part.index]!.first + first) * 6;
+        for (let i = 0; i < xi.length; i++, at += 6) {
           let displacement = 0;
           let rotation = 0;
           for (let j = 0; j < rows; j++) {
             displacement += N[i * size + j]! * d[j]!;
             rotation += N[i * size + rows + j]! * d[j]!;
           }
-          addPoint(piece, displacement, rotation, values, (first + i) * 6);
+          values[at]! += displacement * dx;
+          values[at + 1]! += displacement * dy;
+          values[at + 2]! += displacement * dz;
+          values[at + 3]! += rotation * ax;
+          values[at + 4]! += rotation * ay;
+          values[at + 5]! += rotation * az;
         }
       }
     }
@@ -59,15 +66,12 @@ export function meshFreeShapes(
       spreadBar(local, drawn[index]!.axes.length);
       // Along its axis a bar's ends are its pieces' already.
       local[0] = local[6] = 0;
-      const values = stations[index]!;
-      for (let i = 0; i < 12; i++) values[i]! += local[i]!;
+      writeGlobal(drawn[index]!, local, 0, across, 0);
+      writeGlobal(drawn[index]!, local, 6, across, 6);
+      const at = members[index]!.first * 6;
+      for (let i = 0; i < 12; i++) values[at + i]! += across[i]!;
     }
-    drawn.forEach((part, index) => {
-      const { first, count } = members[index]!;
-      for (let station = 0; station < count; station++) {
-        writeGlobal(part, stations[index]!, station * 6, shapes, base + (first + station) * 6);
-      }
-    });
+    shapes.set(values.subarray(model.nodes.length * 6), base + model.nodes.length * 6);
   });
   return {
     nodes: model.document.nodes.map((node) => node.id),
@@ -114,21 +118,4 @@ function stationsOn({ from, length }: MemberPiece, part: DividedPart) {
     ? part.divisions + 1
     : Math.ceil((from + length - tolerance) / part.segmentLength);
   return { first, count: next - first };
-}
-
-/** Adds what one kind of vibration does at a station, in member axes. */
-function addPoint(
-  { part: { axes }, direction, axis }: MemberPiece,
-  displacement: number,
-  rotation: number,
-  values: Float64Array,
-  at: number,
-): void {
-  const { x, y, z } = axes;
-  values[at]! += displacement * dot(x, direction);
-  values[at + 1]! += displacement * dot(y, direction);
-  values[at + 2]! += displacement * dot(z, direction);
-  values[at + 3]! += rotation * dot(x, axis);
-  values[at + 4]! += rotation * dot(y, axis);
-  values[at + 5]! += rotation * dot(z, axis);
 }

@@ -19,7 +19,7 @@ import { continuousInertia } from './continuousInertia.ts';
 import { dividedSystem } from './dividedSystem.ts';
 import { DynamicSystem } from './DynamicSystem.ts';
 import { findMeshFreeModes } from './findMeshFreeModes.ts';
-import { integrateMode } from './integrateMode.ts';
+import { integrateMode, leversOf } from './integrateMode.ts';
 import type { IntegratedMode } from './integrateMode.ts';
 import { crossShear, memberPieces } from './memberPieces.ts';
 import { meshFreeShapes } from './meshFreeShapes.ts';
@@ -75,7 +75,9 @@ export function solveMeshFree(
 
   progress(0.9, 'summing energies');
   const { system } = found;
-  const integrate = (omega: number, x: Float64Array) => integrateMode(system, centre, omega, x);
+  const levers = leversOf(system, centre);
+  const integrate = (omega: number, x: Float64Array) =>
+    integrateMode(system, centre, levers, omega, x);
   const all: FoundMode[] = [
     ...rigidModes(system, totalMass).map((x) => ({ ...integrate(0, x), lambda: 0, halfWidth: 0 })),
     ...found.modes
@@ -95,7 +97,7 @@ export function solveMeshFree(
     returned.map(({ lambda, x }) => ({ omega: Math.sqrt(lambda), x })),
   );
   const integrated = clock();
-  const { total, attainable } = continuousInertia(model, joints, centre);
+  const { total, attainable } = continuousInertia(joints, centre);
   const summary = summariseModes({
     model,
     details: detailsOf(system, returned),
@@ -169,9 +171,10 @@ function detailsOf(system: DynamicSystem, modes: readonly FoundMode[]): ModeDeta
   const diagonalK = diagonalOf(K0);
   return modes.map(({ lambda, x, participation, energies, halfWidth }) => {
     const { K } = system.stiffness(Math.sqrt(lambda));
-    const values = K.values.map((value, i) =>
-      lambda === 0 ? 0 : (K0.values[i]! - value) / lambda,
-    );
+    const values = new Float64Array(K.values.length);
+    if (lambda > 0) {
+      for (let i = 0; i < values.length; i++) values[i] = (K0.values[i]! - K.values[i]!) / lambda;
+    }
     const M = { ...K0, values };
     const Kphi = new Float64Array(system.n);
     const Mphi = new Float64Array(system.n);

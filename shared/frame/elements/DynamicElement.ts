@@ -17,6 +17,8 @@ export interface MotionIntegrals {
  */
 export interface DynamicElement {
   readonly rows: 2 | 4;
+  /** Whether its two displacements are rotations about its axis. */
+  readonly twists: boolean;
   /**
    * Dynamic stiffness at ω [rad/s], rows × rows, row by row; k is overwritten. Returns J₀, the number of
    * natural frequencies below ω with both ends clamped.

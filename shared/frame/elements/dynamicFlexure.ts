@@ -46,6 +46,7 @@ export function dynamicFlexure(properties: FlexureProperties): DynamicElement {
 
   return {
     rows: 4,
+    twists: false,
     stiffness(omega, k) {
       const waves = flexuralWaves(slowness * omega, r2, s2);
       flexuralWave(waves, 0.5, atEnd);

@@ -24,6 +24,7 @@ export function dynamicRod({ rigidity, inertia, length, twists }: RodProperties)
 
   return {
     rows: 2,
+    twists,
     stiffness(omega, k) {
       const phase = slowness * omega;
       const tangent = Math.tan(0.5 * phase);
