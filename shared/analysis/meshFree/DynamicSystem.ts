@@ -21,6 +21,9 @@ import type { MemberPiece } from './memberPieces.ts';
  */
 const NUDGES = [0, 1e-11, 4e-11, 1.6e-10, 6.4e-10, 2.5e-9, 1e-8] as const;
 
+/** A frame none of whose pivots is smaller, over its diagonal, resists every motion: see `solveMeshed`. */
+const CERTAIN_PIVOT = 1e-9;
+
 /** The dynamic stiffness at one frequency, factored, and what it counts. */
 export interface Evaluation {
   readonly omega: number;
@@ -103,6 +106,8 @@ export class DynamicSystem {
   readonly #k: readonly Float64Array[];
   readonly #clampedOf: Int32Array;
   readonly #blocks: readonly PieceBlock[];
+  /** What is factored. */
+  readonly #work: SymmetricCsc;
   #ldlt: Ldlt | undefined;
 
   constructor(
@@ -132,6 +137,7 @@ export class DynamicSystem {
     this.#places = places;
     this.#K0 = pattern.values.slice();
     this.#M0 = pattern.values.slice();
+    this.#work = { ...pattern, values: pattern.values.slice() };
     let at = pieces.length;
     const add = (values: Float64Array, motion: Combination, matrix: Float64Array) => {
       const block = blockOf(motion);
@@ -150,16 +156,21 @@ export class DynamicSystem {
 
   /** K_D(ω) [N/m], and J₀. */
   stiffness(omega: number): { K: SymmetricCsc; clamped: number } {
+    const values = new Float64Array(this.#K0.length);
+    const clamped = this.#stiffnessInto(values, omega);
+    return { K: { ...this.#pattern, values }, clamped };
+  }
+
+  #stiffnessInto(values: Float64Array, omega: number): number {
     const square = omega * omega;
-    const values = this.#K0.slice();
-    for (let i = 0; i < values.length; i++) values[i]! -= square * this.#M0[i]!;
+    for (let i = 0; i < values.length; i++) values[i] = this.#K0[i]! - square * this.#M0[i]!;
     for (let e = 0; e < this.elements.length; e++) {
       this.#clampedOf[e] = this.elements[e]!.stiffness(omega, this.#k[e]!);
     }
     this.#addPieces(values);
     let clamped = 0;
-    for (const element of this.elementOf) clamped += this.#clampedOf[element]!;
-    return { K: { ...this.#pattern, values }, clamped };
+    for (let i = 0; i < this.elementOf.length; i++) clamped += this.#clampedOf[this.elementOf[i]!]!;
+    return clamped;
   }
 
   /** −∂K_D/∂ω² [kg]: the mass of the continuous frame in the motions that go with its unknowns at ω. */
@@ -180,6 +191,20 @@ export class DynamicSystem {
   /** The frame at rest, K_D(0) and −∂K_D/∂ω²(0): one consistent element per piece. */
   atRest(): ChainedPair {
     return { ...this.#pair, K: this.stiffness(0).K, M: this.mass(0) };
+  }
+
+  /** Whether the frame at rest certainly resists every motion. */
+  resistsEveryMotion(): boolean {
+    if (this.n === 0) return true;
+    this.#stiffnessInto(this.#work.values, 0);
+    try {
+      this.#ldlt = factorise(this.analysis.symbolic, this.#work, null, 0, this.#ldlt);
+    } catch (error) {
+      if (error instanceof ZeroPivotError) return false;
+      throw error;
+    }
+    const { negativePivots, elimination } = this.#ldlt;
+    return negativePivots === 0 && elimination.smallestPivot() > CERTAIN_PIVOT;
   }
 
   /** √ of the lowest K_ii / M_ii at rest: above the first modes, and of their order [rad/s]. */
@@ -204,10 +229,10 @@ export class DynamicSystem {
     let cause: ZeroPivotError | undefined;
     for (const nudge of NUDGES) {
       const shifted = omega * (1 + nudge);
-      const { K, clamped } = this.stiffness(shifted);
+      const clamped = this.#stiffnessInto(this.#work.values, shifted);
       if (this.n === 0) return { omega: shifted, ldlt: null, below: clamped, clamped };
       try {
-        this.#ldlt = factorise(this.analysis.symbolic, K, null, 0, this.#ldlt);
+        this.#ldlt = factorise(this.analysis.symbolic, this.#work, null, 0, this.#ldlt);
         const below = clamped + this.#ldlt.negativePivots;
         return { omega: shifted, ldlt: this.#ldlt, below, clamped };
       } catch (error) {

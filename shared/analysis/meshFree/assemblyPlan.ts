@@ -85,5 +85,6 @@ export function blockOf({ dofs }: Combination): Float64Array {
 }
 
 export function sameTransform(a: Combination, b: Combination): boolean {
+  if (a.T === b.T) return true;
   return a.T.length === b.T.length && a.T.every((value, i) => value === b.T[i]);
 }

@@ -1,12 +1,11 @@
 import { SymmetricTriplets } from '../../frame/assembly/SymmetricTriplets.ts';
 import { addForces } from '../../frame/freedoms/Combination.ts';
-import { add, dot, scale } from '../../frame/vector3.ts';
+import { add, cross, dot, scale, subtract } from '../../frame/vector3.ts';
 import type { Vector3 } from '../../schemas/frameDocument.ts';
 import { attainableMassOf } from '../attainableMass.ts';
 import { rigidMotionAt, six } from '../massProperties.ts';
 import type { Six } from '../massProperties.ts';
 import type { DynamicSystem } from './DynamicSystem.ts';
-import type { MemberPiece } from './memberPieces.ts';
 
 /**
  * Rigid inertia of a frame of continuous members, and what all its modes together reach of it. The modes are
@@ -54,26 +53,34 @@ function ofMembers({ model, pieces, elements, elementOf }: DynamicSystem, centre
   const masses = elements.map(({ rows }) => new Float64Array(rows * rows));
   elements.forEach((element, e) => element.mass(0, masses[e]!));
   const total = six(() => 0);
-  pieces.forEach((piece, i) => {
+  const r = new Float64Array(4);
+  for (let i = 0; i < pieces.length; i++) {
+    const { element, part, from, length, direction: along, axis } = pieces[i]!;
     const mass = masses[elementOf[i]!]!;
+    const { rows, twists } = element;
+    const arms = [from, from + length].map((at) =>
+      // along · (e × arm) = e · (arm × along)
+      cross(subtract(add(part.start, scale(part.axes.x, at)), centre), along),
+    );
     for (let direction = 0; direction < 6; direction++) {
       if (!model.exists[direction]) continue;
-      const r = endsIn(piece, direction, centre);
-      total[direction]! += inner(r, product(mass, r, r.length));
+      const turn = direction < 3 ? 0 : axis[direction - 3]!;
+      for (let end = 0; end < 2; end++) {
+        const moves = direction < 3 ? along[direction]! : arms[end]![direction - 3]!;
+        if (rows === 2) r[end] = twists ? turn : moves;
+        else {
+          r[2 * end] = moves;
+          r[2 * end + 1] = turn;
+        }
+      }
+      let sum = 0;
+      for (let a = 0; a < rows; a++) {
+        for (let b = 0; b < rows; b++) sum += r[a]! * mass[a * rows + b]! * r[b]!;
+      }
+      total[direction]! += sum;
     }
-  });
+  }
   return total;
-}
-
-/** What a rigid motion does at the ends of a piece, over its element's rows. */
-function endsIn(piece: MemberPiece, direction: number, centre: Vector3): number[] {
-  const { element, part, from, length, direction: along, axis } = piece;
-  return [from, from + length].flatMap((at) => {
-    const point = add(part.start, scale(part.axes.x, at));
-    const [t, turn] = rigidMotionAt(direction, point, centre);
-    if (element.twists) return [dot(axis, turn)];
-    return element.rows === 2 ? [dot(along, t)] : [dot(along, t), dot(axis, turn)];
-  });
 }
 
 function product(m: Float64Array, r: readonly number[], rows: number): Float64Array {

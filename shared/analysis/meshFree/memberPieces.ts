@@ -50,27 +50,36 @@ export function memberPieces(
 ): { pieces: MemberPiece[]; unknowns: number } {
   let unknowns = model.free;
   const pieces: MemberPiece[] = [];
-  const beams = new Map<string, readonly PieceMake[]>();
+  const beams = new Map<string, { makes: readonly PieceMake[]; turned: TurnedBeam[] }>();
   const bars = new Map<string, DynamicElement>();
   for (const { part, number, motion } of segmentsOf(model)) {
     const { axes, make, segmentLength } = part;
     if (part.member.kind === 'beam') {
       const exists = [0, 1, 2, 3].map((i) => inModel([axes.x, axes.y, axes.z], i, model.exists));
       const key = `${make} ${exists.join()}`;
-      let makes = beams.get(key);
-      if (makes === undefined) {
-        makes = beamMakes(part, exists);
-        beams.set(key, makes);
+      let beam = beams.get(key);
+      if (beam === undefined) {
+        beam = { makes: beamMakes(part, exists), turned: [] };
+        beams.set(key, beam);
       }
-      for (const { element, rows, direction, axis } of makes) {
+      const { makes, turned } = beam;
+      let alike = turned.find((other) => turnedAlike(other, part, motion));
+      if (alike === undefined) {
+        alike = turnedBeam(makes, part, motion);
+        if (turned.length < MOST_ORIENTATIONS) turned.push(alike);
+      }
+      for (let i = 0; i < makes.length; i++) {
+        const { columns, T, direction, axis } = alike.rows[i]!;
+        const dofs = new Int32Array(columns.length);
+        for (let k = 0; k < columns.length; k++) dofs[k] = motion.dofs[columns[k]!]!;
         pieces.push({
-          element,
+          element: makes[i]!.element,
           part,
           from: number * segmentLength,
           length: segmentLength,
-          motion: mixed(motion, rows),
-          direction: turned(part, direction),
-          axis: turned(part, axis),
+          motion: { rows: makes[i]!.rows.length, dofs, T },
+          direction,
+          axis,
         });
       }
       continue;
@@ -169,7 +178,43 @@ function beamMakes(part: DividedPart, exists: readonly boolean[]): PieceMake[] {
   return makes;
 }
 
-function turned({ axes }: DividedPart, [x, y, z]: Vector3): Vector3 {
+/** Beams of one make that stand alike: their pieces differ in unknowns alone. */
+interface TurnedBeam {
+  readonly part: DividedPart;
+  readonly motion: Combination;
+  readonly rows: readonly (MixedRows & { readonly direction: Vector3; readonly axis: Vector3 })[];
+}
+
+/** Orientations of one make that are looked through for one alike; more are formed anew. */
+const MOST_ORIENTATIONS = 16;
+
+function turnedBeam(
+  makes: readonly PieceMake[],
+  part: DividedPart,
+  motion: Combination,
+): TurnedBeam {
+  const rows = makes.map((make) => ({
+    ...mixedRows(motion, make.rows),
+    direction: inGlobal(part, make.direction),
+    axis: inGlobal(part, make.axis),
+  }));
+  return { part, motion, rows };
+}
+
+function turnedAlike(
+  { part: { axes }, motion: { T } }: TurnedBeam,
+  other: DividedPart,
+  motion: Combination,
+): boolean {
+  if (T.length !== motion.T.length) return false;
+  for (let k = 0; k < 3; k++) {
+    if (axes.x[k] !== other.axes.x[k] || axes.z[k] !== other.axes.z[k]) return false;
+  }
+  for (let i = 0; i < T.length; i++) if (T[i] !== motion.T[i]) return false;
+  return true;
+}
+
+function inGlobal({ axes }: DividedPart, [x, y, z]: Vector3): Vector3 {
   return add(add(scale(axes.x, x), scale(axes.y, y)), scale(axes.z, z));
 }
 
@@ -203,26 +248,30 @@ function bendingPlanes({ properties }: DividedPart, v: boolean, w: boolean): Ben
   }));
 }
 
-/** Mixed rows of a combination, over the unknowns that take part in them. */
-function mixed({ dofs, T }: Combination, rows: readonly RowMix[]): Combination {
+/** Mixed rows over those columns of a combination that take part in them. */
+interface MixedRows {
+  readonly columns: readonly number[];
+  /** rows × columns, row by row. */
+  readonly T: Float64Array;
+}
+
+function mixedRows({ dofs, T }: Combination, rows: readonly RowMix[]): MixedRows {
   const width = dofs.length;
-  const values = new Float64Array(rows.length * width);
-  const kept: number[] = [];
-  for (let j = 0; j < width; j++) {
-    let takesPart = false;
-    for (let i = 0; i < rows.length; i++) {
-      let sum = 0;
-      for (const [row, factor] of rows[i]!) sum += factor * T[row * width + j]!;
-      values[i * width + j] = sum;
-      if (sum !== 0) takesPart = true;
-    }
-    if (takesPart) kept.push(j);
-  }
-  const result = new Float64Array(rows.length * kept.length);
-  for (let i = 0; i < rows.length; i++) {
-    kept.forEach((j, k) => (result[i * kept.length + k] = values[i * width + j]!));
-  }
-  return { rows: rows.length, dofs: Int32Array.from(kept, (j) => dofs[j]!), T: result };
+  const values = rows.map((mix) =>
+    Float64Array.from({ length: width }, (_, j) =>
+      mix.reduce((sum, [row, factor]) => sum + factor * T[row * width + j]!, 0),
+    ),
+  );
+  const columns = Array.from(dofs.keys()).filter((j) => values.some((row) => row[j] !== 0));
+  return {
+    columns,
+    T: Float64Array.from(values.flatMap((row) => columns.map((j) => row[j]!))),
+  };
+}
+
+function mixed(motion: Combination, rows: readonly RowMix[]): Combination {
+  const { columns, T } = mixedRows(motion, rows);
+  return { rows: rows.length, dofs: Int32Array.from(columns, (j) => motion.dofs[j]!), T };
 }
 
 /** Ends of the `i`-th of `count` pieces of a bar whose inner stations are the unknowns from `first`. */

@@ -34,32 +34,7 @@ export function meshFreeShapes(
       shapes.set(d, base + i * 6);
     });
     const values = new Float64Array(points * 6);
-    for (const { element, xi, pieces } of runs) {
-      const { rows } = element;
-      const size = 2 * rows;
-      const N = new Float64Array(xi.length * size);
-      xi.forEach((at, i) => element.shape(omega, at, N.subarray(i * size, (i + 1) * size)));
-      for (const { piece, first } of pieces) {
-        displacements(piece.motion, x, d);
-        const [dx, dy, dz] = piece.direction;
-        const [ax, ay, az] = piece.axis;
-        let at = (members[piece.part.index]!.first + first) * 6;
-        for (let i = 0; i < xi.length; i++, at += 6) {
-          let displacement = 0;
-          let rotation = 0;
-          for (let j = 0; j < rows; j++) {
-            displacement += N[i * size + j]! * d[j]!;
-            rotation += N[i * size + rows + j]! * d[j]!;
-          }
-          values[at]! += displacement * dx;
-          values[at + 1]! += displacement * dy;
-          values[at + 2]! += displacement * dz;
-          values[at + 3]! += rotation * ax;
-          values[at + 4]! += rotation * ay;
-          values[at + 5]! += rotation * az;
-        }
-      }
-    }
+    for (const run of runs) addRun(run, omega, x, members, values);
     for (const [index, motion] of barMotion) {
       displacements(motion, x, d);
       local.set(d);
@@ -107,6 +82,42 @@ function stationRuns(system: DynamicSystem, drawn: readonly DividedPart[]): Stat
     else runs.set(key, { element, xi, pieces: [{ piece, first }] });
   });
   return [...runs.values()];
+}
+
+/** Adds what one kind of vibration does at the stations of a run, in global axes. */
+function addRun(
+  { element, xi, pieces }: StationRun,
+  omega: number,
+  x: Float64Array,
+  members: ModeShapes['members'],
+  values: Float64Array,
+): void {
+  const { rows } = element;
+  const size = 2 * rows;
+  const count = xi.length;
+  const d = new Float64Array(4);
+  const N = new Float64Array(count * size);
+  for (let i = 0; i < count; i++) {
+    element.shape(omega, xi[i]!, N.subarray(i * size, (i + 1) * size));
+  }
+  for (let p = 0; p < pieces.length; p++) {
+    const { piece, first } = pieces[p]!;
+    const { direction, axis } = piece;
+    displacements(piece.motion, x, d);
+    let at = (members[piece.part.index]!.first + first) * 6;
+    for (let i = 0; i < count; i++, at += 6) {
+      let displacement = 0;
+      let rotation = 0;
+      for (let j = 0; j < rows; j++) {
+        displacement += N[i * size + j]! * d[j]!;
+        rotation += N[i * size + rows + j]! * d[j]!;
+      }
+      for (let k = 0; k < 3; k++) {
+        values[at + k]! += displacement * direction[k]!;
+        values[at + 3 + k]! += rotation * axis[k]!;
+      }
+    }
+  }
 }
 
 /** Stations on a piece; one between two pieces belongs to the later, the last to the last. */

@@ -6,8 +6,6 @@ import type { DynamicSystem } from './DynamicSystem.ts';
 import type { ModeEstimate } from './newtonModes.ts';
 
 const SEED = 20_003;
-/** A frame none of whose pivots is smaller, over its diagonal, resists every motion: see `solveMeshed`. */
-const CERTAIN_PIVOT = 1e-9;
 
 /**
  * Lowest elastic modes, ascending, of K_D(0) and −∂K_D/∂ω²(0): one consistent element per piece. Their shapes are
@@ -38,20 +36,6 @@ export function modesAtRest(
     } catch (error) {
       // Unknowns with neither stiffness nor mass at rest: bisection on the count does without estimates.
       if (error instanceof ZeroPivotError) return [];
-      throw error;
-    }
-  });
-}
-
-/** Whether the frame at rest certainly resists every motion. */
-export function resistsEveryMotion(system: DynamicSystem): boolean {
-  if (system.n === 0) return true;
-  return withArena((arena) => {
-    const pencil = new ChainedPencil(arena, system.atRest(), system.analysis);
-    try {
-      return pencil.factorise(0) === 0 && pencil.smallestPivot() > CERTAIN_PIVOT;
-    } catch (error) {
-      if (error instanceof ZeroPivotError) return false;
       throw error;
     }
   });

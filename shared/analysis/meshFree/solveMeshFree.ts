@@ -23,7 +23,7 @@ import { integrateMode, leversOf } from './integrateMode.ts';
 import type { IntegratedMode } from './integrateMode.ts';
 import { crossShear, memberPieces } from './memberPieces.ts';
 import { meshFreeShapes } from './meshFreeShapes.ts';
-import { modesAtRest, resistsEveryMotion } from './modesAtRest.ts';
+import { modesAtRest } from './modesAtRest.ts';
 
 /**
  * Natural frequencies and shapes of a frame of continuous members: transcendental dynamic stiffness, frequencies
@@ -55,7 +55,7 @@ export function solveMeshFree(
   const rigid = rigidOfJoints.length;
   const upTo = settings.upToHz === undefined ? undefined : 2 * Math.PI * settings.upToHz;
   const most = settings.modes ?? DEFAULT_SOLVE_SETTINGS.modes!;
-  if (rigid > 0 || !resistsEveryMotion(joints)) refuseMechanismsOf(model);
+  if (rigid > 0 || !joints.resistsEveryMotion()) refuseMechanismsOf(model);
   const checked = clock();
   stopIfAsked();
 
