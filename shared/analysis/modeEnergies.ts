@@ -1,7 +1,7 @@
 import { BEAM_DEFORMATIONS, beamDeformationRows } from '../frame/elements/beamStiffness.ts';
 import type { FrameModel, ModelChain } from '../frame/assembly/FrameModel.ts';
 import { displacements } from '../frame/freedoms/Combination.ts';
-import type { ChainedPencil, PackedRows } from '../numerics/chains/ChainedPencil.ts';
+import type { ChainedPencil, PlacedRows } from '../numerics/chains/ChainedPencil.ts';
 
 /** Energies of one shape, by part of the frame; all scale with the square of the shape. */
 export interface ModeEnergies {
@@ -31,8 +31,8 @@ interface Strain {
 export class FrameEnergies {
   readonly #model: FrameModel;
   readonly #pencil: ChainedPencil;
-  readonly #deformations: PackedRows[];
-  #masses: PackedRows[] | undefined;
+  readonly #deformations: PlacedRows;
+  #masses: PlacedRows | undefined;
   /** Of the shapes asked for before, by address: λ is asked for first, the energies of those returned later. */
   readonly #strains = new Map<number, Strain>();
 
@@ -40,7 +40,7 @@ export class FrameEnergies {
   constructor(model: FrameModel, pencil: ChainedPencil) {
     this.#model = model;
     this.#pencil = pencil;
-    this.#deformations = pencil.packRows(model.chains.map(([chain]) => deformationRows(chain!)));
+    this.#deformations = pencil.placeRows(model.chains.map(([chain]) => deformationRows(chain!)));
   }
 
   /**
@@ -81,13 +81,13 @@ export class FrameEnergies {
     const members = new Float64Array(parts.length);
     const ties = new Float64Array(all.length);
     let total = 0;
-    this.#pencil.applyRows(this.#deformations, phi, ({ classIndex, from, count, products }) => {
+    this.#pencil.applyRows(this.#deformations, phi, ({ classIndex, count, products }) => {
       const make = chains[classIndex]!;
       const { part, elements } = make[0]!;
       const { axial, torsion, bending, sway } = part.rigidity;
       const isBar = part.member.kind === 'bar';
       let at = 0;
-      for (let m = from; m < from + count; m++) {
+      for (let m = 0; m < count; m++) {
         let twice = 0;
         if (isBar) {
           twice = axial * products[at]! * products[at]!;
@@ -127,10 +127,10 @@ export class FrameEnergies {
 
   #addKinetic(phi: number, members: Float64Array): number {
     const { chains } = this.#model;
-    this.#masses ??= this.#pencil.packRows(this.#pencil.pair.classes.map(({ M }) => M));
+    this.#masses ??= this.#pencil.placeRows(this.#pencil.pair.classes.map(({ M }) => M));
     let total = 0;
     this.#pencil.applyRows(this.#masses, phi, (batch) => {
-      const { classIndex, from, count, products } = batch;
+      const { classIndex, count, products } = batch;
       const inner = batch.inner.length / count;
       const ends = batch.ends.length / count;
       let at = 0;
@@ -138,7 +138,7 @@ export class FrameEnergies {
         let sum = 0;
         for (let i = 0; i < inner; i++) sum += products[at++]! * batch.inner[m * inner + i]!;
         for (let e = 0; e < ends; e++) sum += products[at++]! * batch.ends[m * ends + e]!;
-        members[chains[classIndex]![from + m]!.part.index]! += 0.5 * sum;
+        members[chains[classIndex]![m]!.part.index]! += 0.5 * sum;
         total += 0.5 * sum;
       }
     });

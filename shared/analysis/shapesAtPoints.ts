@@ -19,6 +19,7 @@ export function shapesAtPoints(
   const { document, parts, chains } = model;
   const { points, members, positions } = shapePoints(document, parts);
   const shapes = new Float32Array(addresses.length * points * 6);
+  const stations = pencil.placeRows(pencil.pair.classes.map(() => new Float64Array(0)));
   const d = new Float64Array(12);
   addresses.forEach((address, mode) => {
     const base = mode * points * 6;
@@ -27,11 +28,11 @@ export function shapesAtPoints(
       displacements(motion, shape, d);
       for (let k = 0; k < 6; k++) shapes[base + i * 6 + k] = d[k]!;
     });
-    pencil.eachBatch(address, ({ classIndex, from, count, inner, ends }) => {
+    pencil.applyRows(stations, address, ({ classIndex, count, inner, ends }) => {
       const rows = ends.length / count;
       const [{ make }] = chains[classIndex]! as [ModelChain];
       for (let m = 0; m < count; m++) {
-        const { part, from: station, elements } = chains[classIndex]![from + m]!;
+        const { part, from: station, elements } = chains[classIndex]![m]!;
         const at = base + (members[part.index]!.first + station) * 6;
         const ofInner = m * make.inner;
         const ofEnds = m * rows - make.inner;

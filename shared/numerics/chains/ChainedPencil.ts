@@ -2,7 +2,6 @@ import { addDiagonal, addEntries } from '../factor/factorise.ts';
 import { Elimination, PIVOT_TOL } from '../factor/Elimination.ts';
 import { ZeroPivotError } from '../factor/ZeroPivotError.ts';
 import type { Arena } from '../kernels/Arena.ts';
-import type { Kernels } from '../kernels/Kernels.ts';
 import type { SymmetricCsc } from '../sparse/SymmetricCsc.ts';
 import { entriesOf, type ChainAnalysis } from './analyseChains.ts';
 import { orderOf, type ChainClass, type ChainedPair } from './ChainedPair.ts';
@@ -14,9 +13,9 @@ import {
   writeTiles,
   type BlockRange,
   type ChainMatrix,
-  type PackedBlock,
 } from './ChainMatrix.ts';
 import { condense } from './condense.ts';
+import { inMemory, inX, inY, Program } from './Program.ts';
 
 /** Chains worked on together: what they need fits into the first cache. */
 const BATCH = 512;
@@ -48,17 +47,20 @@ interface FactoredBlock extends BlockRange {
   readonly minusWT: number;
 }
 
-/** Rows over a chain's unknowns, per class, as `packRows` placed them. */
-export interface PackedRows {
-  readonly outputs: number;
-  readonly inner: number;
-  readonly ends: number;
+/** Rows over chains' unknowns as `placeRows` put them down. */
+export interface PlacedRows {
+  readonly program: Program;
+  readonly batches: readonly {
+    readonly first: number;
+    readonly B: number;
+    readonly out: number;
+    readonly outputs: number;
+  }[];
 }
 
-/** Some chains of one class: products of the rows, and what they were multiplied with, chain by chain. */
+/** The chains of one class: products of the rows, and what they were multiplied with, chain by chain. */
 export interface ChainBatch {
   readonly classIndex: number;
-  readonly from: number;
   readonly count: number;
   readonly products: Float64Array;
   readonly inner: Float64Array;
@@ -90,6 +92,11 @@ export class ChainedPencil {
   readonly #elimination: Elimination;
   readonly #ends: number;
   readonly #work: number;
+  /** Joints' right-hand side from the inner ones; inner unknowns with the ends held; their part of the ends. */
+  readonly #reduce: Program;
+  readonly #held: Program;
+  readonly #follow: Program;
+  readonly #products: { readonly K: Program; readonly M: Program };
   readonly #diagonals: { K?: Float64Array; M?: Float64Array } = {};
   #smallestInnerPivot = Infinity;
 
@@ -111,6 +118,10 @@ export class ChainedPencil {
     const widest = pair.classes.reduce((most, { ends }) => Math.max(most, ends), 0);
     this.#ends = arena.numbers(2 * BATCH * widest);
     this.#work = arena.numbers(widest);
+    this.#reduce = this.#reduceProgram();
+    this.#held = this.#heldProgram();
+    this.#follow = this.#followProgram();
+    this.#products = { K: this.#productProgram('K'), M: this.#productProgram('M') };
   }
 
   /** Address of a vector of zeros. */
@@ -216,7 +227,7 @@ export class ChainedPencil {
     const { joints } = this.pair;
     const x = this.vector();
     this.arena.view(x, joints).set(error.motion);
-    this.#addChainMotion(x, x);
+    this.#follow.run(x, x);
     const motion = this.arena.view(x, this.n).slice();
     const largest = motion.reduce((most, value) => Math.max(most, Math.abs(value)), 0);
     const { unknown, sigma, relativePivot } = error;
@@ -235,71 +246,13 @@ export class ChainedPencil {
 
   /** y ← (K − σM)⁻¹ x, two different vectors. */
   solve(x: number, y: number): void {
-    const { kernels, f64 } = this.arena;
+    const { f64 } = this.arena;
     f64.copyWithin(y / 8, x / 8, x / 8 + this.pair.joints);
     f64.fill(0, y / 8 + this.n, y / 8 + this.size);
-    this.#inBatches(({ chainClass: { inner, ends }, blocks, first, table }, from, count) => {
-      if (inner === 0) return;
-      const F = x + 8 * (first + from * inner);
-      const B = this.#ends;
-      for (const { inner: inputs, ends: outputs, innerFrom, endsFrom, minusWT } of blocks) {
-        kernels.multiplyBatch(
-          count,
-          F + 8 * innerFrom,
-          8 * inner,
-          inputs,
-          minusWT,
-          outputs,
-          B + 8 * endsFrom,
-          8 * ends,
-          false,
-        );
-      }
-      kernels.scatterEnds(count, table + 24 * from, ends, B, y);
-    });
+    this.#reduce.run(x, y);
     this.#elimination.solve(y, y);
-    this.#inBatches(({ chainClass: { inner }, blocks, first }, from, count) => {
-      const offset = 8 * (first + from * inner);
-      for (const { inner: size, innerFrom, inverse } of blocks) {
-        const at = offset + 8 * innerFrom;
-        kernels.multiplyBatch(
-          count,
-          x + at,
-          8 * inner,
-          size,
-          inverse,
-          size,
-          y + at,
-          8 * inner,
-          false,
-        );
-      }
-    });
-    this.#addChainMotion(y, y);
-  }
-
-  /** u_i −= W T x, for the inner unknowns u of y. */
-  #addChainMotion(x: number, y: number): void {
-    const { kernels } = this.arena;
-    this.#inBatches(({ chainClass: { inner, ends }, blocks, first, table }, from, count) => {
-      if (inner === 0) return;
-      const B = this.#ends;
-      kernels.gatherEnds(count, table + 24 * from, ends, x, B);
-      const Y = y + 8 * (first + from * inner);
-      for (const { inner: outputs, ends: inputs, innerFrom, endsFrom, minusW } of blocks) {
-        kernels.multiplyBatch(
-          count,
-          B + 8 * endsFrom,
-          8 * ends,
-          inputs,
-          minusW,
-          outputs,
-          Y + 8 * innerFrom,
-          8 * inner,
-          true,
-        );
-      }
-    });
+    this.#held.run(x, y);
+    this.#follow.run(y, y);
   }
 
   /** y ← M x, two different vectors. */
@@ -323,24 +276,96 @@ export class ChainedPencil {
     f64.fill(0, y / 8, y / 8 + joints);
     f64.fill(0, y / 8 + this.n, y / 8 + this.size);
     kernels.multiplySparse(joints, colPtr, rowIdx, values, x, y);
+    this.#products[which].run(x, y);
+  }
+
+  /** y_joints −= Tᵀ Wᵀ x_inner. */
+  #reduceProgram(): Program {
+    const program = new Program(this.arena);
+    this.#inBatches(({ chainClass: { inner, ends }, blocks, first, table }, from, count) => {
+      if (inner === 0) return;
+      const F = 8 * (first + from * inner);
+      const B = this.#ends;
+      for (const { inner: inputs, ends: outputs, innerFrom, endsFrom, minusWT } of blocks) {
+        program.multiply(
+          count,
+          minusWT,
+          { inputs, outputs },
+          [inX(F + 8 * innerFrom), inner],
+          [inMemory(B + 8 * endsFrom), ends],
+          false,
+        );
+      }
+      program.scatter(count, table + 24 * from, ends, inMemory(B), inY(0));
+    });
+    return program.place();
+  }
+
+  /** y_inner = (K − σM)_ii⁻¹ x_inner. */
+  #heldProgram(): Program {
+    const program = new Program(this.arena);
+    this.#inBatches(({ chainClass: { inner }, blocks, first }, from, count) => {
+      for (const { inner: size, innerFrom, inverse } of blocks) {
+        const at = 8 * (first + from * inner + innerFrom);
+        const sizes = { inputs: size, outputs: size };
+        program.multiply(count, inverse, sizes, [inX(at), inner], [inY(at), inner], false);
+      }
+    });
+    return program.place();
+  }
+
+  /** y_inner −= W T x_joints. */
+  #followProgram(): Program {
+    const program = new Program(this.arena);
+    this.#inBatches(({ chainClass: { inner, ends }, blocks, first, table }, from, count) => {
+      if (inner === 0) return;
+      const B = this.#ends;
+      program.gather(count, table + 24 * from, ends, inX(0), inMemory(B));
+      const Y = 8 * (first + from * inner);
+      for (const { inner: outputs, ends: inputs, innerFrom, endsFrom, minusW } of blocks) {
+        program.multiply(
+          count,
+          minusW,
+          { inputs, outputs },
+          [inMemory(B + 8 * endsFrom), ends],
+          [inY(Y + 8 * innerFrom), inner],
+          true,
+        );
+      }
+    });
+    return program.place();
+  }
+
+  /** y += K x or M x, the chains' part. */
+  #productProgram(which: 'K' | 'M'): Program {
+    const program = new Program(this.arena);
     this.#inBatches((placed, from, count) => {
       const { inner, ends } = placed.chainClass;
       const matrix = placed[which];
       const table = placed.table + 24 * from;
-      const F = x + 8 * (placed.first + from * inner);
-      const Y = y + 8 * (placed.first + from * inner);
+      const at = 8 * (placed.first + from * inner);
       const B = this.#ends;
       const C = B + 8 * BATCH * ends;
-      kernels.gatherEnds(count, table, ends, x, B);
+      program.gather(count, table, ends, inX(0), inMemory(B));
       if (matrix.kind === 'diagonal') {
-        kernels.multiplyDiagonals(count, inner, matrix.inner, F, Y);
-        kernels.multiplyDiagonals(count, ends, matrix.ends, B, C);
+        program.diagonal(count, inner, matrix.inner, inX(at), inY(at));
+        program.diagonal(count, ends, matrix.ends, inMemory(B), inMemory(C));
       } else {
-        for (const block of matrix.blocks)
-          multiplyBlock(kernels, count, block, inner, ends, F, B, Y, C);
+        for (const block of matrix.blocks) {
+          const { inner: m, ends: e, innerFrom: i, endsFrom: o } = block;
+          const x = [inX(at + 8 * i), inner] as const;
+          const y = [inY(at + 8 * i), inner] as const;
+          const b = [inMemory(B + 8 * o), ends] as const;
+          const c = [inMemory(C + 8 * o), ends] as const;
+          program.multiply(count, block.endsEnds, { inputs: e, outputs: e }, b, c, false);
+          program.multiply(count, block.endsInner, { inputs: m, outputs: e }, x, c, true);
+          program.multiply(count, block.innerInner, { inputs: m, outputs: m }, x, y, false);
+          program.multiply(count, block.innerEnds, { inputs: e, outputs: m }, b, y, true);
+        }
       }
-      kernels.scatterEnds(count, table, ends, C, y);
+      program.scatter(count, table, ends, inMemory(C), inY(0));
     });
+    return program.place();
   }
 
   /**
@@ -371,55 +396,45 @@ export class ChainedPencil {
   }
 
   /**
-   * Packs, per class, rows over a chain's inner unknowns and ends for `applyRows`.
+   * Puts down rows over the inner unknowns and the ends of each class's chains, for `applyRows`.
    *   rows  per class: outputs × (inner + ends), row by row
    */
-  packRows(rows: readonly Float64Array[]): PackedRows[] {
-    return this.pair.classes.map(({ inner, ends }, c) => {
+  placeRows(rows: readonly Float64Array[]): PlacedRows {
+    const { arena } = this;
+    const program = new Program(arena);
+    const batches = this.#classes.map(({ chainClass: { inner, ends }, count, first, table }, c) => {
       const width = inner + ends;
       const A = rows[c]!;
       const outputs = A.length / width;
       const part = (from: number, columns: number) =>
-        packTiles(this.arena, outputs, columns, (i, j) => A[i * width + from + j]!);
-      return { outputs, inner: part(0, inner), ends: part(inner, ends) };
+        packTiles(arena, outputs, columns, (i, j) => A[i * width + from + j]!);
+      const B = arena.numbers(count * ends);
+      const out = arena.numbers(count * outputs);
+      const to = [inMemory(out), outputs] as const;
+      program.gather(count, table, ends, inX(0), inMemory(B));
+      const ofEnds = part(inner, ends);
+      program.multiply(count, ofEnds, { inputs: ends, outputs }, [inMemory(B), ends], to, false);
+      const F = [inX(8 * first), inner] as const;
+      program.multiply(count, part(0, inner), { inputs: inner, outputs }, F, to, true);
+      return { first, B, out, outputs };
     });
+    return { program: program.place(), batches };
   }
 
-  /** Hands the products of the rows with each chain's part of x to `use`, batch by batch. */
-  applyRows(rows: readonly PackedRows[], x: number, use: (batch: ChainBatch) => void): void {
+  /** Hands the products of the rows with each chain's part of x to `use`, class by class. */
+  applyRows({ program, batches }: PlacedRows, x: number, use: (batch: ChainBatch) => void): void {
     const { arena } = this;
-    const { kernels } = arena;
-    const used = arena.used;
-    const most = rows.reduce((sum, { outputs }) => Math.max(sum, outputs), 0);
-    const out = arena.numbers(BATCH * most);
-    this.#inBatches((placed, from, count, c) => {
-      const { inner, ends } = placed.chainClass;
-      const row = rows[c]!;
-      const F = x + 8 * (placed.first + from * inner);
-      kernels.gatherEnds(count, placed.table + 24 * from, ends, x, this.#ends);
-      const width = 8 * row.outputs;
-      kernels.multiplyBatch(
-        count,
-        this.#ends,
-        8 * ends,
-        ends,
-        row.ends,
-        row.outputs,
-        out,
-        width,
-        false,
-      );
-      kernels.multiplyBatch(count, F, 8 * inner, inner, row.inner, row.outputs, out, width, true);
+    program.run(x, x);
+    this.#classes.forEach(({ chainClass: { inner, ends }, count }, classIndex) => {
+      const { first, B, out, outputs } = batches[classIndex]!;
       use({
-        classIndex: c,
-        from,
+        classIndex,
         count,
-        products: arena.view(out, count * row.outputs),
-        inner: arena.view(F, count * inner),
-        ends: arena.view(this.#ends, count * ends),
+        products: arena.view(out, count * outputs),
+        inner: arena.view(x + 8 * first, count * inner),
+        ends: arena.view(B, count * ends),
       });
     });
-    arena.rewind(used);
   }
 
   /**
@@ -448,50 +463,13 @@ export class ChainedPencil {
     arena.rewind(used);
   }
 
-  /** Hands the inner unknowns and the ends of every chain to `use`, batch by batch. */
-  eachBatch(x: number, use: (batch: Omit<ChainBatch, 'products'>) => void): void {
-    const { arena } = this;
-    this.#inBatches(({ chainClass: { inner, ends }, first, table }, from, count, classIndex) => {
-      const F = x + 8 * (first + from * inner);
-      arena.kernels.gatherEnds(count, table + 24 * from, ends, x, this.#ends);
-      const parts = {
-        inner: arena.view(F, count * inner),
-        ends: arena.view(this.#ends, count * ends),
-      };
-      use({ classIndex, from, count, ...parts });
-    });
-  }
-
-  #inBatches(use: (placed: Placed, from: number, count: number, c: number) => void): void {
-    this.#classes.forEach((placed, c) => {
+  #inBatches(use: (placed: Placed, from: number, count: number) => void): void {
+    for (const placed of this.#classes) {
       for (let from = 0; from < placed.count; from += BATCH) {
-        use(placed, from, Math.min(BATCH, placed.count - from), c);
+        use(placed, from, Math.min(BATCH, placed.count - from));
       }
-    });
+    }
   }
-}
-
-/** One block's part of (Y, C) = A (F, B), inner unknowns and ends. */
-function multiplyBlock(
-  kernels: Kernels,
-  count: number,
-  block: PackedBlock,
-  inner: number,
-  ends: number,
-  F: number,
-  B: number,
-  Y: number,
-  C: number,
-): void {
-  const { inner: m, ends: e, innerInner, innerEnds, endsInner, endsEnds } = block;
-  const [f, y] = [F + 8 * block.innerFrom, Y + 8 * block.innerFrom];
-  const [b, c] = [B + 8 * block.endsFrom, C + 8 * block.endsFrom];
-  const [i, o] = [8 * inner, 8 * ends];
-  kernels.multiplyBatch(count, b, o, e, endsEnds, e, c, o, false);
-  if (m === 0) return;
-  kernels.multiplyBatch(count, f, i, m, endsInner, e, c, o, true);
-  kernels.multiplyBatch(count, f, i, m, innerInner, m, y, i, false);
-  kernels.multiplyBatch(count, b, o, e, innerEnds, m, y, i, true);
 }
 
 /**

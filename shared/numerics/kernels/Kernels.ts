@@ -101,6 +101,14 @@ export interface Kernels {
   /** x[dofs_m] += T_mᵀ B_m. */
   scatterEnds(count: number, table: number, ends: number, B: number, x: number): void;
   /**
+   * Does `count` steps one after the other, which chains of many makes need by the thousand: calls from outside
+   * would cost more than the work.
+   *   steps  twelve 32-bit numbers each: kind (0 gatherEnds, 1 scatterEnds, 2 multiplyDiagonals, 3 multiplyBatch),
+   *          chains, source and what it counts from (0 the memory, 1 x, 2 y), destination and what it counts from,
+   *          table or matrix, inputs (ends, size), outputs, strides of source and destination, accumulate
+   */
+  run(count: number, steps: number, x: number, y: number): void;
+  /**
    * values += T_mᵀ S T_m, lower triangle, at the destinations of each chain (32-bit indices: column
    * by column the entries from the diagonal down, then the place whose `scale` grows by
    * T_bᵀ diag(magnitude) T_b).

@@ -130,7 +130,7 @@ export function scriptKernels(memory: MemoryViews): Kernels {
     for (let i = 0, p = x >>> 3, q = y >>> 3; i < n; i++) f[q + i]! += factor * f[p + i]!;
   }
 
-  return {
+  const kernels: Kernels = {
     eliminatePanel(panelAt, columns, tiles, pivotsAt, scaleAt, tolerance, workAt) {
       const f = memory.f64;
       const panel = panelAt >>> 3;
@@ -518,5 +518,38 @@ export function scriptKernels(memory: MemoryViews): Kernels {
       }
       for (; j < count; j++) addScaled(n, -f[(c >>> 3) + j]!, V + j * stride, y);
     },
+
+    run(count, stepsAt, x, y) {
+      const index = memory.i32;
+      const base = [0, x, y];
+      for (let k = 0, step = stepsAt >>> 2; k < count; k++, step += 12) {
+        const kind = index[step]!;
+        const chains = index[step + 1]!;
+        const from = index[step + 2]! + base[index[step + 3]!]!;
+        const to = index[step + 4]! + base[index[step + 5]!]!;
+        const table = index[step + 6]!;
+        const inputs = index[step + 7]!;
+        if (kind === 0) kernels.gatherEnds(chains, table, inputs, from, to);
+        else if (kind === 1) kernels.scatterEnds(chains, table, inputs, from, to);
+        else if (kind === 2) kernels.multiplyDiagonals(chains, inputs, table, from, to);
+        else {
+          const [strideF, strideY] = [index[step + 9]!, index[step + 10]!];
+          const outputs = index[step + 8]!;
+          const accumulate = index[step + 11] !== 0;
+          kernels.multiplyBatch(
+            chains,
+            from,
+            strideF,
+            inputs,
+            table,
+            outputs,
+            to,
+            strideY,
+            accumulate,
+          );
+        }
+      }
+    },
   };
+  return kernels;
 }

@@ -817,3 +817,41 @@ export function subtractCombination(
     addScaled(n, -load<f64>(c + ((<usize>j) << 3)), V + <usize>j * stride, y);
   }
 }
+
+/** Where an address of a step counts from: the memory itself, x or y. */
+function resolve(step: usize, field: usize, x: usize, y: usize): usize {
+  const from = load<i32>(step + field + 4);
+  return <usize>load<u32>(step + field) + (from == 0 ? 0 : from == 1 ? x : y);
+}
+
+export function run(count: i32, steps: usize, x: usize, y: usize): void {
+  for (let k: i32 = 0; k < count; k++) {
+    const kind = load<i32>(steps);
+    const chains = load<i32>(steps, 4);
+    const from = resolve(steps, 8, x, y);
+    const to = resolve(steps, 16, x, y);
+    const table = <usize>load<u32>(steps, 24);
+    const inputs = load<i32>(steps, 28);
+    const outputs = load<i32>(steps, 32);
+    if (kind == 0) {
+      gatherEnds(chains, table, inputs, from, to);
+    } else if (kind == 1) {
+      scatterEnds(chains, table, inputs, from, to);
+    } else if (kind == 2) {
+      multiplyDiagonals(chains, inputs, table, from, to);
+    } else {
+      multiplyBatch(
+        chains,
+        from,
+        <usize>load<u32>(steps, 36),
+        inputs,
+        table,
+        outputs,
+        to,
+        <usize>load<u32>(steps, 40),
+        load<i32>(steps, 44) != 0,
+      );
+    }
+    steps += 48;
+  }
+}
