@@ -207,6 +207,18 @@ export class DynamicSystem {
     return negativePivots === 0 && elimination.smallestPivot() > CERTAIN_PIVOT;
   }
 
+  /** A frequency from `omega` up, at most 32 times it, below which no piece, clamped, has one of its own. */
+  clampedAbove(omega: number): number {
+    let above = omega;
+    for (let doubling = 0; doubling < 5; doubling++) {
+      for (let e = 0; e < this.elements.length; e++) {
+        if (this.elements[e]!.stiffness(2 * above, this.#k[e]!) > 0) return above;
+      }
+      above *= 2;
+    }
+    return above;
+  }
+
   /** √ of the lowest K_ii / M_ii at rest: above the first modes, and of their order [rad/s]. */
   frequencyScale(): number {
     const { K } = this.stiffness(0);

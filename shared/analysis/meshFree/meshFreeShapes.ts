@@ -6,9 +6,6 @@ import type { ModeShapes } from '../shapesFile.ts';
 import type { DynamicSystem } from './DynamicSystem.ts';
 import type { MemberPiece } from './memberPieces.ts';
 
-/** Digits to which stations stand at the same place of equal pieces: shapes are stored in single precision. */
-const SAME_PLACE_DIGITS = 12;
-
 /**
  * Mode shapes at every node and at stations along every member, from the members' own functions: the stations only
  * say where the shape is drawn.
@@ -58,12 +55,13 @@ export function meshFreeShapes(
   };
 }
 
-/** Pieces of one element with stations drawn at the same places on them. */
+/** Pieces of one element at one place of their members, which are drawn at the same stations. */
 interface StationRun {
   readonly element: DynamicElement;
-  /** Places of the stations, −½ … ½. */
+  /** Number of the first station on the pieces, and the places of all, −½ … ½. */
+  readonly first: number;
   readonly xi: readonly number[];
-  readonly pieces: { readonly piece: MemberPiece; readonly first: number }[];
+  readonly pieces: MemberPiece[];
 }
 
 function stationRuns(system: DynamicSystem, drawn: readonly DividedPart[]): StationRun[] {
@@ -71,22 +69,25 @@ function stationRuns(system: DynamicSystem, drawn: readonly DividedPart[]): Stat
   system.pieces.forEach((piece, i) => {
     const { from, length, element } = piece;
     const part = drawn[piece.part.index]!;
-    const { first, count } = stationsOn(piece, part);
-    const xi = Array.from({ length: count }, (_, k) => {
-      const at = ((first + k) * part.segmentLength - from) / length - 0.5;
-      return Math.min(Math.max(at, -0.5), 0.5);
-    });
-    const key = `${system.elementOf[i]!} ${xi.map((at) => at.toPrecision(SAME_PLACE_DIGITS)).join()}`;
-    const run = runs.get(key);
-    if (run) run.pieces.push({ piece, first });
-    else runs.set(key, { element, xi, pieces: [{ piece, first }] });
+    const key = `${system.elementOf[i]!} ${part.divisions} ${(from / length).toFixed(6)}`;
+    let run = runs.get(key);
+    if (run === undefined) {
+      const { first, count } = stationsOn(piece, part);
+      const xi = Array.from({ length: count }, (_, k) => {
+        const at = ((first + k) * part.segmentLength - from) / length - 0.5;
+        return Math.min(Math.max(at, -0.5), 0.5);
+      });
+      run = { element, first, xi, pieces: [] };
+      runs.set(key, run);
+    }
+    run.pieces.push(piece);
   });
   return [...runs.values()];
 }
 
 /** Adds what one kind of vibration does at the stations of a run, in global axes. */
 function addRun(
-  { element, xi, pieces }: StationRun,
+  { element, first, xi, pieces }: StationRun,
   omega: number,
   x: Float64Array,
   members: ModeShapes['members'],
@@ -101,7 +102,7 @@ function addRun(
     element.shape(omega, xi[i]!, N.subarray(i * size, (i + 1) * size));
   }
   for (let p = 0; p < pieces.length; p++) {
-    const { piece, first } = pieces[p]!;
+    const piece = pieces[p]!;
     const { direction, axis } = piece;
     displacements(piece.motion, x, d);
     let at = (members[piece.part.index]!.first + first) * 6;

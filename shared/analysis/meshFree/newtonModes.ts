@@ -2,8 +2,9 @@ import type { BracketedMode } from './bracketModes.ts';
 import type { DynamicSystem, Evaluation } from './DynamicSystem.ts';
 import { ritzBlock } from './ritzBlock.ts';
 
-/** Inverse iterations with one factor: estimates come with shapes. */
-const INVERSE_STEPS = 2;
+/** Inverse iterations with the first factor, to mend the shapes of estimates, and with each later one. */
+const FIRST_STEPS = 2;
+const LATER_STEPS = 1;
 /** Factors of one mode or cluster; Newton's steps square the error, so three settle what can be settled. */
 const MOST_FACTORS = 5;
 /**
@@ -13,14 +14,14 @@ const MOST_FACTORS = 5;
 const NEIGHBOURS = 0.03;
 /** λ closer than this, over λ, stay one cluster. */
 const CLUSTER = 1e-6;
-/** Change of λ, over λ, whose square is far below the accuracy promised. */
-const SETTLED = 3e-6;
-/**
- * Error of Newton's step over the square of its change, both over λ. Ritz vectors are orthogonal in M = −K_D′, so
- * only the poles of K_D bend an eigenvalue's path. One pole λ_j gives λ λ_j² / ((λ_j − λ)(2λ_j − λ)), which is 4.9
- * for the nearest, λ_j = 1.21 λ, that a divided system leaves (`dividedSystem`).
- */
-const CURVATURE = 5;
+/** Error of λ, over λ, that the last step may leave: half of what is promised of ω. */
+const SETTLED = 1e-9;
+/** Residual, over λ, whose square leaves less than that where the next mode is a thousandth away. */
+const SETTLED_RESIDUAL = 1e-6;
+/** Ritz vectors settle what is near by so much, over λ, whatever the poles. */
+const NEAR = 3e-6;
+/** Error of Newton's step over the square of its change, both over λ, by one pole at 1.21 λ: see `curvature`. */
+const MOST_CURVATURE = 5;
 /**
  * Modes of two clusters closer than this, over λ, may be one mode found twice: both are left out. Residuals, which
  * can be smaller than the rounding of λ, do not tell them apart.
@@ -63,8 +64,9 @@ export function newtonModes(
 ): BracketedMode[] {
   const settled: Settled[] = [];
   const groups = split(estimates, NEIGHBOURS);
+  const clampedAbove = system.clampedAbove(estimates.at(-1)?.omega ?? 0);
   for (const group of groups) {
-    settle(system, evaluate, group, 1, settled);
+    settle(system, evaluate, group, 1, clampedAbove, settled);
     onSettled(settled.length);
   }
   settled.sort((a, b) => a.omega - b.omega);
@@ -82,6 +84,18 @@ export function newtonModes(
   });
 }
 
+/**
+ * Bound on the error of Newton's step over the square of its change, both over λ. Ritz vectors are orthogonal in
+ * M = −K_D′, so only the poles of K_D, the clamped pieces' own λ_j, bend an eigenvalue's path:
+ * K_D = K₀ − λM₀ − λ² Σ m_j m_jᵀ / (λ_j − λ), where Σ m_j m_jᵀ ≤ M₀ (Bessel) gives r²/(r − 1)³ with the lowest
+ * r = λ_j/λ. By one pole alone it is r²/((r − 1)(2r − 1)), 4.9 for the nearest that a divided system leaves
+ * (`dividedSystem`).
+ */
+function curvature(omega: number, clampedAbove: number): number {
+  const r = (clampedAbove / omega) ** 2;
+  return r > 1 ? Math.min(MOST_CURVATURE, (r * r) / (r - 1) ** 3) : MOST_CURVATURE;
+}
+
 /** The nearest mode of another cluster, downwards (−1) or upwards. */
 function before(modes: readonly Settled[], i: number, step: -1 | 1): Settled | undefined {
   for (let j = i + step; j >= 0 && j < modes.length; j += step) {
@@ -96,32 +110,45 @@ function settle(
   evaluate: (omega: number) => Evaluation,
   group: readonly ModeEstimate[],
   factors: number,
+  clampedAbove: number,
   into: Settled[],
 ): void {
   const centre = 0.5 * (group[0]!.omega + group.at(-1)!.omega);
   const evaluation = evaluate(centre);
   const start = group.map(({ x }) => x);
-  const block = ritzBlock(system, evaluation, group.length, start, INVERSE_STEPS);
+  const block = ritzBlock(
+    system,
+    evaluation,
+    group.length,
+    start,
+    factors === 1 ? FIRST_STEPS : LATER_STEPS,
+  );
   if (block === null || !(block.omega[0]! > 0)) return;
   const at = evaluation.omega ** 2;
   const changes = block.omega.map((omega) => Math.abs(at / omega ** 2 - 1));
   const change = Math.max(...changes);
-  if (change <= SETTLED) {
+  const bend = curvature(block.omega.at(-1)!, clampedAbove);
+  // Of a block, the norm of all residuals together bounds each distance.
+  const residual = Math.hypot(...block.residual) / block.omega[0]! ** 2;
+  const near = change <= NEAR || spread(block.omega) <= CLUSTER;
+  if (near && bend * change ** 2 <= SETTLED && residual <= SETTLED_RESIDUAL) {
     const cluster = into.length;
-    // Of a block, the norm of all residuals together bounds each distance.
-    const whole = Math.hypot(...block.residual);
     block.omega.forEach((omega, i) => {
-      const residual = whole / omega ** 2;
-      const step = CURVATURE * changes[i]! ** 2;
+      const step = bend * changes[i]! ** 2;
       into.push({ omega, x: block.x[i]!, radius: residual + step, residual, step, cluster });
     });
     return;
   }
   if (factors === MOST_FACTORS) return;
   const next = block.omega.map((omega, i): ModeEstimate => ({ omega, x: block.x[i]! }));
-  for (const part of split(next, Math.max(CLUSTER, 2 * CURVATURE * change * change))) {
-    settle(system, evaluate, part, factors + 1, into);
+  for (const part of split(next, Math.max(CLUSTER, 2 * bend * change * change))) {
+    settle(system, evaluate, part, factors + 1, clampedAbove, into);
   }
+}
+
+/** Distance of the last from the first, over λ. */
+function spread(omega: readonly number[]): number {
+  return 1 - (omega[0]! / omega.at(-1)!) ** 2;
 }
 
 /** Runs of modes each closer than `distance`, over λ, to the next. */

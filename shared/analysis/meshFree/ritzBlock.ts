@@ -97,6 +97,12 @@ function orthonormalise(M: SymmetricCsc, X: Float64Array[], Z: Float64Array[]): 
   const m = X.length;
   for (let pass = 0; pass < 2; pass++) {
     const B = gram(M, X, X);
+    if (m === 1) {
+      const size = Math.sqrt(B[0]!);
+      if (!(size > 0)) return false;
+      for (const [x] of [X, Z]) for (let p = 0; p < x!.length; p++) x![p]! /= size;
+      return true;
+    }
     const cholesky = new CholeskyDecomposition(
       new Matrix(Array.from({ length: m }, (_, i) => Array.from(B.subarray(i * m, (i + 1) * m)))),
     );
