@@ -4,6 +4,7 @@ import type { FrameDocument } from '../schemas/frameDocument.ts';
 import type { Method, ModelWarning, SolveSettings, SolveSummary } from '../schemas/solveResult.ts';
 import { solveMeshFree } from './meshFree/solveMeshFree.ts';
 import type { ModeShapes } from './shapesFile.ts';
+import { SharedWork } from './SharedWork.ts';
 import type { SolveProgress } from './SolvedFrame.ts';
 import { solveMeshed } from './solveMeshed.ts';
 import { SOLVER_VERSION } from './solverVersion.ts';
@@ -36,9 +37,14 @@ export interface SolveOutcome {
  * Natural frequencies and mode shapes of a frame with consistent or lumped mass, or mesh-free, with everything
  * that the frame document page says a solve returns.
  * Throws AppError `unsolvable` (no mass, unknown state), `mechanism` (a motion that nothing resists), `cancelled`.
+ *   shared  hand the same to the next solve of a frame that was edited: what still fits is not done again
  * Not converging is no error: the summary says `complete: false` and holds what was found.
  */
-export function solveFrame(request: SolveRequest, hooks: SolveHooks = {}): SolveOutcome {
+export function solveFrame(
+  request: SolveRequest,
+  hooks: SolveHooks = {},
+  shared: SharedWork = new SharedWork(),
+): SolveOutcome {
   const { method, stateId, settings } = request;
   const clock = hooks.now ?? (() => 0);
   const shouldStop = hooks.shouldStop ?? (() => false);
@@ -57,7 +63,7 @@ export function solveFrame(request: SolveRequest, hooks: SolveHooks = {}): Solve
   const solved =
     method === 'mesh-free'
       ? solveMeshFree(document, settings, steps)
-      : solveMeshed(document, method, settings, steps);
+      : solveMeshed(document, method, settings, steps, shared);
   const ended = clock();
   steps.progress(1, 'done');
   return {

@@ -18,6 +18,7 @@ import { massOrRefuse, refuseMechanismsOf } from './checkMotion.ts';
 import { chainInertia } from './massProperties.ts';
 import { FrameEnergies } from './modeEnergies.ts';
 import { shapesAtPoints } from './shapesAtPoints.ts';
+import type { SharedWork } from './SharedWork.ts';
 import type { SolvedFrame, SolveProgress } from './SolvedFrame.ts';
 import { meshedDetails, summariseModes } from './summariseModes.ts';
 
@@ -29,14 +30,18 @@ const SEED = 20_001;
  */
 const CERTAIN_PIVOT = 1e-9;
 
-/** Solves K φ = λ M φ of a frame divided into elements; `document` with its operating state applied. */
+/**
+ * Solves K φ = λ M φ of a frame divided into elements; `document` with its operating state applied.
+ *   shared  what an earlier solve left; takes in what this one leaves
+ */
 export function solveMeshed(
   document: FrameDocument,
   massKind: MassKind,
   settings: SolveSettings,
   progress: SolveProgress,
+  shared: SharedWork,
 ): SolvedFrame {
-  return withArena((arena) => solveIn(arena, document, massKind, settings, progress));
+  return withArena((arena) => solveIn(arena, document, massKind, settings, progress, shared));
 }
 
 function solveIn(
@@ -45,6 +50,7 @@ function solveIn(
   massKind: MassKind,
   settings: SolveSettings,
   { clock, progress, shouldStop, stopIfAsked }: SolveProgress,
+  shared: SharedWork,
 ): SolvedFrame {
   const began = clock();
   const model = buildModel(document, {
@@ -54,7 +60,8 @@ function solveIn(
   const { totalMass, centre } = massOrRefuse(model);
   const pair = chainedPair(model);
   const built = clock();
-  const analysis = analyseChains(pair, clock);
+  const known = shared.analysisFor(pair);
+  const analysis = known ?? analyseChains(pair, clock);
   const analysed = clock();
   const pencil = new ChainedPencil(arena, pair, analysis);
   const placed = clock();
@@ -93,14 +100,17 @@ function solveIn(
     found.addresses.map(({ vector }) => vector),
   );
   const inertia = chainInertia(model, pencil, centre);
+  const details = meshedDetails(pencil, energies, found, inertia.forces);
+  const attainable = shared.attainableFor(pair) ?? attainableMass(pencil, inertia.forces);
+  shared.keep(pair, analysis, attainable);
   const summary = summariseModes({
     model,
-    details: meshedDetails(pencil, energies, found, inertia.forces),
+    details,
     shapes,
     rigid: rigid.length,
     totalMass,
     total: inertia.total,
-    attainable: attainableMass(pencil, inertia.forces),
+    attainable,
   });
   return {
     ...summary,
@@ -114,8 +124,8 @@ function solveIn(
     warnings: [],
     timing: {
       ...found.timing,
-      order: analysis.symbolic.timing.order,
-      symbolic: analysis.symbolic.timing.symbolic,
+      order: known ? 0 : analysis.symbolic.timing.order,
+      symbolic: known ? 0 : analysis.symbolic.timing.symbolic,
       assemble: built - began + placed - analysed,
       factor: found.timing.factor + factored - moved,
       // Looking for mechanisms certifies the model, as the count check does the modes.
