@@ -1,5 +1,6 @@
 import { assembleMatrices } from '../../frame/assembly/assembleMatrices.ts';
 import { buildModel } from '../../frame/assembly/buildModel.ts';
+import { refuseTooManyStations } from '../../frame/assembly/chains.ts';
 import { divisionsOf } from '../../frame/assembly/divisions.ts';
 import type { MemberPart } from '../../frame/assembly/FrameModel.ts';
 import { partDivider } from '../../frame/assembly/memberParts.ts';
@@ -41,6 +42,11 @@ export function solveMeshFree(
 ): SolvedFrame {
   const began = clock();
   const model = buildModel(document, { massKind: 'consistent', divisionsOf: () => 1 });
+  const divide = partDivider('consistent');
+  const drawn = model.parts.map((part) =>
+    divide(part, divisionsOf(part, settings.divisions, settings.upToHz)),
+  );
+  refuseTooManyStations(drawn);
   const { totalMass, centre } = massOrRefuse(model);
   const joints = new DynamicSystem(
     model,
@@ -87,10 +93,6 @@ export function solveMeshFree(
   const returned = all
     .filter(({ lambda }) => upTo === undefined || lambda <= upTo * upTo)
     .slice(0, upTo === undefined ? most : undefined);
-  const divide = partDivider('consistent');
-  const drawn = model.parts.map((part) =>
-    divide(part, divisionsOf(part, settings.divisions, settings.upToHz)),
-  );
   const shapes = meshFreeShapes(
     system,
     drawn,

@@ -8,7 +8,7 @@ import { add, cross, dot, normalise, scale, subtract } from '../vector3.ts';
 import { carriedBy, carriersOf, GLOBAL_AXES, groupOfNode, offsetFrom } from './carriers.ts';
 import type { Carriers } from './carriers.ts';
 import { componentsOf } from './components.ts';
-import { inModel, isRotation, layChains, segmentsOf } from './chains.ts';
+import { inModel, isRotation, layChains, refuseTooManyStations, segmentsOf } from './chains.ts';
 import type { MemberEnd } from './chains.ts';
 import { memberParts, partDivider } from './memberParts.ts';
 import type {
@@ -38,6 +38,7 @@ interface TieDraft extends Omit<Tie, 'motion'> {
  * signs"). Rigid links, arms and offsets of masses are carried by exact small-displacement kinematics; a
  * joint's displacement is an unknown of its own at the member's end; fixed displacements are left out.
  *   document  accepted by `checkDocument`, with an operating state applied
+ * Throws AppError `memory-limit` for more unknowns than a solve can hold.
  */
 export function buildModel(document: FrameDocument, options: ModelOptions): FrameModel {
   const carriers = carriersOf(document);
@@ -46,6 +47,7 @@ export function buildModel(document: FrameDocument, options: ModelOptions): Fram
   const divide = partDivider(options.massKind);
   const parts = memberParts(document).map((part) => divide(part, options.divisionsOf(part)));
 
+  refuseTooManyStations(parts);
   const ends = parts.map((part) => [
     memberEnd(part, 'start', exists),
     memberEnd(part, 'end', exists),

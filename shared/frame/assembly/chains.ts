@@ -1,3 +1,4 @@
+import { tooLarge } from '../../numerics/kernels/Arena.ts';
 import type { Vector3 } from '../../schemas/frameDocument.ts';
 import { combine, stacked, termsOf } from '../freedoms/Combination.ts';
 import type { Combination, Terms } from '../freedoms/Combination.ts';
@@ -9,6 +10,15 @@ import type { ChainMake, DividedPart, ModelChain, Segment, Tie } from './FrameMo
 
 /** Elements of one chain at most: its inner part is a dense matrix, whose work grows with the square. */
 const MOST_ELEMENTS = 5;
+
+/** Unknowns of a frame at most: more do not fit into the memory of a solve, nor do the objects that describe them. */
+const MOST_UNKNOWNS = 1_000_000;
+
+/** Throws AppError `memory-limit` where members are divided into more stations than a solve can hold. */
+export function refuseTooManyStations(parts: readonly DividedPart[]): void {
+  const stations = parts.reduce((sum, { divisions }) => sum + divisions, 0);
+  if (6 * stations > MOST_UNKNOWNS) throw tooLarge();
+}
 
 /** One end of a member, rigid on its node or through a joint. */
 export interface MemberEnd {
