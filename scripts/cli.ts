@@ -1,4 +1,5 @@
 import { AppError } from '#shared/errors/AppError.ts';
+import { refine } from './cli/refine.ts';
 import { reportFailure } from './cli/reportFailure.ts';
 import { solve } from './cli/solve.ts';
 import type { Streams } from './cli/Streams.ts';
@@ -6,6 +7,7 @@ import type { Streams } from './cli/Streams.ts';
 /** Every verb of the command line; each returns the exit code. */
 const VERBS = new Map<string, (args: string[], streams: Streams) => Promise<number>>([
   ['solve', solve],
+  ['refine', refine],
 ]);
 
 async function run(args: string[], streams: Streams): Promise<number> {

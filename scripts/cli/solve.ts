@@ -1,12 +1,10 @@
-import { parseArgs } from 'node:util';
 import { performance } from 'node:perf_hooks';
 import { z } from 'zod';
-import { AppError } from '#shared/errors/AppError.ts';
-import type { Issue } from '#shared/errors/AppError.ts';
 import { solveFrame } from '#shared/analysis/solveFrame.ts';
 import { METHODS, solveSettings } from '#shared/schemas/solveResult.ts';
 import type { Method, SolveSettings, SolveSummary } from '#shared/schemas/solveResult.ts';
 import { parseDocument, readText } from './readDocument.ts';
+import { readOptions, wholeNumber } from './readOptions.ts';
 import { solveJson, solveTable } from './solveReport.ts';
 import type { Streams } from './Streams.ts';
 
@@ -53,13 +51,6 @@ function solveText(text: string, { method, stateId, settings }: SolveArguments):
   return { ...summary, timing: { ...summary.timing, read } };
 }
 
-const wholeNumber = (most: number) =>
-  z
-    .string()
-    .regex(/^\d+$/, 'takes a whole number.')
-    .transform(Number)
-    .pipe(z.int().min(1, 'takes at least 1.').max(most, `takes at most ${most}.`));
-
 const optionValues = z.object({
   method: z.enum(METHODS, { error: `takes one of ${METHODS.join(', ')}.` }),
   modes: wholeNumber(200).optional(),
@@ -80,23 +71,24 @@ const optionValues = z.object({
 });
 
 function readArguments(args: string[]): SolveArguments {
-  const { values, positionals } = parseOptions(args);
-  const issues: Issue[] = [];
-  const [file, ...extra] = positionals;
-  if (file === undefined)
-    issues.push(usage('Name the file of a frame document, or - for standard input.'));
-  if (extra.length > 0) issues.push(usage(`One file at a time: ${extra.join(', ')} is too much.`));
-  if ((values['modes'] === undefined) === (values['up-to'] === undefined)) {
-    issues.push(usage('Give either --modes or --up-to.'));
-  }
-  const parsed = optionValues.safeParse(values);
-  for (const { path, message } of parsed.error?.issues ?? []) {
-    issues.push({ path: `--${path.join('.')}`, message: `--${path.join('.')} ${message}` });
-  }
-  if (file === undefined || !parsed.success || issues.length > 0) {
-    throw new AppError('invalid-request', 'The command is not complete.', { issues });
-  }
-  const { method, modes, 'up-to': upToHz, divisions, state, repeat, json } = parsed.data;
+  const { file, options } = readOptions(args, {
+    usage: USAGE,
+    types: {
+      method: { type: 'string' },
+      modes: { type: 'string' },
+      'up-to': { type: 'string' },
+      divisions: { type: 'string' },
+      state: { type: 'string' },
+      repeat: { type: 'string' },
+      json: { type: 'boolean' },
+    },
+    values: optionValues,
+    together: (given) =>
+      (given['modes'] === undefined) === (given['up-to'] === undefined)
+        ? 'Give either --modes or --up-to.'
+        : null,
+  });
+  const { method, modes, 'up-to': upToHz, divisions, state, repeat, json } = options;
   return {
     file,
     method,
@@ -105,29 +97,4 @@ function readArguments(args: string[]): SolveArguments {
     repeat: repeat ?? 1,
     json: json ?? false,
   };
-}
-
-function parseOptions(args: string[]) {
-  try {
-    return parseArgs({
-      args,
-      allowPositionals: true,
-      options: {
-        method: { type: 'string' },
-        modes: { type: 'string' },
-        'up-to': { type: 'string' },
-        divisions: { type: 'string' },
-        state: { type: 'string' },
-        repeat: { type: 'string' },
-        json: { type: 'boolean' },
-      },
-    });
-  } catch (cause) {
-    const reason = cause instanceof Error ? cause.message : String(cause);
-    throw new AppError('invalid-request', reason, { issues: [usage(reason)] }, cause);
-  }
-}
-
-function usage(message: string): Issue {
-  return { path: '', message: `${message} Usage: ${USAGE}` };
 }

@@ -1,4 +1,5 @@
 import type { SolveSummary } from '#shared/schemas/solveResult.ts';
+import { significant, table } from './table.ts';
 
 /** The one object that `--json` prints; rigid-body modes stand first with 0 Hz. */
 export function solveJson(summary: SolveSummary): string {
@@ -49,27 +50,6 @@ function frequencyText(hz: number, digits: number): string {
   return hz === 0 ? '0' : significant(hz, Math.min(digits, 6));
 }
 
-function significant(value: number, digits: number): string {
-  return value === 0 ? '0' : String(Number(value.toPrecision(digits)));
-}
-
 function share(part: number, whole: number): string {
   return whole > 0 ? ((100 * part) / whole).toFixed(1) : '–';
-}
-
-/** Columns padded to their widest cell: the last to the left, the others to the right. */
-function table(rows: readonly (readonly string[])[]): string[] {
-  const widths: number[] = [];
-  for (const row of rows) {
-    row.forEach((cell, column) => {
-      widths[column] = Math.max(widths[column] ?? 0, cell.length);
-    });
-  }
-  return rows.map((row) =>
-    row
-      .map((cell, column) =>
-        column === row.length - 1 ? cell : cell.padStart(widths[column] ?? 0),
-      )
-      .join('  '),
-  );
 }
