@@ -1,8 +1,8 @@
 import { chainMatrix } from '../frame/assembly/chainedPair.ts';
-import type { DividedPart, FrameModel, ModelChain } from '../frame/assembly/FrameModel.ts';
+import type { FrameModel, ModelChain } from '../frame/assembly/FrameModel.ts';
 import { addForces } from '../frame/freedoms/Combination.ts';
 import type { ChainedPencil } from '../numerics/chains/ChainedPencil.ts';
-import { add, cross, dot, scale, subtract } from '../frame/vector3.ts';
+import { add, cross, scale, subtract } from '../frame/vector3.ts';
 import type { Vector3 } from '../schemas/frameDocument.ts';
 
 export type Six = [number, number, number, number, number, number];
@@ -52,54 +52,6 @@ export function rigidMotionAt(
   return [cross(axis, subtract(point, centre)), axis];
 }
 
-/** Its components along the axes of a member, as element displacements of one end. */
-function endMotion(
-  { axes, member }: DividedPart,
-  direction: number,
-  point: Vector3,
-  centre: Vector3,
-): number[] {
-  const [t, omega] = rigidMotionAt(direction, point, centre);
-  const along = [dot(axes.x, t), dot(axes.y, t), dot(axes.z, t)];
-  if (member.kind === 'bar') return along;
-  return [...along, dot(axes.x, omega), dot(axes.y, omega), dot(axes.z, omega)];
-}
-
-export interface RigidInertia {
-  /** M r of each rigid motion r over all displacements, fixed ones too, taken at the free unknowns. */
-  readonly forces: Float64Array[];
-  /** rᵀ M r: total mass along X Y Z [kg], moments of inertia about the centre [kg·m²]; 0 outside the set. */
-  readonly total: Six;
-}
-
-/**
- * Inertia forces (M r)_free and rigid inertia rᵀMr for the six rigid motions r: translations along X Y Z and
- * rotations about axes through `centre`. r moves fixed displacements too, so the coupling M_fs of consistent
- * mass is in it. A direction that is not among the model's unknowns gives zeros.
- */
-export function rigidInertia(model: FrameModel, centre: Vector3): RigidInertia {
-  const total: Six = [0, 0, 0, 0, 0, 0];
-  const forces = total.map((_, direction) => {
-    const b = new Float64Array(model.free);
-    if (!model.exists[direction]) return b;
-    for (const { part, number, motion } of model.segments) {
-      const at = (station: number) =>
-        add(part.start, scale(part.axes.x, station * part.segmentLength));
-      const r = Float64Array.from([
-        ...endMotion(part, direction, at(number), centre),
-        ...endMotion(part, direction, at(number + 1), centre),
-      ]);
-      total[direction]! += addInertia(part.mass, r, (f) => addForces(motion, f, b));
-    }
-    for (const { at, motion, mass } of model.bodies) {
-      const r = Float64Array.from(rigidMotionAt(direction, at, centre).flat());
-      total[direction]! += addInertia(mass, r, (f) => addForces(motion, f, b));
-    }
-    return b;
-  });
-  return { forces, total };
-}
-
 /** Hands m r to `use` and returns rᵀ m r. */
 function addInertia(m: Float64Array, r: Float64Array, use: (f: Float64Array) => void): number {
   const f = new Float64Array(r.length);
@@ -112,19 +64,27 @@ function addInertia(m: Float64Array, r: Float64Array, use: (f: Float64Array) => 
   return energy;
 }
 
-/** Rigid inertia as `rigidInertia` gives it, with the forces in a pencil's arena. */
-export interface PlacedInertia {
-  /** Address of the six inertia forces, vectors of the pencil one after the other. */
+/** What a frame's mass answers to its six rigid motions. */
+export interface RigidInertia {
+  /**
+   * Address, in a pencil's arena, of M r of each rigid motion r over all displacements, fixed ones too, taken at the
+   * free unknowns: six vectors of the pencil, one after the other.
+   */
   readonly forces: number;
+  /** rᵀ M r: total mass along X Y Z [kg], moments of inertia about the centre [kg·m²]; 0 outside the set. */
   readonly total: Six;
 }
 
-/** The same as `rigidInertia` over the unknowns of a model, from what chains of one make share. */
+/**
+ * Inertia forces (M r)_free and rigid inertia rᵀMr for the six rigid motions r: translations along X Y Z and
+ * rotations about axes through `centre`. r moves fixed displacements too, so the coupling M_fs of consistent
+ * mass is in it. A direction that is not among the model's unknowns gives zeros.
+ */
 export function chainInertia(
   model: FrameModel,
   pencil: ChainedPencil,
   centre: Vector3,
-): PlacedInertia {
+): RigidInertia {
   const { arena, size, n } = pencil;
   const total: Six = [0, 0, 0, 0, 0, 0];
   const forces = arena.numbers(6 * size);

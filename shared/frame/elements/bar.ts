@@ -11,11 +11,6 @@ export function barStiffness(axial: number): Float64Array {
   return k;
 }
 
-/** Strain energy ½ (EA/L)(u₂ − u₁)² [J]; `axial` EA/L [N/m], extension u₂ − u₁ [m]. */
-export function barStrainEnergy(axial: number, extension: number): number {
-  return 0.5 * axial * extension * extension;
-}
-
 /** Consistent mass m̄L/6 [2 1; 1 2] in each of the three translations, 6×6 [kg]; length [m]. */
 export function barConsistentMass(properties: BeamProperties, length: number): Float64Array {
   const sixth = ((properties.rho * properties.A + properties.massPerLength) * length) / 6;

@@ -31,11 +31,6 @@ export function bendingInertia({ Iy, Iz, Iyz }: BeamProperties): PlaneTensor {
   return { vv: Iz, vw: Iyz, ww: Iy };
 }
 
-/** ½ xᵀ T x without the half: v, w any unit. */
-export function quadratic({ vv, vw, ww }: PlaneTensor, v: number, w: number): number {
-  return vv * v * v + 2 * vw * v * w + ww * w * w;
-}
-
 /** T⁻¹; T positive definite. */
 export function inverse({ vv, vw, ww }: PlaneTensor): PlaneTensor {
   const determinant = vv * ww - vw * vw;

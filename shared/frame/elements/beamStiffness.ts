@@ -1,4 +1,4 @@
-import { bendingInertia, inverse, quadratic } from './beamProperties.ts';
+import { bendingInertia, inverse } from './beamProperties.ts';
 import type { BeamProperties, PlaneTensor } from './beamProperties.ts';
 
 /** What resists each of a beam's six deformations; see `beamDeformations`. */
@@ -60,17 +60,6 @@ export function beamDeformations(d: Float64Array, length: number, g: Float64Arra
   g[3] = d[4]! - d[10]!;
   g[4] = 0.5 * (d[5]! + d[11]!) - (d[7]! - d[1]!) / length;
   g[5] = -0.5 * (d[4]! + d[10]!) - (d[8]! - d[2]!) / length;
-}
-
-/** Strain energy U = ½ gᵀ diag(axial, torsion, bending, sway) g [J] of deformations g. */
-export function beamStrainEnergy(rigidity: BeamRigidity, g: Float64Array): number {
-  return (
-    0.5 *
-    (rigidity.axial * g[0]! * g[0]! +
-      rigidity.torsion * g[1]! * g[1]! +
-      quadratic(rigidity.bending, g[2]!, g[3]!) +
-      quadratic(rigidity.sway, g[4]!, g[5]!))
-  );
 }
 
 /** Rows of g = G d: 6×12, row by row; `length` [m]. */

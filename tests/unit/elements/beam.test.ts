@@ -5,7 +5,6 @@ import {
   beamDeformations,
   beamRigidity,
   beamStiffness,
-  beamStrainEnergy,
 } from '#shared/frame/elements/beamStiffness.ts';
 
 const L = 1.7;
@@ -61,7 +60,7 @@ describe('beam element', () => {
       const g = new Float64Array(6);
       for (const d of RIGID) {
         beamDeformations(d, L, g);
-        expect(beamStrainEnergy(rigidity, g)).toBeLessThan(1e-30 * largest);
+        expect(Math.max(...g.map(Math.abs))).toBeLessThan(1e-15);
         for (let i = 0; i < 12; i++) {
           const force = k
             .subarray(i * 12, i * 12 + 12)
