@@ -114,7 +114,7 @@ describe('frames, mesh-free', () => {
   });
 
   it('two double modes 0.6 % apart, above which the first estimates err by as much', () => {
-    // Refined one by one, both pairs end at the upper one, and the count alone is none the wiser.
+    // Refined one by one, both pairs can end at the upper one, and then the count alone is none the wiser.
     const rack = (divisions: number) =>
       aRack({ bays: 2, storeys: 3, bay: 1.1, storey: 0.9, divisions });
     const exact = hertz(rack(1), 14);
