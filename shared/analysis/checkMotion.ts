@@ -6,6 +6,12 @@ import { rigidMotions } from '../frame/freedoms/rigidMotions.ts';
 import { massProperties } from './massProperties.ts';
 import type { MassProperties } from './massProperties.ts';
 
+/**
+ * A frame none of whose pivots is smaller, over its diagonal, resists every motion: a mechanism leaves a pivot
+ * of rounding, some 1e-14. Below it the motions themselves are looked for.
+ */
+export const CERTAIN_PIVOT = 1e-9;
+
 /** Mass and centre of a model. Throws AppError `unsolvable` where there is no mass. */
 export function massOrRefuse(model: FrameModel): MassProperties {
   const properties = massProperties(model);

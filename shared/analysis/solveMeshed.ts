@@ -14,7 +14,7 @@ import type { FrameDocument } from '../schemas/frameDocument.ts';
 import { DEFAULT_SOLVE_SETTINGS } from '../schemas/solveResult.ts';
 import type { SolveSettings } from '../schemas/solveResult.ts';
 import { attainableMass } from './attainableMass.ts';
-import { massOrRefuse, refuseMechanismsOf } from './checkMotion.ts';
+import { CERTAIN_PIVOT, massOrRefuse, refuseMechanismsOf } from './checkMotion.ts';
 import { chainInertia } from './massProperties.ts';
 import { FrameEnergies } from './modeEnergies.ts';
 import { shapesAtPoints } from './shapesAtPoints.ts';
@@ -24,11 +24,6 @@ import { meshedDetails, summariseModes } from './summariseModes.ts';
 
 /** Seed of the eigen solver's start vectors: the same document gives the same bits. */
 const SEED = 20_001;
-/**
- * A frame none of whose pivots is smaller, over its diagonal, resists every motion: a mechanism leaves a pivot
- * of rounding, some 1e-14. Below it the motions themselves are looked for.
- */
-const CERTAIN_PIVOT = 1e-9;
 
 /**
  * Solves K φ = λ M φ of a frame divided into elements; `document` with its operating state applied.

@@ -1,4 +1,5 @@
 import { AppError } from '../../errors/AppError.ts';
+import { CERTAIN_PIVOT } from '../checkMotion.ts';
 import type { FrameModel } from '../../frame/assembly/FrameModel.ts';
 import type { DynamicElement } from '../../frame/elements/DynamicElement.ts';
 import { barConsistentMass } from '../../frame/elements/bar.ts';
@@ -20,9 +21,6 @@ import type { MemberPiece } from './memberPieces.ts';
  * leaves a pivot of rounding on either side of it.
  */
 const NUDGES = [0, 1e-11, 4e-11, 1.6e-10, 6.4e-10, 2.5e-9, 1e-8] as const;
-
-/** A frame none of whose pivots is smaller, over its diagonal, resists every motion: see `solveMeshed`. */
-const CERTAIN_PIVOT = 1e-9;
 
 /** The dynamic stiffness at one frequency, factored, and what it counts. */
 export interface Evaluation {
