@@ -69,15 +69,17 @@ export class ModeSet {
     const { kernels } = arena;
     const w = this.next;
     const image = this.images + this.count * this.stride;
-    this.#pencil.multiplyMass(w, image);
-    const before = Math.sqrt(Math.max(kernels.dot(size, w, image), 0));
+    let taken = 0;
     for (let pass = 0; pass < 2 && this.count > 0; pass++) {
       const c = this.#coefficients;
       kernels.dots(size, this.images, this.stride, this.count, w, c);
       kernels.subtractCombination(size, this.vectors, this.stride, this.count, c, w);
+      for (const product of arena.view(c, this.count)) taken += product * product;
     }
-    if (this.count > 0) this.#pencil.multiplyMass(w, image);
+    this.#pencil.multiplyMass(w, image);
     const norm = Math.sqrt(Math.max(kernels.dot(size, w, image), 0));
+    // Pythagoras gives the norm before.
+    const before = Math.sqrt(norm * norm + taken);
     if (!(norm > COPY_TOL * before)) return 0;
     kernels.multiply(size, 1 / norm, w);
     kernels.multiply(size, 1 / norm, image);
