@@ -56,6 +56,8 @@ export async function workOn<Q extends QueueName>(
     { batchSize: 1, pollingIntervalSeconds: POLLING_SECONDS },
     async (jobs) => {
       for (const job of jobs) await work(job.data);
+      // What waits behind it does not wait for the next look too.
+      nudge(queue);
     },
   );
   workers.set(queue, id);
