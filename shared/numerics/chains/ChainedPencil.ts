@@ -2,50 +2,25 @@ import { addDiagonal, addEntries } from '../factor/factorise.ts';
 import { Elimination, PIVOT_TOL } from '../factor/Elimination.ts';
 import { ZeroPivotError } from '../factor/ZeroPivotError.ts';
 import type { Arena } from '../kernels/Arena.ts';
-import type { SymmetricCsc } from '../sparse/SymmetricCsc.ts';
-import { entriesOf, type ChainAnalysis } from './analyseChains.ts';
-import { orderOf, type ChainClass, type ChainedPair } from './ChainedPair.ts';
+import type { ChainAnalysis } from './analyseChains.ts';
+import { orderOf, type ChainedPair } from './ChainedPair.ts';
+import { packTiles, writeTiles } from './ChainMatrix.ts';
+import { chainPrograms, type ChainPrograms } from './chainPrograms.ts';
+import { combined, condense } from './condense.ts';
 import {
-  blockRanges,
-  packChainMatrix,
-  packTiles,
-  tiledSize,
-  writeTiles,
-  type BlockRange,
-  type ChainMatrix,
-} from './ChainMatrix.ts';
-import { condense } from './condense.ts';
-import { inMemory, inX, inY, Program } from './Program.ts';
+  placeClass,
+  placeSparse,
+  type FactoredBlock,
+  type PlacedClass,
+  type PlacedSparse,
+} from './PlacedClass.ts';
+import { inMemory, inX, Program } from './Program.ts';
 
-/** Chains worked on together: what they need fits into the first cache. */
-const BATCH = 512;
 /**
  * A pivot inside a chain below this share of its diagonal is one of its own frequencies with the ends
  * held: its inverse would then lose that many digits, so another shift is taken.
  */
 const INNER_PIVOT_TOL = 1e-10;
-
-/** What of a class lies in the arena. */
-interface Placed {
-  readonly chainClass: ChainClass;
-  readonly count: number;
-  /** First unknown of its first chain. */
-  readonly first: number;
-  readonly table: number;
-  readonly K: ChainMatrix;
-  readonly M: ChainMatrix;
-  readonly blocks: readonly FactoredBlock[];
-  readonly S: number;
-  readonly magnitude: number;
-}
-
-/** Where one block of a class, its inner unknowns eliminated, is kept. */
-interface FactoredBlock extends BlockRange {
-  readonly inverse: number;
-  /** −W and its transpose. */
-  readonly minusW: number;
-  readonly minusWT: number;
-}
 
 /** Rows over chains' unknowns as `placeRows` put them down. */
 export interface PlacedRows {
@@ -67,12 +42,6 @@ export interface ChainBatch {
   readonly ends: Float64Array;
 }
 
-interface PlacedSparse {
-  readonly colPtr: number;
-  readonly rowIdx: number;
-  readonly values: number;
-}
-
 /**
  * K, M and (K − σM)⁻¹ of a chained pair as operators on vectors in an arena, and the inertia of K − σM.
  * Vectors are `size` numbers: those of the unknowns, then zeros up to a multiple of four.
@@ -82,28 +51,21 @@ export class ChainedPencil {
   readonly n: number;
   readonly size: number;
   readonly pair: ChainedPair;
-  readonly analysis: ChainAnalysis;
   /** Where K − σM was factored last; NaN before. */
   sigma = NaN;
   negativePivots = 0;
-  readonly #classes: readonly Placed[];
+  readonly #classes: readonly PlacedClass[];
   readonly #K: PlacedSparse;
   readonly #M: PlacedSparse;
   readonly #elimination: Elimination;
-  readonly #ends: number;
   readonly #work: number;
-  /** Joints' right-hand side from the inner ones; inner unknowns with the ends held; their part of the ends. */
-  readonly #reduce: Program;
-  readonly #held: Program;
-  readonly #follow: Program;
-  readonly #products: { readonly K: Program; readonly M: Program };
+  readonly #programs: ChainPrograms;
   readonly #diagonals: { K?: Float64Array; M?: Float64Array } = {};
   #smallestInnerPivot = Infinity;
 
   constructor(arena: Arena, pair: ChainedPair, analysis: ChainAnalysis) {
     this.arena = arena;
     this.pair = pair;
-    this.analysis = analysis;
     this.n = orderOf(pair);
     this.size = (this.n + 3) & ~3;
     this.#K = placeSparse(arena, pair.K);
@@ -115,13 +77,8 @@ export class ChainedPencil {
       return placed;
     });
     this.#elimination = new Elimination(analysis.symbolic, arena);
-    const widest = pair.classes.reduce((most, { ends }) => Math.max(most, ends), 0);
-    this.#ends = arena.numbers(2 * BATCH * widest);
-    this.#work = arena.numbers(widest);
-    this.#reduce = this.#reduceProgram();
-    this.#held = this.#heldProgram();
-    this.#follow = this.#followProgram();
-    this.#products = { K: this.#productProgram('K'), M: this.#productProgram('M') };
+    this.#work = arena.numbers(pair.classes.reduce((most, { ends }) => Math.max(most, ends), 0));
+    this.#programs = chainPrograms(arena, this.#classes);
   }
 
   /** Address of a vector of zeros. */
@@ -187,7 +144,7 @@ export class ChainedPencil {
 
   /** Eliminates the inner unknowns of one block. Returns the negative pivots of one chain. */
   #condense(
-    { chainClass, S, magnitude }: Placed,
+    { chainClass, S, magnitude }: PlacedClass,
     block: FactoredBlock,
     given: { A: Float64Array; magnitude: Float64Array },
   ): number {
@@ -227,7 +184,7 @@ export class ChainedPencil {
     const { joints } = this.pair;
     const x = this.vector();
     this.arena.view(x, joints).set(error.motion);
-    this.#follow.run(x, x);
+    this.#programs.follow.run(x, x);
     const motion = this.arena.view(x, this.n).slice();
     const largest = motion.reduce((most, value) => Math.max(most, Math.abs(value)), 0);
     const { unknown, sigma, relativePivot } = error;
@@ -249,10 +206,10 @@ export class ChainedPencil {
     const { f64 } = this.arena;
     f64.copyWithin(y / 8, x / 8, x / 8 + this.pair.joints);
     f64.fill(0, y / 8 + this.n, y / 8 + this.size);
-    this.#reduce.run(x, y);
+    this.#programs.reduce.run(x, y);
     this.#elimination.solve(y, y);
-    this.#held.run(x, y);
-    this.#follow.run(y, y);
+    this.#programs.held.run(x, y);
+    this.#programs.follow.run(y, y);
   }
 
   /** y ← M x, two different vectors. */
@@ -276,96 +233,7 @@ export class ChainedPencil {
     f64.fill(0, y / 8, y / 8 + joints);
     f64.fill(0, y / 8 + this.n, y / 8 + this.size);
     kernels.multiplySparse(joints, colPtr, rowIdx, values, x, y);
-    this.#products[which].run(x, y);
-  }
-
-  /** y_joints −= Tᵀ Wᵀ x_inner. */
-  #reduceProgram(): Program {
-    const program = new Program(this.arena);
-    this.#inBatches(({ chainClass: { inner, ends }, blocks, first, table }, from, count) => {
-      if (inner === 0) return;
-      const F = 8 * (first + from * inner);
-      const B = this.#ends;
-      for (const { inner: inputs, ends: outputs, innerFrom, endsFrom, minusWT } of blocks) {
-        program.multiply(
-          count,
-          minusWT,
-          { inputs, outputs },
-          [inX(F + 8 * innerFrom), inner],
-          [inMemory(B + 8 * endsFrom), ends],
-          false,
-        );
-      }
-      program.scatter(count, table + 24 * from, ends, inMemory(B), inY(0));
-    });
-    return program.place();
-  }
-
-  /** y_inner = (K − σM)_ii⁻¹ x_inner. */
-  #heldProgram(): Program {
-    const program = new Program(this.arena);
-    this.#inBatches(({ chainClass: { inner }, blocks, first }, from, count) => {
-      for (const { inner: size, innerFrom, inverse } of blocks) {
-        const at = 8 * (first + from * inner + innerFrom);
-        const sizes = { inputs: size, outputs: size };
-        program.multiply(count, inverse, sizes, [inX(at), inner], [inY(at), inner], false);
-      }
-    });
-    return program.place();
-  }
-
-  /** y_inner −= W T x_joints. */
-  #followProgram(): Program {
-    const program = new Program(this.arena);
-    this.#inBatches(({ chainClass: { inner, ends }, blocks, first, table }, from, count) => {
-      if (inner === 0) return;
-      const B = this.#ends;
-      program.gather(count, table + 24 * from, ends, inX(0), inMemory(B));
-      const Y = 8 * (first + from * inner);
-      for (const { inner: outputs, ends: inputs, innerFrom, endsFrom, minusW } of blocks) {
-        program.multiply(
-          count,
-          minusW,
-          { inputs, outputs },
-          [inMemory(B + 8 * endsFrom), ends],
-          [inY(Y + 8 * innerFrom), inner],
-          true,
-        );
-      }
-    });
-    return program.place();
-  }
-
-  /** y += K x or M x, the chains' part. */
-  #productProgram(which: 'K' | 'M'): Program {
-    const program = new Program(this.arena);
-    this.#inBatches((placed, from, count) => {
-      const { inner, ends } = placed.chainClass;
-      const matrix = placed[which];
-      const table = placed.table + 24 * from;
-      const at = 8 * (placed.first + from * inner);
-      const B = this.#ends;
-      const C = B + 8 * BATCH * ends;
-      program.gather(count, table, ends, inX(0), inMemory(B));
-      if (matrix.kind === 'diagonal') {
-        program.diagonal(count, inner, matrix.inner, inX(at), inY(at));
-        program.diagonal(count, ends, matrix.ends, inMemory(B), inMemory(C));
-      } else {
-        for (const block of matrix.blocks) {
-          const { inner: m, ends: e, innerFrom: i, endsFrom: o } = block;
-          const x = [inX(at + 8 * i), inner] as const;
-          const y = [inY(at + 8 * i), inner] as const;
-          const b = [inMemory(B + 8 * o), ends] as const;
-          const c = [inMemory(C + 8 * o), ends] as const;
-          program.multiply(count, block.endsEnds, { inputs: e, outputs: e }, b, c, false);
-          program.multiply(count, block.endsInner, { inputs: m, outputs: e }, x, c, true);
-          program.multiply(count, block.innerInner, { inputs: m, outputs: m }, x, y, false);
-          program.multiply(count, block.innerEnds, { inputs: e, outputs: m }, b, y, true);
-        }
-      }
-      program.scatter(count, table, ends, inMemory(C), inY(0));
-    });
-    return program.place();
+    this.#programs[which].run(x, y);
   }
 
   /**
@@ -462,114 +330,4 @@ export class ChainedPencil {
     kernels.scatterEnds(count, table, ends, B, y);
     arena.rewind(used);
   }
-
-  #inBatches(use: (placed: Placed, from: number, count: number) => void): void {
-    for (const placed of this.#classes) {
-      for (let from = 0; from < placed.count; from += BATCH) {
-        use(placed, from, Math.min(BATCH, placed.count - from));
-      }
-    }
-  }
-}
-
-/**
- * kK + mM + δ diag(M) of one block of a chain, inner unknowns first; 1 on the diagonal of inner unknowns without
- * mass where δ is given.
- */
-function combined(
-  { inner, ends, K, M }: ChainClass,
-  block: BlockRange,
-  k: number,
-  m: number,
-  delta: number,
-): { A: Float64Array; magnitude: Float64Array } {
-  const n = inner + ends;
-  const size = block.inner + block.ends;
-  const A = new Float64Array(size * size);
-  const magnitude = new Float64Array(size);
-  const place = (i: number) =>
-    i < block.inner ? block.innerFrom + i : inner + block.endsFrom + i - block.inner;
-  for (let i = 0; i < size; i++) {
-    const row = place(i) * n;
-    for (let j = 0; j < size; j++) {
-      const at = row + place(j);
-      A[i * size + j] = k * K[at]! + m * M[at]!;
-    }
-    const diagonal = row + place(i);
-    const mass = M[diagonal]!;
-    magnitude[i] = Math.abs(k * K[diagonal]!) + Math.abs(m * mass);
-    // At the ends it is added to the joints, in whose axes the sum is regular.
-    if (delta === 0 || i >= block.inner) continue;
-    A[i * size + i]! += mass === 0 ? 1 : delta * mass;
-    if (mass === 0) magnitude[i] = 1;
-  }
-  return { A, magnitude };
-}
-
-function placeSparse(arena: Arena, { colPtr, rowIdx, values }: SymmetricCsc): PlacedSparse {
-  return {
-    colPtr: arena.placeIndices(colPtr),
-    rowIdx: arena.placeIndices(rowIdx),
-    values: arena.place(values),
-  };
-}
-
-function placeClass(
-  arena: Arena,
-  chainClass: ChainClass,
-  first: number,
-  destinations: Int32Array,
-): Placed {
-  const { ends, chains } = chainClass;
-  let widths = 0;
-  let nonZero = 0;
-  for (const { dofs, T } of chains) {
-    widths += dofs.length;
-    for (const value of T) if (value !== 0) nonZero += 1;
-  }
-  const table = arena.indices(6 * chains.length);
-  const entries = arena.numbers(2 * nonZero);
-  const dense = arena.numbers(widths * ends);
-  const placesAt = arena.placeIndices(destinations);
-  const { i32, f64 } = arena;
-  let entry = entries;
-  let column = dense / 8;
-  let destination = placesAt;
-  chains.forEach(({ dofs, T }, m) => {
-    const row = table / 4 + 6 * m;
-    i32[row + 1] = entry;
-    i32[row + 2] = dofs.length;
-    i32[row + 3] = 8 * column;
-    i32[row + 4] = destination;
-    i32[row + 5] = 0;
-    for (let j = 0; j < dofs.length; j++) {
-      for (let e = 0; e < ends; e++, column++) {
-        const value = T[j * ends + e]!;
-        f64[column] = value;
-        if (value === 0) continue;
-        f64[entry / 8] = value;
-        i32[entry / 4 + 2] = 8 * dofs[j]!;
-        i32[entry / 4 + 3] = 8 * e;
-        entry += 16;
-      }
-    }
-    i32[row] = (entry - i32[row + 1]!) / 16;
-    destination += 4 * entriesOf(dofs.length);
-  });
-  return {
-    chainClass,
-    count: chains.length,
-    first,
-    table,
-    K: packChainMatrix(arena, chainClass, 'K'),
-    M: packChainMatrix(arena, chainClass, 'M'),
-    blocks: blockRanges(chainClass).map((block) => ({
-      ...block,
-      inverse: arena.numbers(tiledSize(block.inner, block.inner)),
-      minusW: arena.numbers(tiledSize(block.inner, block.ends)),
-      minusWT: arena.numbers(tiledSize(block.ends, block.inner)),
-    })),
-    S: arena.numbers(ends * ends),
-    magnitude: arena.numbers(ends),
-  };
 }

@@ -1,3 +1,6 @@
+import type { ChainClass } from './ChainedPair.ts';
+import type { BlockRange } from './ChainMatrix.ts';
+
 /** A class of chains at one shift with its inner unknowns eliminated. */
 export interface Condensed {
   /** inner²: (K − σM)_ii⁻¹, row by row. */
@@ -83,4 +86,38 @@ export function condense(
     }
   }
   return { inverse, W, S, negative, smallestPivot };
+}
+
+/**
+ * kK + mM + δ diag(M) of one block of a chain, inner unknowns first; 1 on the diagonal of inner unknowns without
+ * mass where δ is given.
+ */
+export function combined(
+  { inner, ends, K, M }: ChainClass,
+  block: BlockRange,
+  k: number,
+  m: number,
+  delta: number,
+): { A: Float64Array; magnitude: Float64Array } {
+  const n = inner + ends;
+  const size = block.inner + block.ends;
+  const A = new Float64Array(size * size);
+  const magnitude = new Float64Array(size);
+  const place = (i: number) =>
+    i < block.inner ? block.innerFrom + i : inner + block.endsFrom + i - block.inner;
+  for (let i = 0; i < size; i++) {
+    const row = place(i) * n;
+    for (let j = 0; j < size; j++) {
+      const at = row + place(j);
+      A[i * size + j] = k * K[at]! + m * M[at]!;
+    }
+    const diagonal = row + place(i);
+    const mass = M[diagonal]!;
+    magnitude[i] = Math.abs(k * K[diagonal]!) + Math.abs(m * mass);
+    // At the ends it is added to the joints, in whose axes the sum is regular.
+    if (delta === 0 || i >= block.inner) continue;
+    A[i * size + i]! += mass === 0 ? 1 : delta * mass;
+    if (mass === 0) magnitude[i] = 1;
+  }
+  return { A, magnitude };
 }

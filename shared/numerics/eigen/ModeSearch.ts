@@ -12,13 +12,13 @@ import { shiftBelow } from './shiftBelow.ts';
  * square over the gap, that of the shape falls by a further factor in the purification step.
  */
 const CONVERGED_TOL = 1e-10;
+/** The same for the neighbour beyond the wanted ones, which only places the gap (CLEAR_GAP). */
+const NEIGHBOUR_TOL = 1e-4;
 /**
  * From this residual on, relative to θ, a shape is sent through A once more by a solve: it shrinks the higher
  * modes in it. Where M is singular all are: what recurrence lets in of its null space is more than rounding.
  */
 const PURE_TOL = 1e-13;
-/** The same for the neighbour beyond the wanted ones, which only places the gap (CLEAR_GAP). */
-const NEIGHBOUR_TOL = 1e-4;
 /** Dimension of one Krylov space: room for the wanted and their convergence, memory for the rest. */
 const LEAST_DIMENSION = 100;
 const MOST_DIMENSION = 1000;
@@ -27,6 +27,8 @@ const MOST_EXTRA = 24;
 /** Runs of the search and of the recovery; each that finds nothing makes the next one larger. */
 const MOST_RUNS = 60;
 const MOST_BARREN_RUNS = 3;
+/** Numbers of each vector that Ritz vectors are summed over at a time: the basis' share of them fills a cache. */
+const STRETCH = 512;
 /** Where in a clear gap the shift is tried, should a pivot vanish by accident. */
 const GAP_SHARES = [0.5, 0.4, 0.6, 0.3];
 
@@ -179,7 +181,6 @@ export class ModeSearch {
   #run(missing: number, barren: number, isEnough: IsEnough, limit: number): number {
     this.toWorkingShift();
     const { arena } = this.#pencil;
-    const used = arena.used;
     const begin = this.#clock();
     const settings = {
       firstCheck: 2 * missing + 8,
@@ -204,7 +205,7 @@ export class ModeSearch {
       this.stopped = pairs.stopped;
       count = this.#keep(pairs, missing, limit);
     }
-    arena.rewind(kept > used ? kept : used);
+    arena.rewind(kept);
     return count;
   }
 
@@ -252,7 +253,6 @@ export class ModeSearch {
       arena.place(pairs.coordinates(index).map((value) => -value)),
     );
     arena.view(address, wanted.length * size).fill(0);
-    // By stretches that the basis fills a cache with, all vectors from each.
     for (let from = 0; from < size; from += STRETCH) {
       const length = Math.min(STRETCH, size - from);
       coefficients.forEach((c, i) => {
@@ -279,8 +279,6 @@ export class ModeSearch {
     this.#options.onProgress?.(fraction);
   }
 }
-
-const STRETCH = 512;
 
 /** Number of leading pairs that have converged. */
 function convergedPairs(theta: Float64Array, residual: Float64Array): number {
