@@ -58,7 +58,7 @@ function refinementTable(refinement: Refinement): string {
     '',
     agreement.divisions === null
       ? `Consistent and lumped mass agree within ${percent} % at none of these.`
-      : `Consistent and lumped mass agree within ${percent} % from ${agreement.divisions} elements of each beam: ` +
+      : `Consistent and lumped mass agree within ${percent} % from ${agreement.divisions} ${agreement.divisions === 1 ? 'element' : 'elements'} of each beam: ` +
         'the mesh is fine enough. Theory, joints and supports may move the frequencies more than that.',
     ...(complete ? [] : ['INCOMPLETE: not every solve could be certified.']),
     ...warnings.map(({ path, message }) => `Warning: ${path === '' ? '' : `${path}: `}${message}`),
