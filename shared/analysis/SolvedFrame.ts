@@ -16,7 +16,7 @@ export interface SolveProgress {
 /** What every method hands back; `timing` without `read` and `total`. */
 export interface SolvedFrame extends Pick<
   SolveSummary,
-  'count' | 'complete' | 'modes' | 'effectiveMass'
+  'count' | 'complete' | 'modes' | 'effectiveMass' | 'handChecks'
 > {
   readonly model: FrameModel;
   readonly rigidBodyModes: number;

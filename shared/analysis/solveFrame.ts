@@ -80,6 +80,7 @@ export function solveFrame(
       complete: solved.complete,
       modes: solved.modes,
       effectiveMass: solved.effectiveMass,
+      ...(solved.handChecks && { handChecks: solved.handChecks }),
       warnings: [...(hooks.warnings ?? []), ...solved.warnings],
       timing: { ...solved.timing, read: 0, total: ended - began },
     },

@@ -15,6 +15,8 @@ import { DEFAULT_SOLVE_SETTINGS } from '../schemas/solveResult.ts';
 import type { SolveSettings } from '../schemas/solveResult.ts';
 import { attainableMass } from './attainableMass.ts';
 import { CERTAIN_PIVOT, massOrRefuse, refuseMechanismsOf } from './checkMotion.ts';
+import { matchHandChecks, staticChecks } from './handChecks.ts';
+import type { StaticChecks } from './handChecks.ts';
 import { chainInertia } from './massProperties.ts';
 import { FrameEnergies } from './modeEnergies.ts';
 import { shapesAtPoints } from './shapesAtPoints.ts';
@@ -67,6 +69,8 @@ function solveIn(
   const moved = clock();
   const resists = rigid.length === 0 && resistsEveryMotion(pencil);
   const factored = clock();
+  const inertia = chainInertia(model, pencil, centre);
+  const checks = resists ? staticChecks(model, pencil, inertia.forces) : noChecks(rigid.length);
   if (!resists) {
     progress(0.05, 'looking for mechanisms');
     refuseMechanismsOf(model);
@@ -94,7 +98,6 @@ function solveIn(
     pencil,
     found.addresses.map(({ vector }) => vector),
   );
-  const inertia = chainInertia(model, pencil, centre);
   const details = meshedDetails(pencil, energies, found, inertia.forces);
   const attainable = shared.attainableFor(pair) ?? attainableMass(pencil, inertia.forces);
   shared.keep(pair, analysis, attainable);
@@ -114,6 +117,7 @@ function solveIn(
     totalMass,
     centre,
     shapes,
+    handChecks: matchHandChecks(checks, summary),
     count: countCheck(found),
     complete: found.complete && found.status === 'complete',
     warnings: [],
@@ -128,6 +132,13 @@ function solveIn(
     },
   };
 }
+
+const noChecks = (rigidBodyModes: number): StaticChecks => ({
+  none:
+    rigidBodyModes > 0
+      ? 'A hand check needs a frame that is held: this one, or a part of it, can move as a whole, so it does not sag.'
+      : 'A support or joint is so soft that what the frame sags under its own weight is lost in rounding.',
+});
 
 /** Whether K is certainly regular; leaves the pencil factored at 0 if so. */
 function resistsEveryMotion(pencil: ChainedPencil): boolean {

@@ -73,6 +73,33 @@ export const modeSummary = z.object({
 });
 export type ModeSummary = z.infer<typeof modeSummary>;
 
+/** What a person can work out by hand for one axis, held against the mode with the most effective mass along it. */
+export const handCheck = z.object({
+  axis: z.enum(['X', 'Y', 'Z']),
+  /** Number of that mode; null where no mode found moves along the axis. */
+  mode: z.int().nullable(),
+  /** Its share of the effective mass that all modes reach along the axis, 0…1. */
+  share: z.number(),
+  /** Largest deflection along the axis under 1 g: at nodes and stations, and with the masses' centres [m]. */
+  deflectionAtNodes: z.number(),
+  deflectionAtMasses: z.number(),
+  /** √(g/δ)/2π of each [Hz]; reads low where the mass is spread. */
+  fromDeflectionAtNodes: z.number(),
+  fromDeflectionAtMasses: z.number(),
+  /** The lowest frequency is never above it [Hz]. */
+  rayleigh: z.number(),
+  /** From below, as if the masses moved along this axis only [Hz]; null for a frame with very many masses. */
+  dunkerley: z.number().nullable(),
+});
+export type HandCheck = z.infer<typeof handCheck>;
+
+export const handChecks = z.object({
+  /** Why there is none, in words. */
+  none: z.string().nullable(),
+  axes: z.array(handCheck),
+});
+export type HandChecks = z.infer<typeof handChecks>;
+
 export const solveSummary = z.object({
   method,
   stateId: z.string().nullable(),
@@ -96,6 +123,8 @@ export const solveSummary = z.object({
     /** Mass standing on fixed supports, which no mode moves [kg] by direction X, Y, Z. */
     onFixed: z.tuple([z.number(), z.number(), z.number()]),
   }),
+  /** Absent in mesh-free results and in those stored before there were hand checks. */
+  handChecks: handChecks.optional(),
   warnings: z.array(modelWarning),
   timing: z.object({
     read: z.number(),
