@@ -10,6 +10,11 @@ import type { Six } from './massProperties.ts';
 export class SharedWork {
   #last: { pair: ChainedPair; analysis: ChainAnalysis; attainable: Six } | undefined;
 
+  /** Of the last solve. */
+  get topology(): { readonly pair: ChainedPair; readonly analysis: ChainAnalysis } | undefined {
+    return this.#last && { pair: this.#last.pair, analysis: this.#last.analysis };
+  }
+
   analysisFor(pair: ChainedPair): ChainAnalysis | undefined {
     return this.#last && sameTopology(this.#last.pair, pair) ? this.#last.analysis : undefined;
   }

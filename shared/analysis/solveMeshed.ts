@@ -24,6 +24,11 @@ import type { SharedWork } from './SharedWork.ts';
 import type { SolvedFrame, SolveProgress } from './SolvedFrame.ts';
 import { meshedDetails, summariseModes } from './summariseModes.ts';
 
+export interface MeshedFrame extends SolvedFrame {
+  /** Per mode its shape over the model's unknowns, φᵀMφ = 1. */
+  readonly phi: readonly Float64Array[];
+}
+
 /** Seed of the eigen solver's start vectors: the same document gives the same bits. */
 const SEED = 20_001;
 
@@ -37,7 +42,7 @@ export function solveMeshed(
   settings: SolveSettings,
   progress: SolveProgress,
   shared: SharedWork,
-): SolvedFrame {
+): MeshedFrame {
   return withArena((arena) => solveIn(arena, document, massKind, settings, progress, shared));
 }
 
@@ -48,7 +53,7 @@ function solveIn(
   settings: SolveSettings,
   { clock, progress, shouldStop, stopIfAsked }: SolveProgress,
   shared: SharedWork,
-): SolvedFrame {
+): MeshedFrame {
   const began = clock();
   const model = buildModel(document, {
     massKind,
@@ -113,6 +118,7 @@ function solveIn(
   return {
     ...summary,
     model,
+    phi: found.phi,
     rigidBodyModes: rigid.length,
     totalMass,
     centre,

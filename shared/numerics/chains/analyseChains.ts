@@ -4,10 +4,12 @@ import type { SymbolicFactor } from '../factor/SymbolicFactor.ts';
 import type { CompressedGraph } from '../ordering/compressGraph.ts';
 import { graphOfEdges } from '../sparse/adjacencyGraph.ts';
 import type { ChainedPair } from './ChainedPair.ts';
+import { sameNumbers } from './compare.ts';
 
 /** What is known of a chained pair from its topology alone: it serves every pair of that topology. */
 export interface ChainAnalysis {
-  /** Of the joint unknowns, once the chains are eliminated. */
+  /** Which blocks of joint unknowns meet, once the chains are eliminated. */
+  readonly graph: CompressedGraph;
   readonly symbolic: SymbolicFactor;
   /**
    * Per class, chain after chain: where Tᵀ S T goes. Column by column the indices in L of the entries
@@ -19,9 +21,14 @@ export interface ChainAnalysis {
 /**
  * Analysis of K − σM with its chains eliminated: they join the blocks at their ends.
  *   clock  milliseconds, for the timing kept in the result
+ *   known  of an earlier pair; its ordering and symbolic factor are taken over where the joints hang together alike
  * Throws AppError `memory-limit` when L would not fit into the memory there is.
  */
-export function analyseChains(pair: ChainedPair, clock: () => number = () => 0): ChainAnalysis {
+export function analyseChains(
+  pair: ChainedPair,
+  clock: () => number = () => 0,
+  known?: ChainAnalysis,
+): ChainAnalysis {
   const begin = clock();
   const { joints, K, M, classes, blockOf } = pair;
   let blocks = 0;
@@ -62,7 +69,8 @@ export function analyseChains(pair: ChainedPair, clock: () => number = () => 0):
     memberPtr,
     member,
   };
-  const symbolic = analyseGraph(graph, clock, begin);
+  const symbolic =
+    known && sameGraph(known.graph, graph) ? known.symbolic : analyseGraph(graph, clock, begin);
   const placed = clock();
   const { place } = symbolic;
   const entries = new EntryPlaces(symbolic);
@@ -85,7 +93,22 @@ export function analyseChains(pair: ChainedPair, clock: () => number = () => 0):
     order: symbolic.timing.order,
     symbolic: symbolic.timing.symbolic + clock() - placed,
   };
-  return { symbolic: { ...symbolic, timing }, destinations };
+  return {
+    graph,
+    symbolic: symbolic === known?.symbolic ? symbolic : { ...symbolic, timing },
+    destinations,
+  };
+}
+
+/** Whether the same blocks of the same unknowns meet. */
+function sameGraph(a: CompressedGraph, b: CompressedGraph): boolean {
+  const { member, memberPtr, ptr, adjacent } = b;
+  return (
+    sameNumbers(a.memberPtr, memberPtr) &&
+    sameNumbers(a.member, member) &&
+    sameNumbers(a.ptr, ptr) &&
+    sameNumbers(a.adjacent, adjacent)
+  );
 }
 
 /** Destinations of one chain with so many unknowns. */
