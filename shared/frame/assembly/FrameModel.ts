@@ -1,4 +1,4 @@
-import type { FrameDocument, Member, Vector3 } from '../../schemas/frameDocument.ts';
+import type { Displacement, FrameDocument, Member, Vector3 } from '../../schemas/frameDocument.ts';
 import type { BeamProperties } from '../elements/beamProperties.ts';
 import type { BeamRigidity } from '../elements/beamStiffness.ts';
 import type { Combination } from '../freedoms/Combination.ts';
@@ -81,6 +81,8 @@ export interface Tie {
   readonly owner: 'joint' | 'support' | 'spring';
   /** Member and end of a joint, node of a support, id of a spring. */
   readonly id: string;
+  /** Along the joint's, support's or spring's own axes. */
+  readonly along: Displacement;
   /** One row: how far it is stretched [m] or turned [rad]. */
   readonly motion: Combination;
   /** [N/m] or [N·m/rad] */

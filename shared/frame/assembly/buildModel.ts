@@ -148,7 +148,8 @@ function useEnd(
   });
 }
 
-function supportAxes({ axes }: Support): [Vector3, Vector3, Vector3] {
+/** Axes of a support in global components: z is made perpendicular to x. */
+export function supportAxes({ axes }: Support): [Vector3, Vector3, Vector3] {
   if (!axes) return [...GLOBAL_AXES];
   const x = normalise(axes.x);
   const z = normalise(subtract(axes.z, scale(x, dot(axes.z, x))));
@@ -173,6 +174,7 @@ function supportTies(
         drafts.push({
           owner: 'support',
           id: support.node,
+          along: name,
           sum: [{ displacement, factor: 1 }],
           stiffness,
           turns: isRotation(i),
@@ -197,6 +199,7 @@ function springTies(document: FrameDocument, carriers: Carriers): TieDraft[] {
       return {
         owner: 'spring' as const,
         id: spring.id,
+        along: name,
         sum: [
           { displacement: end[i]!, factor: 1 },
           { displacement: start[i]!, factor: -1 },

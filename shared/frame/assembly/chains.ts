@@ -1,4 +1,5 @@
 import { tooLarge } from '../../numerics/kernels/Arena.ts';
+import { DISPLACEMENTS } from '../../schemas/frameDocument.ts';
 import type { Vector3 } from '../../schemas/frameDocument.ts';
 import { combine, stacked, termsOf } from '../freedoms/Combination.ts';
 import type { Combination, Terms } from '../freedoms/Combination.ts';
@@ -189,6 +190,7 @@ function endMotion(
         ties.push({
           owner: 'joint',
           id: `${member.id} ${which}`,
+          along: DISPLACEMENTS[i]!,
           motion: combine([[[own, 1], ...freedoms.terms(displacement, -1)]]),
           stiffness,
           turns: isRotation(i),

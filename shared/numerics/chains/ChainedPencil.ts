@@ -22,6 +22,9 @@ import { inMemory, inX, Program } from './Program.ts';
  */
 const INNER_PIVOT_TOL = 1e-10;
 
+/** Less than this is no mass [kg or kg·m²]: what a direction misses an axis by in rounding, squared. */
+const NO_MASS = 1e-100;
+
 /** Rows over chains' unknowns as `placeRows` put them down. */
 export interface PlacedRows {
   readonly program: Program;
@@ -167,7 +170,7 @@ export class ChainedPencil {
   /** δ diag(M) at the joints, and 1 where there is no mass. */
   #massShift(delta: number): Float64Array {
     const whole = this.diagonal('M').subarray(0, this.pair.joints);
-    return whole.map((mass) => (mass === 0 ? 1 : delta * mass));
+    return whole.map((mass) => (mass < NO_MASS ? 1 : delta * mass));
   }
 
   #eliminate(sigma: number): number {
