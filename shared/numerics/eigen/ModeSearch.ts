@@ -1,6 +1,7 @@
 import type { ChainedPencil } from '../chains/ChainedPencil.ts';
 import { ZeroPivotError } from '../factor/ZeroPivotError.ts';
 import { clearGap } from './clearGap.ts';
+import { combineVectors } from './combineVectors.ts';
 import { lanczos } from './lanczos.ts';
 import { ModeSet } from './ModeSet.ts';
 import type { ModesOptions, ModesTiming } from './ModesResult.ts';
@@ -27,8 +28,6 @@ const MOST_EXTRA = 24;
 /** Runs of the search and of the recovery; each that finds nothing makes the next one larger. */
 const MOST_RUNS = 60;
 const MOST_BARREN_RUNS = 3;
-/** Numbers of each vector that Ritz vectors are summed over at a time: the basis' share of them fills a cache. */
-const STRETCH = 512;
 /** Where in a clear gap the shift is tried, should a pivot vanish by accident. */
 const GAP_SHARES = [0.5, 0.4, 0.6, 0.3];
 
@@ -246,20 +245,12 @@ export class ModeSearch {
   /** Address of the Ritz vectors, purified, one after the other. */
   #ritzVectors(pairs: RitzPairs, wanted: readonly number[]): number {
     const { arena, size } = this.#pencil;
-    const { kernels } = arena;
-    const m = pairs.dimension + pairs.beyond;
     const address = arena.numbers(wanted.length * size);
-    const coefficients = wanted.map((index) =>
-      arena.place(pairs.coordinates(index).map((value) => -value)),
-    );
-    arena.view(address, wanted.length * size).fill(0);
-    for (let from = 0; from < size; from += STRETCH) {
-      const length = Math.min(STRETCH, size - from);
-      coefficients.forEach((c, i) => {
-        const y = address + 8 * (i * size + from);
-        kernels.subtractCombination(length, pairs.basis + 8 * from, 8 * size, m, c, y);
-      });
-    }
+    const coordinates = wanted.map((index) => {
+      const all = pairs.coordinates(index);
+      return pairs.beyond > 0 ? all : all.subarray(0, pairs.dimension);
+    });
+    combineVectors(arena, size, pairs.basis, coordinates, address);
     return address;
   }
 

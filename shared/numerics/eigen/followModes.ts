@@ -1,5 +1,6 @@
 import { CholeskyDecomposition, Matrix } from 'ml-matrix';
 import type { ChainedPencil } from '../chains/ChainedPencil.ts';
+import { combineVectors } from './combineVectors.ts';
 import { denseEigen } from './denseEigen.ts';
 
 export interface FollowedModes {
@@ -24,9 +25,6 @@ export interface FollowOptions {
   readonly tolerance: number;
   readonly mostSweeps: number;
 }
-
-/** Numbers of each vector that are combined at a time, so that all of them fit into a cache. */
-const STRETCH = 512;
 
 /**
  * Modes of a changed pair from those before the change: inverse iteration of all of them at once with a
@@ -66,37 +64,44 @@ export function followModes(
     for (let i = 0; i < wanted; i++) {
       worst = Math.max(worst, error[i]! / Math.max(ritz.lambda[i]!, -pencil.sigma));
     }
-    combine(pencil, Y, ritz.coordinates, X, count);
+    const { coordinates } = ritz;
+    combineVectors(arena, size, Y, coordinates, X);
     if (worst <= tolerance || sweep === mostSweeps) {
       return { lambda: ritz.lambda, residual: ritz.residual, error, vectors: X, sweeps: sweep };
     }
-    combine(pencil, MY, ritz.coordinates, MX, count);
+    combineVectors(arena, size, MY, coordinates, MX);
   }
 }
 
 /** AᵀB, symmetric, `count` square, row by row. */
 function grams({ arena, size }: ChainedPencil, A: number, B: number, count: number): Float64Array {
+  const { kernels } = arena;
   const stride = 8 * size;
   const used = arena.used;
-  const row = arena.numbers(count);
+  const rows = arena.numbers((count + 2) * count);
+  const row = (i: number) => rows + 8 * i * count;
+  for (let i = 0; i < count; i += 2) {
+    const b = B + i * stride;
+    if (i + 1 === count) kernels.dots(size, A, stride, count, b, row(i));
+    else kernels.dotsOfTwo(size, A, stride, i + 2, b, b + stride, row(i), row(i + 1));
+  }
+  const products = arena.view(rows, count * count);
   const result = new Float64Array(count * count);
   for (let i = 0; i < count; i++) {
-    arena.kernels.dots(size, A, stride, i + 1, B + i * stride, row);
-    arena.view(row, i + 1).forEach((value, j) => {
-      result[i * count + j] = result[j * count + i] = value;
-    });
+    for (let j = 0; j <= i; j++)
+      result[i * count + j] = result[j * count + i] = products[i * count + j]!;
   }
   arena.rewind(used);
   return result;
 }
 
-/** Ritz pairs from XᵀMX, Yᵀ(K − σM)Y and YᵀMY; coordinates of each over the vectors, row by row. */
+/** Ritz pairs from XᵀMX, Yᵀ(K − σM)Y and YᵀMY, with the coordinates of each over the vectors. */
 function ritzStep(
   A: Float64Array,
   B: Float64Array,
   C: Float64Array,
   sigma: number,
-): { lambda: Float64Array; residual: Float64Array; coordinates: Float64Array } | null {
+): { lambda: Float64Array; residual: Float64Array; coordinates: Float64Array[] } | null {
   const m = Math.sqrt(A.length);
   const cholesky = new CholeskyDecomposition(matrixOf(B, m));
   if (!cholesky.isPositiveDefinite()) return null;
@@ -107,7 +112,7 @@ function ritzStep(
   const { values, vectors } = denseEigen(Float64Array.from(inner.to1DArray()), m, m);
   const lambda = new Float64Array(m);
   const residual = new Float64Array(m);
-  const coordinates = new Float64Array(m * m);
+  const coordinates = Array.from({ length: m }, () => new Float64Array(m));
   for (let k = 0; k < m; k++) {
     const nu = values[k]!;
     if (!(nu > 0)) return null;
@@ -117,7 +122,7 @@ function ritzStep(
     const mu = 1 / nu;
     let square = 0;
     for (let i = 0; i < m; i++) {
-      coordinates[k * m + i] = s[i]! * norm;
+      coordinates[k]![i] = s[i]! * norm;
       for (let j = 0; j < m; j++) {
         const at = i * m + j;
         square += s[i]! * s[j]! * (A[at]! - 2 * mu * B[at]! + mu * mu * C[at]!);
@@ -153,29 +158,6 @@ function backward(L: Matrix, b: Float64Array): Float64Array {
     x[i]! /= L.get(i, i);
   }
   return x;
-}
-
-/** to_k ← Σ_j coordinates[k][j] from_j. */
-function combine(
-  { arena, size }: ChainedPencil,
-  from: number,
-  coordinates: Float64Array,
-  to: number,
-  count: number,
-): void {
-  const used = arena.used;
-  const stride = 8 * size;
-  const minus = arena.place(coordinates.map((value) => -value));
-  arena.view(to, count * size).fill(0);
-  for (let at = 0; at < size; at += STRETCH) {
-    const length = Math.min(STRETCH, size - at);
-    for (let k = 0; k < count; k++) {
-      const c = minus + 8 * k * count;
-      const target = to + 8 * at + k * stride;
-      arena.kernels.subtractCombination(length, from + 8 * at, stride, count, c, target);
-    }
-  }
-  arena.rewind(used);
 }
 
 /** Kato–Temple where a mode's neighbours are farther off than its residual, else the residual. */

@@ -141,4 +141,26 @@ export interface Kernels {
     c: number,
     y: number,
   ): void;
+  /** `dots` of two vectors x and y, which read each v_j once. */
+  dotsOfTwo(
+    n: number,
+    V: number,
+    stride: number,
+    count: number,
+    x: number,
+    y: number,
+    ofX: number,
+    ofY: number,
+  ): void;
+  /** `subtractCombination` from two vectors x and y, with the coefficients of each. */
+  subtractFromTwo(
+    n: number,
+    V: number,
+    stride: number,
+    count: number,
+    ofX: number,
+    ofY: number,
+    x: number,
+    y: number,
+  ): void;
 }

@@ -519,6 +519,16 @@ export function scriptKernels(memory: MemoryViews): Kernels {
       for (; j < count; j++) addScaled(n, -f[(c >>> 3) + j]!, V + j * stride, y);
     },
 
+    dotsOfTwo(n, V, stride, count, x, y, ofX, ofY) {
+      kernels.dots(n, V, stride, count, x, ofX);
+      kernels.dots(n, V, stride, count, y, ofY);
+    },
+
+    subtractFromTwo(n, V, stride, count, ofX, ofY, x, y) {
+      kernels.subtractCombination(n, V, stride, count, ofX, x);
+      kernels.subtractCombination(n, V, stride, count, ofY, y);
+    },
+
     run(count, stepsAt, x, y) {
       const index = memory.i32;
       const base = [0, x, y];

@@ -818,6 +818,127 @@ export function subtractCombination(
   }
 }
 
+export function dotsOfTwo(
+  n: i32,
+  V: usize,
+  stride: usize,
+  count: i32,
+  x: usize,
+  y: usize,
+  ofX: usize,
+  ofY: usize,
+): void {
+  let j: i32 = 0;
+  for (; j + 1 < count; j += 2) {
+    let v0 = V + <usize>j * stride;
+    let v1 = v0 + stride;
+    let atX = x;
+    let atY = y;
+    let a0 = f64x2.splat(0);
+    let b0 = f64x2.splat(0);
+    let a1 = f64x2.splat(0);
+    let b1 = f64x2.splat(0);
+    let c0 = f64x2.splat(0);
+    let d0 = f64x2.splat(0);
+    let c1 = f64x2.splat(0);
+    let d1 = f64x2.splat(0);
+    for (let i: i32 = 0; i < n; i += 4) {
+      const xa = v128.load(atX);
+      const xb = v128.load(atX, 16);
+      const ya = v128.load(atY);
+      const yb = v128.load(atY, 16);
+      const va = v128.load(v0);
+      const vb = v128.load(v0, 16);
+      a0 = f64x2.add(a0, f64x2.mul(va, xa));
+      b0 = f64x2.add(b0, f64x2.mul(vb, xb));
+      c0 = f64x2.add(c0, f64x2.mul(va, ya));
+      d0 = f64x2.add(d0, f64x2.mul(vb, yb));
+      const ua = v128.load(v1);
+      const ub = v128.load(v1, 16);
+      a1 = f64x2.add(a1, f64x2.mul(ua, xa));
+      b1 = f64x2.add(b1, f64x2.mul(ub, xb));
+      c1 = f64x2.add(c1, f64x2.mul(ua, ya));
+      d1 = f64x2.add(d1, f64x2.mul(ub, yb));
+      atX += 32;
+      atY += 32;
+      v0 += 32;
+      v1 += 32;
+    }
+    const out = (<usize>j) << 3;
+    a0 = f64x2.add(a0, b0);
+    a1 = f64x2.add(a1, b1);
+    c0 = f64x2.add(c0, d0);
+    c1 = f64x2.add(c1, d1);
+    store<f64>(ofX + out, f64x2.extract_lane(a0, 0) + f64x2.extract_lane(a0, 1));
+    store<f64>(ofX + out, f64x2.extract_lane(a1, 0) + f64x2.extract_lane(a1, 1), 8);
+    store<f64>(ofY + out, f64x2.extract_lane(c0, 0) + f64x2.extract_lane(c0, 1));
+    store<f64>(ofY + out, f64x2.extract_lane(c1, 0) + f64x2.extract_lane(c1, 1), 8);
+  }
+  if (j < count) {
+    const v = V + <usize>j * stride;
+    store<f64>(ofX + ((<usize>j) << 3), dot(n, v, x));
+    store<f64>(ofY + ((<usize>j) << 3), dot(n, v, y));
+  }
+}
+
+export function subtractFromTwo(
+  n: i32,
+  V: usize,
+  stride: usize,
+  count: i32,
+  ofX: usize,
+  ofY: usize,
+  x: usize,
+  y: usize,
+): void {
+  let j: i32 = 0;
+  for (; j + 3 < count; j += 4) {
+    const fromX = ofX + ((<usize>j) << 3);
+    const fromY = ofY + ((<usize>j) << 3);
+    const c0 = v128.load64_splat(fromX);
+    const c1 = v128.load64_splat(fromX, 8);
+    const c2 = v128.load64_splat(fromX, 16);
+    const c3 = v128.load64_splat(fromX, 24);
+    const d0 = v128.load64_splat(fromY);
+    const d1 = v128.load64_splat(fromY, 8);
+    const d2 = v128.load64_splat(fromY, 16);
+    const d3 = v128.load64_splat(fromY, 24);
+    let v0 = V + <usize>j * stride;
+    let v1 = v0 + stride;
+    let v2 = v1 + stride;
+    let v3 = v2 + stride;
+    let atX = x;
+    let atY = y;
+    for (let i: i32 = 0; i < n; i += 2) {
+      let v = v128.load(v0);
+      let a = f64x2.mul(c0, v);
+      let b = f64x2.mul(d0, v);
+      v = v128.load(v1);
+      a = f64x2.add(a, f64x2.mul(c1, v));
+      b = f64x2.add(b, f64x2.mul(d1, v));
+      v = v128.load(v2);
+      a = f64x2.add(a, f64x2.mul(c2, v));
+      b = f64x2.add(b, f64x2.mul(d2, v));
+      v = v128.load(v3);
+      a = f64x2.add(a, f64x2.mul(c3, v));
+      b = f64x2.add(b, f64x2.mul(d3, v));
+      v128.store(atX, f64x2.sub(v128.load(atX), a));
+      v128.store(atY, f64x2.sub(v128.load(atY), b));
+      v0 += 16;
+      v1 += 16;
+      v2 += 16;
+      v3 += 16;
+      atX += 16;
+      atY += 16;
+    }
+  }
+  for (; j < count; j++) {
+    const v = V + <usize>j * stride;
+    addScaled(n, -load<f64>(ofX + ((<usize>j) << 3)), v, x);
+    addScaled(n, -load<f64>(ofY + ((<usize>j) << 3)), v, y);
+  }
+}
+
 /** Where an address of a step counts from: the memory itself, x or y. */
 function resolve(step: usize, field: usize, x: usize, y: usize): usize {
   const from = load<i32>(step + field + 4);
