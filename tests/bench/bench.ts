@@ -3,9 +3,12 @@ import { solveBrackets } from '#shared/analysis/solveBrackets.ts';
 import { solveFrame } from '#shared/analysis/solveFrame.ts';
 import type { SolveRequest } from '#shared/analysis/solveFrame.ts';
 import { coldSolve } from './coldSolve.ts';
+import { dragging } from './dragging.ts';
 import { documentOf, frameNamed, FRAMES, MESH_FREE_RACK, MODE_COUNTS } from './frames.ts';
 import type { BenchFrame } from './frames.ts';
 import { comparedTime, medianSolve } from './measureSolve.ts';
+import { operations } from './operations.ts';
+import { productPress } from './productPress.ts';
 import {
   growthLines,
   largestDifference,
@@ -15,6 +18,7 @@ import {
   stageTable,
 } from './report.ts';
 import type { BenchRow } from './report.ts';
+import { scriptSolve } from './scriptSolve.ts';
 import { scipyTimes, scipyVersions } from './scipy.ts';
 
 /**
@@ -23,6 +27,7 @@ import { scipyTimes, scipyVersions } from './scipy.ts';
  *   -- --quick         only 3k and 12k
  *   -- --size 12000    only frames of that size
  *   -- --runs 9        timed runs of each, of which the median counts
+ *   -- --product URL   only a press of Solve on a running product with the demo in it
  * Ends with code 1 where our frequencies differ from SciPy's.
  */
 const QUICK = [3_000, 12_000];
@@ -31,7 +36,11 @@ const LARGEST_PLAIN = 12_000;
 /** Relative difference of a frequency: two right answers agree to this. */
 const SAME = 1e-8;
 
+/** The frame that is dragged. */
+const DRAGGED = 'rack 12k';
+
 interface Choice {
+  readonly product: string | null;
   readonly frames: readonly BenchFrame[];
   readonly runs: number | null;
 }
@@ -42,6 +51,7 @@ function readChoice(): Choice {
       quick: { type: 'boolean' },
       size: { type: 'string' },
       runs: { type: 'string' },
+      product: { type: 'string' },
     },
   });
   const runs = values.runs === undefined ? null : Number(values.runs);
@@ -53,7 +63,7 @@ function readChoice(): Choice {
     values.size === undefined ? (values.quick === true ? QUICK : sizes) : [Number(values.size)];
   const frames = FRAMES.filter(({ size }) => wanted.includes(size));
   if (frames.length === 0) throw new RangeError(`--size must be one of ${sizes.join(', ')}.`);
-  return { frames, runs };
+  return { product: values.product ?? null, frames, runs };
 }
 
 function measure(frame: BenchFrame, runs: number, withScipy: boolean): BenchRow[] {
@@ -68,6 +78,8 @@ function measure(frame: BenchFrame, runs: number, withScipy: boolean): BenchRow[
       modes,
       warm: medianSolve(document, massKind, modes, runs, comparedTime),
       cold: coldSolve(frame.name, massKind, modes),
+      script: scriptSolve(frame.name, massKind, modes, runs),
+      operations: operations(document, massKind),
       scipy: scipy.find((times) => times.modes === modes) ?? null,
     }));
   });
@@ -113,20 +125,38 @@ function bracketsLine(runs: number): string {
   );
 }
 
-function main(): void {
-  const { frames, runs } = readChoice();
+function draggingLine(): string {
+  console.error('dragging');
+  const [modes] = MODE_COUNTS;
+  const { assemble, solve } = dragging(DRAGGED, modes);
+  return (
+    `A step of dragging a node, ${DRAGGED}, ${modes} modes: ${solve.toFixed(1)} ms besides ` +
+    `${assemble.toFixed(1)} ms of assembly.`
+  );
+}
+
+async function main(): Promise<void> {
+  const { product, frames, runs } = readChoice();
+  if (product !== null) {
+    const { ms, members } = await productPress(product);
+    console.log(
+      `- From the press of Solve to both results stored, ${members} members: ${ms.toFixed(0)} ms.`,
+    );
+    return;
+  }
   const scipy = scipyVersions();
   const loadBefore = load();
   const rows = frames.flatMap((frame) => measure(frame, runs ?? frame.runs, scipy !== null));
   const meshFree = meshFreeLine(runs ?? 5);
   const brackets = bracketsLine(runs ?? 5);
+  const drag = draggingLine();
 
   console.log(
     `${machineLine(scipy)}. Milliseconds, one thread, median of warm runs; system load ${loadBefore} before, ${load()} after.\n`,
   );
   console.log(`${stageTable(rows)}\n`);
   if (scipy !== null) console.log(`${scipyTable(rows)}\n`);
-  for (const line of [...growthLines(rows), meshFree, brackets]) console.log(`- ${line}`);
+  for (const line of [...growthLines(rows), meshFree, brackets, drag]) console.log(`- ${line}`);
 
   for (const row of rows.filter((candidate) => largestDifference(candidate) > SAME)) {
     console.error(
@@ -137,4 +167,4 @@ function main(): void {
   }
 }
 
-main();
+await main();

@@ -58,6 +58,9 @@ export const FRAMES: readonly BenchFrame[] = [
 /** About 500 members, for the mesh-free method, which needs no elements. */
 export const MESH_FREE_RACK = { bays: 4, storeys: 8 } as const;
 
+/** About 300 members, for a press of Solve on the running product. */
+export const PRESS_RACK = { bays: 3, storeys: 8 } as const;
+
 /** The frame's document as the product stores it: Bernoulli members, 4 elements each. */
 export function documentOf(frame: {
   bays: number;

@@ -13,6 +13,10 @@ export interface BenchRow {
   readonly modes: number;
   readonly warm: SolveSummary;
   readonly cold: ColdSolve;
+  /** Compared stages with the JavaScript kernels [ms]. */
+  readonly script: number;
+  /** Of one factorisation. */
+  readonly operations: number;
   /** Null where SciPy is not installed. */
   readonly scipy: ScipyTimes | null;
 }
@@ -42,13 +46,14 @@ export function machineLine(scipy: string | null): string {
 
 export function stageTable(rows: readonly BenchRow[]): string {
   return markdownTable(
-    ['frame', 'unknowns', 'mass', 'modes', ...STAGES, 'cold', 'peak MiB', 'complete'],
-    rows.map(({ frame, massKind, modes, warm, cold }) => [
+    ['frame', 'unknowns', 'mass', 'modes', ...STAGES, 'GFLOP/s', 'cold', 'peak MiB', 'complete'],
+    rows.map(({ frame, massKind, modes, warm, cold, operations }) => [
       frame.name,
       String(warm.freeDof),
       massKind,
       String(modes),
       ...STAGES.map((stage) => milliseconds(warm.timing[stage])),
+      (operations / warm.timing.factor / 1e6).toFixed(1),
       milliseconds(cold.totalMs),
       (cold.peakBytes / 2 ** 20).toFixed(0),
       warm.complete ? 'yes' : 'no',
@@ -70,6 +75,8 @@ export function scipyTable(rows: readonly BenchRow[]): string {
       'ncv, tol',
       'plain eigsh',
       'ratio',
+      'JavaScript',
+      'its ratio',
       'largest difference',
     ],
     rows.flatMap((row) => {
@@ -89,6 +96,8 @@ export function scipyTable(rows: readonly BenchRow[]): string {
           `${scipy.ncv}, ${scipy.tol}`,
           scipy.plainMs === null ? '' : milliseconds(scipy.plainMs),
           (scipy.totalMs / ours).toFixed(1),
+          milliseconds(row.script),
+          (scipy.totalMs / row.script).toFixed(1),
           largestDifference(row).toExponential(1),
         ],
       ];

@@ -354,33 +354,72 @@ export function scriptKernels(memory: MemoryViews): Kernels {
 
     multiplyBatch(count, FAt, strideF, inputs, GAt, outputs, YAt, strideY, accumulate) {
       const f = memory.f64;
-      for (let m = 0; m < count; m++) {
+      const stepF = strideF >>> 3;
+      const stepY = strideY >>> 3;
+      // Two vectors to one reading of G: sums of four would not fit the registers.
+      for (let m = 0; m < count; m += 2) {
         const F = (FAt + m * strideF) >>> 3;
         const end = F + inputs;
         let y = (YAt + m * strideY) >>> 3;
         const last = y + outputs;
+        // The odd one at the end is done twice, with the same result.
+        const besideF = m + 1 < count ? stepF : 0;
+        const besideY = m + 1 < count ? stepY : 0;
         let g = GAt >>> 3;
         for (; y + 3 < last; y += 4) {
-          let s0 = accumulate ? f[y]! : 0;
-          let s1 = accumulate ? f[y + 1]! : 0;
-          let s2 = accumulate ? f[y + 2]! : 0;
-          let s3 = accumulate ? f[y + 3]! : 0;
+          const z = y + besideY;
+          let s0 = 0;
+          let s1 = 0;
+          let s2 = 0;
+          let s3 = 0;
+          let t0 = 0;
+          let t1 = 0;
+          let t2 = 0;
+          let t3 = 0;
+          if (accumulate) {
+            s0 = f[y]!;
+            s1 = f[y + 1]!;
+            s2 = f[y + 2]!;
+            s3 = f[y + 3]!;
+            t0 = f[z]!;
+            t1 = f[z + 1]!;
+            t2 = f[z + 2]!;
+            t3 = f[z + 3]!;
+          }
           for (let q = F; q < end; q++, g += 4) {
             const v = f[q]!;
-            s0 += f[g]! * v;
-            s1 += f[g + 1]! * v;
-            s2 += f[g + 2]! * v;
-            s3 += f[g + 3]! * v;
+            const w = f[q + besideF]!;
+            const g0 = f[g]!;
+            const g1 = f[g + 1]!;
+            const g2 = f[g + 2]!;
+            const g3 = f[g + 3]!;
+            s0 += g0 * v;
+            s1 += g1 * v;
+            s2 += g2 * v;
+            s3 += g3 * v;
+            t0 += g0 * w;
+            t1 += g1 * w;
+            t2 += g2 * w;
+            t3 += g3 * w;
           }
           f[y] = s0;
           f[y + 1] = s1;
           f[y + 2] = s2;
           f[y + 3] = s3;
+          f[z] = t0;
+          f[z + 1] = t1;
+          f[z + 2] = t2;
+          f[z + 3] = t3;
         }
         for (; y < last; y++, g++) {
-          let sum = accumulate ? f[y]! : 0;
-          for (let q = F, at = g; q < end; q++, at += 4) sum += f[at]! * f[q]!;
-          f[y] = sum;
+          let s = accumulate ? f[y]! : 0;
+          let t = accumulate ? f[y + besideY]! : 0;
+          for (let q = F, at = g; q < end; q++, at += 4) {
+            s += f[at]! * f[q]!;
+            t += f[at]! * f[q + besideF]!;
+          }
+          f[y] = s;
+          f[y + besideY] = t;
         }
       }
     },
