@@ -104,7 +104,8 @@ export class LiveFrame {
       const order = lastingOrder(model);
       this.#last = {
         model,
-        ...shared.topology!,
+        pair: shared.last!.pair,
+        analysis: shared.last!.analysis,
         modes: phi.map((shape) => gathered(shape, order)),
         sigma: solved.rigidBodyModes > 0 ? -SHIFT_SHARE * elastic : 0,
       };

@@ -4,6 +4,7 @@ import type { ChainedPencil } from '../numerics/chains/ChainedPencil.ts';
 import type { HandCheck, HandChecks, SolveSummary } from '../schemas/solveResult.ts';
 import { shapesAtPoints } from './shapesAtPoints.ts';
 import { VALUES_PER_POINT } from './shapesFile.ts';
+import type { ModeShapes } from './shapesFile.ts';
 
 /** Standard gravity [m/s²] (BIPM, The International System of Units, 9th edition). */
 const GRAVITY = 9.80665;
@@ -40,30 +41,37 @@ export function staticChecks(
   forces: number,
 ): StaticChecks {
   const { arena, size } = pencil;
+  const { kernels } = arena;
   const used = arena.used;
-  const axes: AxisCheck[] = [];
-  for (let direction = 0; direction < 3; direction++) {
-    if (!model.exists[direction]) continue;
+  const image = pencil.vector();
+  const sags = [0, 1, 2].flatMap((direction) => {
+    if (!model.exists[direction]) return [];
     const b = forces + 8 * size * direction;
     const u = pencil.vector();
     pencil.solve(b, u);
-    const work = arena.kernels.dot(size, b, u);
-    // All of the mass stands on what is fixed along this axis.
-    if (!(work > 0)) continue;
-    const atNodes = GRAVITY * largestAtPoints(model, pencil, u, direction);
+    const work = kernels.dot(size, b, u);
+    // Without work all of the mass stands on what is fixed along this axis.
+    return work > 0 ? [{ direction, b, u, work }] : [];
+  });
+  const points = shapesAtPoints(
+    model,
+    pencil,
+    sags.map(({ u }) => u),
+  );
+  const axes = sags.map(({ direction, b, u, work }, i): AxisCheck => {
+    const atNodes = GRAVITY * largestAtPoints(points, i, direction);
     const atMasses = Math.max(atNodes, GRAVITY * largestAtMasses(model, pencil, u, direction));
-    const image = pencil.vector();
     pencil.multiplyMass(u, image);
-    axes.push({
+    return {
       axis: AXES[direction]!,
       deflectionAtNodes: atNodes,
       deflectionAtMasses: atMasses,
       fromDeflectionAtNodes: hertz(GRAVITY / atNodes),
       fromDeflectionAtMasses: hertz(GRAVITY / atMasses),
-      rayleigh: hertz(work / arena.kernels.dot(size, u, image)),
+      rayleigh: hertz(work / kernels.dot(size, u, image)),
       dunkerley: dunkerley(model, pencil, b, direction),
-    });
-  }
+    };
+  });
   arena.rewind(used);
   if (axes.length > 0) return { axes };
   return { none: 'No mass of this frame can move along an axis, so it does not sag.' };
@@ -89,17 +97,12 @@ export function matchHandChecks(
   return { none: null, axes };
 }
 
-/** Largest deflection along an axis of a shape over nodes and stations. */
-function largestAtPoints(
-  model: FrameModel,
-  pencil: ChainedPencil,
-  u: number,
-  direction: number,
-): number {
-  const { shapes } = shapesAtPoints(model, pencil, [u]);
+/** Largest deflection along an axis of one shape over nodes and stations. */
+function largestAtPoints({ shapes, points }: ModeShapes, shape: number, direction: number): number {
+  const from = shape * points * VALUES_PER_POINT;
   let largest = 0;
-  for (let at = direction; at < shapes.length; at += VALUES_PER_POINT) {
-    largest = Math.max(largest, Math.abs(shapes[at]!));
+  for (let at = from; at < from + points * VALUES_PER_POINT; at += VALUES_PER_POINT) {
+    largest = Math.max(largest, Math.abs(shapes[at + direction]!));
   }
   return largest;
 }

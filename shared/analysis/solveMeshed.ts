@@ -1,7 +1,7 @@
 import { buildModel } from '../frame/assembly/buildModel.ts';
 import { chainedPair } from '../frame/assembly/chainedPair.ts';
 import { divisionsOf } from '../frame/assembly/divisions.ts';
-import type { MassKind } from '../frame/assembly/FrameModel.ts';
+import type { MassKind, MemberPart } from '../frame/assembly/FrameModel.ts';
 import { massNormalised, rigidMotions } from '../frame/freedoms/rigidMotions.ts';
 import { analyseChains } from '../numerics/chains/analyseChains.ts';
 import { ChainedPencil } from '../numerics/chains/ChainedPencil.ts';
@@ -55,12 +55,11 @@ function solveIn(
   shared: SharedWork,
 ): MeshedFrame {
   const began = clock();
-  const model = buildModel(document, {
-    massKind,
-    divisionsOf: (part) => divisionsOf(part, settings.divisions, settings.upToHz),
-  });
+  const divide = (part: MemberPart) => divisionsOf(part, settings.divisions, settings.upToHz);
+  const reused = shared.modelFor(document, massKind, divide);
+  const model = reused?.model ?? buildModel(document, { massKind, divisionsOf: divide });
   const { totalMass, centre } = massOrRefuse(model);
-  const pair = chainedPair(model);
+  const pair = reused?.pair ?? chainedPair(model);
   const built = clock();
   const known = shared.analysisFor(pair);
   const analysis = known ?? analyseChains(pair, clock);
@@ -105,7 +104,7 @@ function solveIn(
   );
   const details = meshedDetails(pencil, energies, found, inertia.forces);
   const attainable = shared.attainableFor(pair) ?? attainableMass(pencil, inertia.forces);
-  shared.keep(pair, analysis, attainable);
+  shared.keep({ model, pair, analysis, attainable });
   const summary = summariseModes({
     model,
     details,

@@ -1,4 +1,5 @@
 import type { Chain, ChainClass, ChainedPair } from '../../numerics/chains/ChainedPair.ts';
+import type { SymmetricCsc } from '../../numerics/sparse/SymmetricCsc.ts';
 import type { FrameModel, ModelChain } from './FrameModel.ts';
 import { SymmetricTriplets } from './SymmetricTriplets.ts';
 
@@ -7,18 +8,23 @@ import { SymmetricTriplets } from './SymmetricTriplets.ts';
  * its order.
  */
 export function chainedPair(model: FrameModel): ChainedPair {
-  const { joints, blockOf, ties, bodies, chains } = model;
-  const K = new SymmetricTriplets(ties);
-  for (const { motion, stiffness } of ties) K.add(motion, Float64Array.of(stiffness));
+  const { joints, blockOf, bodies, chains } = model;
   const M = new SymmetricTriplets(bodies);
   for (const { motion, mass } of bodies) M.add(motion, mass);
   return {
     joints,
     blockOf,
-    K: K.assemble(joints),
+    K: stiffnessOfTies(model),
     M: M.assemble(joints),
     classes: chains.map(chainClass),
   };
+}
+
+/** The part of K that joints, supports and springs make. */
+export function stiffnessOfTies({ joints, ties }: FrameModel): SymmetricCsc {
+  const K = new SymmetricTriplets(ties);
+  for (const { motion, stiffness } of ties) K.add(motion, Float64Array.of(stiffness));
+  return K.assemble(joints);
 }
 
 function chainClass(chains: readonly ModelChain[]): ChainClass {
