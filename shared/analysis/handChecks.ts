@@ -66,7 +66,7 @@ export function staticChecks(
       axis: AXES[direction]!,
       deflectionAtNodes: atNodes,
       deflectionAtMasses: atMasses,
-      fromDeflectionAtNodes: hertz(GRAVITY / atNodes),
+      fromDeflectionAtNodes: atNodes > 0 ? hertz(GRAVITY / atNodes) : null,
       fromDeflectionAtMasses: hertz(GRAVITY / atMasses),
       rayleigh: hertz(work / kernels.dot(size, u, image)),
       dunkerley: dunkerley(model, pencil, b, direction),

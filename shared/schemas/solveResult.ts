@@ -83,8 +83,8 @@ export const handCheck = z.object({
   /** Largest deflection along the axis under 1 g: at nodes and stations, and with the masses' centres [m]. */
   deflectionAtNodes: z.number(),
   deflectionAtMasses: z.number(),
-  /** √(g/δ)/2π of each [Hz]; reads low where the mass is spread. */
-  fromDeflectionAtNodes: z.number(),
+  /** √(g/δ)/2π of each [Hz]; reads low where the mass is spread. Null where masses alone move. */
+  fromDeflectionAtNodes: z.number().nullable(),
   fromDeflectionAtMasses: z.number(),
   /** The lowest frequency is never above it [Hz]. */
   rayleigh: z.number(),
