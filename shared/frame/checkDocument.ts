@@ -1,12 +1,14 @@
 import type { Issue } from '../errors/AppError.ts';
 import type { FrameDocument } from '../schemas/frameDocument.ts';
 import type { ModelWarning } from '../schemas/solveResult.ts';
+import { checkCloseNodes } from './checks/closeNodes.ts';
 import { checkRigidLinks, checkSprings } from './checks/connections.ts';
 import { Findings } from './checks/findings.ts';
 import type { FormedDocument, ListName } from './checks/formedDocument.ts';
 import { checkMasses } from './checks/masses.ts';
 import { checkMaterials } from './checks/materials.ts';
 import { checkMembers } from './checks/members.ts';
+import { checkMemberPairs } from './checks/memberPairs.ts';
 import { checkDuplicates, checkNodes } from './checks/nodes.ts';
 import { readForm } from './checks/readForm.ts';
 import { unknownSet } from './checks/reducedSet.ts';
@@ -69,6 +71,8 @@ function checkMeaning(
   checkSections(document, findings);
   checkNodes(document, set, findings);
   checkMembers(document, set, findings);
+  checkMemberPairs(document, findings);
+  checkCloseNodes(document, findings);
   checkSupports(document, set, findings);
   checkSprings(document, set, findings);
   checkRigidLinks(document, findings);
