@@ -15,6 +15,7 @@ import { unknownSet } from './checks/reducedSet.ts';
 import { checkSections } from './checks/sections.ts';
 import { checkStates } from './checks/states.ts';
 import { checkSupports } from './checks/supports.ts';
+import { checkUnitSlips } from './checks/unitSlips.ts';
 
 export interface CheckedDocument {
   /** The document with every default filled in; null where anything is refused. */
@@ -78,6 +79,7 @@ function checkMeaning(
   checkRigidLinks(document, findings);
   checkMasses(document, set, findings);
   checkStates(document, set, findings);
+  checkUnitSlips(document, set, findings);
   if (document.members.entries.length === 0 && document.masses.entries.length === 0) {
     const sentence = 'The frame has no mass, so nothing can swing. Add a member or a mass.';
     if (purpose === 'solve') findings.refuse('members', sentence);
