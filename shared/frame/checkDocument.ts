@@ -5,6 +5,7 @@ import { checkCloseNodes } from './checks/closeNodes.ts';
 import { checkRigidLinks, checkSprings } from './checks/connections.ts';
 import { Findings } from './checks/findings.ts';
 import type { FormedDocument, ListName } from './checks/formedDocument.ts';
+import { checkIdleStiffness } from './checks/idleStiffness.ts';
 import { checkMasses } from './checks/masses.ts';
 import { checkMaterials } from './checks/materials.ts';
 import { checkMembers } from './checks/members.ts';
@@ -79,6 +80,7 @@ function checkMeaning(
   checkRigidLinks(document, findings);
   checkMasses(document, set, findings);
   checkStates(document, set, findings);
+  checkIdleStiffness(document, set, findings);
   checkUnitSlips(document, set, findings);
   if (document.members.entries.length === 0 && document.masses.entries.length === 0) {
     const sentence = 'The frame has no mass, so nothing can swing. Add a member or a mass.';
