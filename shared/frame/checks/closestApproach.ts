@@ -7,7 +7,11 @@ import type { Lines } from './closePairs.ts';
  * Detection, 2005, §5.1.9, from memory). Both lines have a length.
  */
 export function closestApproach(lines: Lines, i: number, j: number, out: Float64Array): void {
-  let [a, b, c, e, f] = [0, 0, 0, 0, 0];
+  let a = 0;
+  let b = 0;
+  let c = 0;
+  let e = 0;
+  let f = 0;
   for (let axis = 0; axis < 3; axis++) {
     const p = lines[6 * i + axis]!;
     const q = lines[6 * j + axis]!;

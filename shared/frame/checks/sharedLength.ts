@@ -2,6 +2,7 @@ import type { Lines } from './closePairs.ts';
 
 /**
  * Length that two lines have in common where they lie on one straight line [m]; −1 where they do not.
+ *   length     of the longer one [m]
  *   tolerance  how far off the longer one both ends of the shorter may lie [m]
  */
 export function sharedLength(
@@ -15,13 +16,16 @@ export function sharedLength(
   const ux = (lines[at + 3]! - lines[at]!) / length;
   const uy = (lines[at + 4]! - lines[at + 1]!) / length;
   const uz = (lines[at + 5]! - lines[at + 2]!) / length;
-  let [least, most] = [Infinity, -Infinity];
+  let least = Infinity;
+  let most = -Infinity;
   for (let end = 0; end < 6; end += 3) {
     const x = lines[6 * shorter + end]! - lines[at]!;
     const y = lines[6 * shorter + end + 1]! - lines[at + 1]!;
     const z = lines[6 * shorter + end + 2]! - lines[at + 2]!;
-    const off = Math.hypot(y * uz - z * uy, z * ux - x * uz, x * uy - y * ux);
-    if (off > tolerance) return -1;
+    const cx = y * uz - z * uy;
+    const cy = z * ux - x * uz;
+    const cz = x * uy - y * ux;
+    if (cx * cx + cy * cy + cz * cz > tolerance * tolerance) return -1;
     const along = x * ux + y * uy + z * uz;
     least = Math.min(least, along);
     most = Math.max(most, along);
