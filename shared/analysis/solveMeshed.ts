@@ -2,6 +2,7 @@ import { buildModel } from '../frame/assembly/buildModel.ts';
 import { chainedPair } from '../frame/assembly/chainedPair.ts';
 import { divisionsOf } from '../frame/assembly/divisions.ts';
 import type { MassKind, MemberPart } from '../frame/assembly/FrameModel.ts';
+import { describeRigidMotions } from '../frame/freedoms/describeRigidMotions.ts';
 import { massNormalised, rigidMotions } from '../frame/freedoms/rigidMotions.ts';
 import { analyseChains } from '../numerics/chains/analyseChains.ts';
 import { ChainedPencil } from '../numerics/chains/ChainedPencil.ts';
@@ -125,7 +126,7 @@ function solveIn(
     handChecks: matchHandChecks(checks, summary),
     count: countCheck(found),
     complete: found.complete && found.status === 'complete',
-    warnings: [],
+    warnings: describeRigidMotions(model, motions),
     timing: {
       ...found.timing,
       order: known ? 0 : analysis.symbolic.timing.order,

@@ -1,18 +1,22 @@
 import type { Issue } from '../errors/AppError.ts';
 import type { FrameDocument } from '../schemas/frameDocument.ts';
 import type { ModelWarning } from '../schemas/solveResult.ts';
+import { checkCloseNodes } from './checks/closeNodes.ts';
 import { checkRigidLinks, checkSprings } from './checks/connections.ts';
 import { Findings } from './checks/findings.ts';
 import type { FormedDocument, ListName } from './checks/formedDocument.ts';
+import { checkIdleStiffness } from './checks/idleStiffness.ts';
 import { checkMasses } from './checks/masses.ts';
 import { checkMaterials } from './checks/materials.ts';
 import { checkMembers } from './checks/members.ts';
+import { checkMemberPairs } from './checks/memberPairs.ts';
 import { checkDuplicates, checkNodes } from './checks/nodes.ts';
 import { readForm } from './checks/readForm.ts';
 import { unknownSet } from './checks/reducedSet.ts';
 import { checkSections } from './checks/sections.ts';
 import { checkStates } from './checks/states.ts';
 import { checkSupports } from './checks/supports.ts';
+import { checkUnitSlips } from './checks/unitSlips.ts';
 
 export interface CheckedDocument {
   /** The document with every default filled in; null where anything is refused. */
@@ -69,11 +73,15 @@ function checkMeaning(
   checkSections(document, findings);
   checkNodes(document, set, findings);
   checkMembers(document, set, findings);
+  checkMemberPairs(document, findings);
+  checkCloseNodes(document, findings);
   checkSupports(document, set, findings);
   checkSprings(document, set, findings);
   checkRigidLinks(document, findings);
   checkMasses(document, set, findings);
   checkStates(document, set, findings);
+  checkIdleStiffness(document, set, findings);
+  checkUnitSlips(document, set, findings);
   if (document.members.entries.length === 0 && document.masses.entries.length === 0) {
     const sentence = 'The frame has no mass, so nothing can swing. Add a member or a mass.';
     if (purpose === 'solve') findings.refuse('members', sentence);

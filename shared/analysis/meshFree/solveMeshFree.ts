@@ -5,6 +5,7 @@ import { divisionsOf } from '../../frame/assembly/divisions.ts';
 import type { MemberPart } from '../../frame/assembly/FrameModel.ts';
 import { partDivider } from '../../frame/assembly/memberParts.ts';
 import { displacements } from '../../frame/freedoms/Combination.ts';
+import { describeRigidMotions } from '../../frame/freedoms/describeRigidMotions.ts';
 import { massNormalised, rigidMotions } from '../../frame/freedoms/rigidMotions.ts';
 import { backwardError } from '../../numerics/eigen/backwardError.ts';
 import { multiplySymmetric } from '../../numerics/sparse/SymmetricCsc.ts';
@@ -125,7 +126,10 @@ export function solveMeshFree(
       complete,
     },
     complete,
-    warnings: crossShear(model).map(crossShearWarning),
+    warnings: [
+      ...describeRigidMotions(model, rigidMotions(model)),
+      ...crossShear(model).map(crossShearWarning),
+    ],
     timing: {
       order: joints.analysis.symbolic.timing.order,
       symbolic: joints.analysis.symbolic.timing.symbolic,

@@ -30,6 +30,18 @@ export function callEntry(
   return `${NOUN[list]} ${name} (“${key}”)`;
 }
 
+/** An entry within a sentence: “member leg 2 (“m2”)”. */
+export function mentionEntry(
+  list: ListName,
+  entry: { readonly id: string; readonly name?: string | undefined },
+): string {
+  return lowerFirst(callEntry(list, 0, entry.id, entry.name));
+}
+
+export function lowerFirst(sentence: string): string {
+  return `${sentence.charAt(0).toLowerCase()}${sentence.slice(1)}`;
+}
+
 /** Collects what is wrong with a document (refusals) and what a person should know (warnings). */
 export class Findings {
   readonly errors: Issue[] = [];

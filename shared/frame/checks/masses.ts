@@ -30,7 +30,7 @@ export function checkMasses(document: FormedDocument, set: UnknownSet, findings:
 }
 
 /** Mass of members and point masses together [kg], as far as the document can be read. */
-function totalMass(document: FormedDocument): number {
+export function totalMass(document: FormedDocument): number {
   const perMetre = new Map<string, number>();
   let total = 0;
   for (const member of document.members.entries) {

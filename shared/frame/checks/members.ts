@@ -4,6 +4,7 @@ import { memberAxes } from '../memberAxes.ts';
 import { sectionProperties, type SectionProperties } from '../sectionProperties.ts';
 import { SHEAR_CENTRE_NOTE } from '../sections/section.ts';
 import { add, norm, subtract } from '../vector3.ts';
+import { lowerFirst } from './findings.ts';
 import type { EntryFindings, Findings } from './findings.ts';
 import type { FormedDocument } from './formedDocument.ts';
 import { checkNodeReference } from './nodes.ts';
@@ -178,8 +179,4 @@ function couplesPlanes(section: SectionProperties, roll: number, shear: boolean)
   const bending = Math.abs(Iyz * cos + ((Iy - Iz) / 2) * sin);
   if (bending > COUPLING_TOLERANCE * (Iy + Iz)) return true;
   return shear && Math.abs((ky - kz) * sin) > COUPLING_TOLERANCE * (ky + kz);
-}
-
-function lowerFirst(sentence: string): string {
-  return `${sentence.charAt(0).toLowerCase()}${sentence.slice(1)}`;
 }

@@ -60,7 +60,8 @@ export function checkNodes(document: FormedDocument, set: UnknownSet, findings: 
   });
 }
 
-function attachedNodes(document: FormedDocument): Set<string> {
+/** Ids of the nodes that a member, spring, link or mass names. */
+export function attachedNodes(document: FormedDocument): Set<string> {
   const attached = new Set<string>();
   for (const member of document.members.entries) {
     if (member) attached.add(member.start).add(member.end);

@@ -1,4 +1,5 @@
 import type { FrameDocument, Vector3 } from '../../schemas/frameDocument.ts';
+import { DisjointSets } from '../disjointSets.ts';
 import { cross } from '../vector3.ts';
 import type { Row } from './rowSpace.ts';
 
@@ -15,24 +16,14 @@ export function rigidGroups(
   document: FrameDocument,
   nodeIndex: ReadonlyMap<string, number>,
 ): RigidGroups {
-  const leader = document.nodes.map((_, i) => i);
-  const find = (i: number): number => {
-    let root = i;
-    while (leader[root] !== root) root = leader[root]!;
-    leader[i] = root;
-    return root;
-  };
+  const bodies = new DisjointSets(document.nodes.length);
   for (const link of document.rigidLinks) {
-    for (const other of link.others) {
-      const a = find(nodeIndex.get(link.main)!);
-      const b = find(nodeIndex.get(other)!);
-      leader[Math.max(a, b)] = Math.min(a, b);
-    }
+    for (const other of link.others) bodies.join(nodeIndex.get(link.main)!, nodeIndex.get(other)!);
   }
   const groupOf = new Int32Array(document.nodes.length);
   const reference: Vector3[] = [];
   document.nodes.forEach((node, i) => {
-    const root = find(i);
+    const root = bodies.find(i);
     if (root === i) {
       groupOf[i] = reference.length;
       reference.push([node.x, node.y, node.z]);

@@ -19,6 +19,12 @@ export interface RigidMotion {
   readonly x: Float64Array;
 }
 
+/** One that nothing resists, as geometry gives it. */
+export interface FreeMotion extends RigidMotion {
+  /** Translation, and rotation times the model's `scale`, about the middle of the component [m]. */
+  readonly six: Row;
+}
+
 /** Displacements (t + ω × a, ω) of a group whose reference lies at `a` from the centre, all scaled to metres. */
 function groupMotion(g: Row, a: Vector3, length: number): Row {
   const omega: Vector3 = [g[3]! / length, g[4]! / length, g[5]! / length];
@@ -43,7 +49,7 @@ function aboutCentre(row: Row, a: Vector3, length: number): Row {
  * support fixes or resists, however softly (springs between nodes store nothing in them). Judged by geometry
  * alone, so a support 1e-9 as stiff as the frame still holds. Translations come first.
  */
-export function rigidMotions(model: FrameModel): RigidMotion[] {
+export function rigidMotions(model: FrameModel): FreeMotion[] {
   const { componentOf, components, reference, holds, meanings, scale: length } = model;
   const absent = [0, 1, 2, 3, 4, 5].filter((axis) => !model.exists[axis]).map(unitRow);
   const centre = componentCentres(model);
@@ -75,7 +81,7 @@ export function rigidMotions(model: FrameModel): RigidMotion[] {
         addInnerMotion(chain, g, centre[component]!, length, x);
       }
       // A straight line of bars has no unknown that turns about the line.
-      return largest > 1e-12 ? [{ component, x }] : [];
+      return largest > 1e-12 ? [{ component, x, six: g }] : [];
     });
   });
 }

@@ -35,6 +35,21 @@ function twoBars(): FrameInput {
   return frame;
 }
 
+/** A cantilever along X with two more beams in line behind a hinge; the tip turns with them. */
+function aHingedTail(): FrameInput {
+  const frame = aCantilever({ divisions: 2 });
+  frame.unknowns = ['u', 'w', 'ry'];
+  frame.supports = [{ node: 'root', fixed: ['u', 'w', 'ry'] }];
+  frame.nodes.push({ id: 'near', x: 2, z: 0 }, { id: 'far', x: 4, z: 0 });
+  const arm = frame.members[0]!;
+  frame.members = [
+    { ...arm, joints: { end: { ry: 0 } } },
+    { ...arm, id: 'inner', start: 'tip', end: 'near' },
+    { ...arm, id: 'outer', start: 'near', end: 'far' },
+  ];
+  return frame;
+}
+
 describe.each(METHODS)('mechanisms and rigid motion (%s)', (method) => {
   it('names a node held by nothing across its bars', () => {
     const error = refusal(twoBars(), method);
@@ -64,8 +79,21 @@ describe.each(METHODS)('mechanisms and rigid motion (%s)', (method) => {
     frame.supports = ['left foot', 'right foot'].map((node) => ({ node, fixed: ['u', 'w', 'ry'] }));
     const { details, message } = refusal(frame, method);
     expect(details.issues).toHaveLength(1);
-    expect(message).toContain('“left corner” moves along X');
-    expect(message).toContain('“right corner” moves along X');
+    expect(message).toContain('nodes “left corner”, “right corner” move along X; members');
+    expect(message).toContain('members “leg 1”, “leg 2” move along X and turn about Y;');
+    expect(message).toContain('member “rail” moves along X:');
+  });
+
+  it('says that a node both moves and turns, and what moves most first', () => {
+    const { details } = refusal(aHingedTail(), method);
+    expect(details.issues).toEqual([
+      {
+        path: 'nodes.3',
+        message:
+          'nodes “far”, “near” move along Z and turn about Y; node “tip” turns about Y; ' +
+          'members “outer”, “inner” move along Z and turn about Y: nothing resists this motion.',
+      },
+    ]);
   });
 
   it('takes springs 1e-9 as stiff as the frame for what they are', () => {
