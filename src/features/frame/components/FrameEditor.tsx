@@ -12,6 +12,7 @@ import { useAdding } from '../state/useAdding.ts';
 import { useAutosave } from '../state/useAutosave.ts';
 import { useFrameCommands } from '../state/useFrameCommands.ts';
 import { useEditing } from '../state/useEditing.ts';
+import { useLivePreview } from '../state/useLivePreview.ts';
 import { useProblems } from '../state/useProblems.ts';
 import { useUndoKeys } from '../state/useUndoKeys.ts';
 import { FrameSheet } from './FrameSheet.tsx';
@@ -42,6 +43,7 @@ export function FrameEditor({ project, draft, shown }: FrameEditorProps) {
     open: false,
   });
   useUndoKeys(store);
+  useLivePreview(project.id, frame, shown.state?.id ?? null);
 
   useFrameCommands({ start: adding.start, add: editing.add, undo, redo });
 

@@ -2,13 +2,17 @@ import { useState } from 'react';
 import type { ModeSummary, SolveSummary } from '#shared/schemas/solveResult.ts';
 import { formatFrequency } from '#shared/units/formatFrequency.ts';
 import { useElementWidth } from '#src/hooks/useElementWidth.ts';
+import type { Preview } from '#src/lib/preview.ts';
 import { frequencyScale, type ScaleKind } from '../state/frequencyScale.ts';
 import { layOutMarks } from '../state/layOutMarks.ts';
 import { FrequencyAxis } from './FrequencyAxis.tsx';
 import { FrequencyMarks } from './FrequencyMarks.tsx';
+import { PreviewMarks } from './PreviewMarks.tsx';
 
 export interface FrequencyLineProps {
   readonly summary: SolveSummary | null;
+  /** Frequencies of the frame while it is being changed: they take the marks' place, which stay as ghosts. */
+  readonly preview: Preview | null;
   /** What the line shows, in words: "Draft, tank full, consistent mass". */
   readonly caption: string;
   /** Everything that limits what the line says: stale, incomplete, not solved yet. */
@@ -33,13 +37,13 @@ const describe = (mode: ModeSummary): string =>
  * same speed in rpm under it. A mark opens its mode.
  */
 export function FrequencyLine(props: FrequencyLineProps) {
-  const { summary, caption, remarks, selectedMode, hrefFor } = props;
+  const { summary, preview, caption, remarks, selectedMode, hrefFor } = props;
   const [kind, setKind] = useState<ScaleKind>('log');
   const [frame, width] = useElementWidth<HTMLDivElement>();
   const modes = summary?.modes ?? [];
   const scale = frequencyScale(
     kind,
-    modes.map((mode) => mode.frequencyHz),
+    [...modes.map((mode) => mode.frequencyHz), ...(preview?.frequenciesHz ?? [])],
     Math.max(0, width - 2 * SIDE_PX),
   );
   const marks = width > 0 ? layOutMarks(modes, scale, formatHz) : [];
@@ -69,18 +73,22 @@ export function FrequencyLine(props: FrequencyLineProps) {
         </span>
       </div>
       <div ref={frame} className="relative h-[84px] overflow-hidden">
-        {modes.length > 0 && width > 0 && (
+        {(modes.length > 0 || preview) && width > 0 && (
           <div className="absolute inset-y-0" style={{ left: SIDE_PX, width: scale.width }}>
             <FrequencyAxis scale={scale} />
-            <FrequencyMarks
-              marks={marks}
-              selectedMode={selectedMode}
-              describe={describe}
-              hrefFor={hrefFor}
-            />
+            {preview ? (
+              <PreviewMarks preview={preview} ghosts={marks} scale={scale} />
+            ) : (
+              <FrequencyMarks
+                marks={marks}
+                selectedMode={selectedMode}
+                describe={describe}
+                hrefFor={hrefFor}
+              />
+            )}
           </div>
         )}
-        {modes.length === 0 && (
+        {modes.length === 0 && !preview && (
           <p className="px-4 pt-6 text-sm text-ink-soft">
             No natural frequencies yet. Solve the frame, and they appear here.
           </p>
