@@ -3,6 +3,8 @@ import { move, transferableSymbol, valueSymbol } from 'piscina';
 import { runSolve } from '#shared/analysis/runSolve.ts';
 import type { SolveRequest } from '#shared/analysis/solveFrame.ts';
 import { AppError } from '#shared/errors/AppError.ts';
+import { STARTERS } from '#shared/frame/starters/starters.ts';
+import { DEFAULT_SOLVE_SETTINGS, METHODS } from '#shared/schemas/solveResult.ts';
 
 export interface SolveTask {
   readonly request: SolveRequest;
@@ -36,5 +38,18 @@ export const memoryLimit = (): AppError =>
     'The solve needs more memory than a runner may use: fewer divisions or modes make it smaller.',
   );
 
-/** Called once at start: by then everything the solver needs is loaded. */
-export const warm = (): boolean => true;
+/** The engine compiles what runs often: for about this long the thread solves small frames before the first request. */
+const WARM_UP_MS = 400;
+
+/** Called once at start: by then everything the solver needs is loaded and compiled. */
+export function warm(): void {
+  const began = performance.now();
+  do {
+    for (const { name, parameters, build } of STARTERS) {
+      const document = build(parameters.parse({ name }));
+      for (const method of METHODS) {
+        runSolve({ document, method, stateId: null, settings: DEFAULT_SOLVE_SETTINGS }, {});
+      }
+    }
+  } while (performance.now() - began < WARM_UP_MS);
+}
