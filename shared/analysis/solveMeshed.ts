@@ -35,6 +35,8 @@ const SEED = 20_001;
 
 /**
  * Solves K φ = λ M φ of a frame divided into elements; `document` with its operating state applied.
+ * "auto" divisions are enough for the band asked for; where a number of modes is, a first solve tells how high they
+ * reach.
  *   shared  what an earlier solve left; takes in what this one leaves
  */
 export function solveMeshed(
@@ -44,19 +46,43 @@ export function solveMeshed(
   progress: SolveProgress,
   shared: SharedWork,
 ): MeshedFrame {
-  return withArena((arena) => solveIn(arena, document, massKind, settings, progress, shared));
+  const solve = (kind: MassKind, band: number | undefined, steps: SolveProgress): MeshedFrame =>
+    withArena((arena) => solveIn(arena, document, kind, { settings, band }, steps, shared));
+  if (!seeksBand(document, settings)) return solve(massKind, settings.upToHz, progress);
+  // Consistent mass on few elements reads high, so the band is not too narrow.
+  const first = solve('consistent', undefined, partOf(progress, 0, 0.5));
+  const band = Math.max(...first.modes.map(({ frequencyHz }) => frequencyHz));
+  const fits = first.model.parts.every(
+    (part) => part.member.kind === 'bar' || divisionsOf(part, undefined, band) === part.divisions,
+  );
+  return fits && massKind === 'consistent'
+    ? first
+    : solve(massKind, band, partOf(progress, 0.5, 1));
+}
+
+/** Whether members are to be divided for a band that only a solve can tell: of the modes asked for. */
+function seeksBand({ members }: FrameDocument, { upToHz, divisions }: SolveSettings): boolean {
+  if (upToHz !== undefined || divisions !== undefined) return false;
+  return members.some((member) => member.kind === 'beam' && member.divisions === 'auto');
+}
+
+/** Progress from `from` to `to` of a whole. */
+function partOf(steps: SolveProgress, from: number, to: number): SolveProgress {
+  const progress = (fraction: number, stage: string): void =>
+    steps.progress(from + (to - from) * fraction, stage);
+  return { ...steps, progress };
 }
 
 function solveIn(
   arena: Arena,
   document: FrameDocument,
   massKind: MassKind,
-  settings: SolveSettings,
+  { settings, band }: { settings: SolveSettings; band: number | undefined },
   { clock, progress, shouldStop, stopIfAsked }: SolveProgress,
   shared: SharedWork,
 ): MeshedFrame {
   const began = clock();
-  const divide = (part: MemberPart) => divisionsOf(part, settings.divisions, settings.upToHz);
+  const divide = (part: MemberPart) => divisionsOf(part, settings.divisions, band);
   const reused = shared.modelFor(document, massKind, divide);
   const model = reused?.model ?? buildModel(document, { massKind, divisionsOf: divide });
   const { totalMass, centre } = massOrRefuse(model);

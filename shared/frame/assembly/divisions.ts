@@ -1,6 +1,6 @@
 import type { MemberPart } from './FrameModel.ts';
 
-/** Divisions of a beam set to "auto" when no highest frequency is known: the document's own default. */
+/** Divisions of a beam set to "auto" before a highest frequency is known: the document's own default. */
 const DEFAULT_DIVISIONS = 4;
 /** Above this a finer mesh of one member no longer moves a frame's frequencies noticeably. */
 const MOST_AUTO_DIVISIONS = 40;

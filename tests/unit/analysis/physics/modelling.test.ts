@@ -3,7 +3,8 @@ import { DISPLACEMENTS } from '#shared/schemas/frameDocument.ts';
 import type { Displacement } from '#shared/schemas/frameDocument.ts';
 import { aCantilever, aPortal, aRack, aStand } from '#tests/builders/aFrame.ts';
 import type { FrameInput } from '#tests/builders/aFrame.ts';
-import { aLine, frequencies, omegas, solved, worstError } from '#tests/builders/aLine.ts';
+import { solveFrame } from '#shared/analysis/solveFrame.ts';
+import { accepted, aLine, frequencies, omegas, solved, worstError } from '#tests/builders/aLine.ts';
 
 const METHODS = ['consistent', 'lumped'] as const;
 const SAME = 1e-9;
@@ -186,10 +187,33 @@ describe('automatic divisions up to a frequency', () => {
     expect(worstError(found, exact)).toBeLessThan(within);
   });
 
-  it('are four where no frequency is given', () => {
+  it.each([
+    ['consistent', 5e-5],
+    ['lumped', 1e-2],
+  ] as const)('resolve as many modes as are asked for, %s', (method, within) => {
     const line = aLine({ ends: ['clamped', 'free'], divisions: 1 });
     line.members[0]!.divisions = 'auto';
-    expect(solved(line).summary.freeDof).toBe(8);
+    line.materials[0]!.E = 1e4;
+    line.sections[0]!.shape = { kind: 'custom', A: 1, Iy: 1e-4, Iz: 1e-4, J: 2e-4, ky: 1, kz: 1 };
+    const found = omegas(line, method, { modes: 5 });
+    expect(
+      worstError(
+        found,
+        ROOTS.free.map((root) => root ** 2),
+      ),
+    ).toBeLessThan(within);
+  });
+
+  it('report progress that never falls while they are sought', () => {
+    const line = aLine({ ends: ['clamped', 'free'], divisions: 1 });
+    line.members[0]!.divisions = 'auto';
+    const seen: number[] = [];
+    solveFrame(
+      { document: accepted(line), method: 'consistent', stateId: null, settings: { modes: 8 } },
+      { onProgress: (fraction) => seen.push(fraction) },
+    );
+    expect(seen).toEqual(seen.toSorted((a, b) => a - b));
+    expect(seen.at(-1)).toBe(1);
   });
 });
 
