@@ -19,8 +19,8 @@ import { enqueue } from '#server/workers/jobs.ts';
 import { notify } from '#server/workers/notifications.ts';
 import { recordAudit } from './recordAudit.ts';
 
-/** Solves of one project that may wait or run at once. */
-const MOST_UNDER_WAY = 60;
+/** Solves of one project that may wait or run at once: three methods in each of the 50 states of a document. */
+const MOST_UNDER_WAY = 150;
 
 type Input = z.output<typeof contract.body>;
 
