@@ -18,11 +18,11 @@ export const compareMethod = (consistent: Solved, other: MethodSolve): ComparedM
   pairing: other.solved && pairModes(comparable(consistent), comparable(other.solved)),
 });
 
-/** Why the column of a method is empty and what to do about it; null where it is solved. */
+/** Why the column of a method is empty and what to do about it, without full stop; null where it is solved. */
 export function whyEmpty({ solved, status, problem }: MethodSolve): string | null {
   if (solved) return null;
   if (status === 'queued' || status === 'running') return 'being solved; appears here by itself';
-  if (problem !== null) return `failed: ${problem}`;
+  if (problem !== null) return `failed: ${problem.replace(/\.$/, '')}`;
   if (status === 'done') return 'loading';
   if (status === 'cancelled') return 'cancelled; press Solve at Frame again';
   return 'not solved yet for this frame and state; press Solve at Frame';
