@@ -21,7 +21,7 @@ export function MethodComparison(props: MethodComparisonProps) {
   const { consistent, others, theory, selectedMode, onChoose } = props;
   return (
     <div className="flex flex-col gap-4">
-      <table className="w-full text-left max-sm:text-sm">
+      <table className="w-full max-w-4xl text-left max-sm:text-sm">
         <caption className="pb-2 text-left text-sm text-ink-soft">
           Natural frequencies by method, paired by shape. Under each: how far it lies from
           consistent, and the MAC of both shapes.
@@ -94,8 +94,8 @@ function Partner({ mode, index, other }: PartnerProps) {
   return (
     <>
       <span className="num">{formatModeFrequency(partner)}</span>
-      <span className="num block text-sm text-ink-soft">{differenceOf(mode, partner)}</span>
-      <span className="block text-sm text-ink-soft">
+      <span className="num block text-xs text-ink-soft">{differenceOf(mode, partner)}</span>
+      <span className="block text-xs text-ink-soft">
         MAC <span className="num">{pair.mac.toFixed(3)}</span>
         {partner.number !== mode.number && `, its mode ${partner.number}`}
         {pair.subspace && ', close modes together'}

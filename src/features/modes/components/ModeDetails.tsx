@@ -44,7 +44,7 @@ export function ModeDetails({ mode, summary, document }: ModeDetailsProps) {
             {AXES.map((axis, i) => (
               <td key={axis} className="pr-4">
                 along {axis}{' '}
-                <span className="num">
+                <span className="num whitespace-nowrap">
                   {formatShare(share(mode.effectiveMass[i], summary.effectiveMass.total[i]))}
                 </span>
               </td>
