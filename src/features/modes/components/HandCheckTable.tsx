@@ -22,7 +22,13 @@ export function HandCheckTable({ checks, modes }: HandCheckTableProps) {
   return (
     <section aria-labelledby="hand-checks-heading">
       <h3 id="hand-checks-heading">Hand checks, 1 g along each axis</h3>
-      <div className="overflow-x-auto">
+      {/* Scrolls sideways on a phone; nothing in it takes the focus, so it does itself. */}
+      <div
+        className="overflow-x-auto"
+        role="group"
+        aria-labelledby="hand-checks-heading"
+        tabIndex={0}
+      >
         <table className="mt-1 w-full min-w-[40rem] text-left">
           <thead className="text-sm text-ink-soft">
             <tr className="border-b border-ink">
