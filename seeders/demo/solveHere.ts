@@ -1,13 +1,13 @@
 import { randomUUID } from 'node:crypto';
 import { runSolve } from '#shared/analysis/runSolve.ts';
-import { DEFAULT_SOLVE_SETTINGS } from '#shared/schemas/solveResult.ts';
+import { DEFAULT_SOLVE_SETTINGS, METHODS } from '#shared/schemas/solveResult.ts';
 import { requestSolves } from '#server/commands/requestSolves.ts';
 import { Draft } from '#server/models/Draft.ts';
 import { FrameDocumentRecord } from '#server/models/FrameDocumentRecord.ts';
 import type { Person } from '#server/models/Person.ts';
 import { claimSolve, finishSolve } from '#server/workers/solveQueue.ts';
 
-/** Solves the draft in every operating state with both mass kinds, in this process, as a runner would. */
+/** Solves the draft in every operating state by every method, in this process, as a runner would. */
 export async function solveHere(person: Person, projectId: string): Promise<void> {
   const draft = await Draft.findByPk(projectId, { rejectOnEmpty: true });
   const document = await FrameDocumentRecord.read(person.teamId, draft.fingerprint);
@@ -18,7 +18,7 @@ export async function solveHere(person: Person, projectId: string): Promise<void
       projectId,
       revisionId: null,
       stateId,
-      methods: ['consistent', 'lumped'],
+      methods: [...METHODS],
       settings: DEFAULT_SOLVE_SETTINGS,
     });
     for (const { id, status } of solves) {

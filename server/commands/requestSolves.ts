@@ -15,12 +15,12 @@ import { Revision } from '#server/models/Revision.ts';
 import { Solve } from '#server/models/Solve.ts';
 import { resultKey, SolveResult, type ResultSubject } from '#server/models/SolveResult.ts';
 import { authorize } from '#server/policies/policy.ts';
-import { enqueue } from '#server/workers/jobs.ts';
 import { notify } from '#server/workers/notifications.ts';
+import { queueSolve } from '#server/workers/solveQueue.ts';
 import { recordAudit } from './recordAudit.ts';
 
-/** Solves of one project that may wait or run at once. */
-const MOST_UNDER_WAY = 60;
+/** Solves of one project that may wait or run at once: three methods in each of the 50 states of a document. */
+const MOST_UNDER_WAY = 150;
 
 type Input = z.output<typeof contract.body>;
 
@@ -138,7 +138,7 @@ async function addSolve(
     },
     { transaction },
   );
-  await enqueue(transaction, 'solve', { solveId: solve.id });
+  await queueSolve(transaction, solve);
   await notify(transaction, projectId, {
     kind: 'solve',
     solveId: solve.id,

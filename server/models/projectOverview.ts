@@ -23,6 +23,8 @@ export interface ProjectOverview {
   readonly draftFingerprint: string;
   /** Lowest elastic natural frequency of the draft over the states solved so far, expected supports. */
   readonly firstFrequencyHz: number | null;
+  /** False where one of those solves is incomplete, so that a lower one may be missing. */
+  readonly firstFrequencyComplete: boolean | null;
   readonly latest: LatestRevision | null;
   readonly approved: {
     readonly number: number;
@@ -35,13 +37,19 @@ const SELECT = `
   SELECT p.id, p.team_id AS "teamId", p.name, p.machine, p.updated_at AS "updatedAt",
     ARRAY(SELECT m.person_id::text FROM project_members m WHERE m.project_id = p.id) AS "memberIds",
     d.version AS "draftVersion", d.fingerprint::text AS "draftFingerprint",
-    (SELECT min(r.first_frequency_hz) FROM solve_results r
-      WHERE r.team_id = p.team_id AND r.document_fingerprint = d.fingerprint
-        AND r.method = 'consistent'
-        AND coalesce(r.settings ->> 'supports', 'expected') = 'expected') AS "firstFrequencyHz",
+    first.hz AS "firstFrequencyHz", first.complete AS "firstFrequencyComplete",
     latest.said AS latest, approved.said AS approved
   FROM projects p
   JOIN drafts d ON d.project_id = p.id
+  LEFT JOIN LATERAL (
+    SELECT min(one.first_frequency_hz) AS hz, bool_and(one.complete) AS complete
+      FROM (SELECT DISTINCT ON (r.state_id) r.first_frequency_hz, r.complete
+              FROM solve_results r
+             WHERE r.team_id = p.team_id AND r.document_fingerprint = d.fingerprint
+               AND r.method = 'consistent'
+               AND coalesce(r.settings ->> 'supports', 'expected') = 'expected'
+             ORDER BY r.state_id, r.complete DESC, r.first_frequency_hz) AS one
+  ) first ON true
   LEFT JOIN LATERAL (
     SELECT jsonb_build_object(
         'number', r.number, 'state', r.state,

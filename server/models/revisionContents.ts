@@ -11,12 +11,20 @@ import { RevisionComment } from './RevisionComment.ts';
 import { RevisionSolve } from './RevisionSolve.ts';
 import { Solve } from './Solve.ts';
 
+/** Lowest elastic natural frequency by the consistent method over the states of a revision. */
+export interface FirstFrequency {
+  /** Hz; null where the modes are all rigid. */
+  readonly hz: number | null;
+  /** False where one of the solves is incomplete. */
+  readonly complete: boolean;
+}
+
 /** What a list says of a revision. */
 export interface ListedRevision {
   /** With submitter, authors and reviews loaded. */
   readonly revision: Revision;
-  /** Lowest elastic natural frequency by the consistent method over its states. */
-  readonly firstFrequencyHz: number | null;
+  /** Null where it has no consistent solve. */
+  readonly first: FirstFrequency | null;
 }
 
 /** What a revision carries besides its own row. */
@@ -25,7 +33,7 @@ export interface RevisionContents {
   readonly solves: readonly Solve[];
   readonly comments: readonly RevisionComment[];
   readonly lock: LockRecord | null;
-  readonly firstFrequencyHz: number | null;
+  readonly first: FirstFrequency | null;
 }
 
 /** The revisions of a project, newest first. */
@@ -47,7 +55,7 @@ export async function listRevisions(projectId: string): Promise<ListedRevision[]
   const frequencies = await firstFrequencies(revisions.map(({ id }) => id));
   return revisions.map((revision) => ({
     revision,
-    firstFrequencyHz: frequencies.get(revision.id) ?? null,
+    first: frequencies.get(revision.id) ?? null,
   }));
 }
 
@@ -69,21 +77,22 @@ export async function readContents(revision: Revision): Promise<RevisionContents
     solves: frozen.flatMap(({ solve }) => solve ?? []),
     comments,
     lock,
-    firstFrequencyHz: frequencies.get(revision.id) ?? null,
+    first: frequencies.get(revision.id) ?? null,
   };
 }
 
 async function firstFrequencies(
   revisionIds: readonly string[],
-): Promise<ReadonlyMap<string, number | null>> {
+): Promise<ReadonlyMap<string, FirstFrequency>> {
   if (revisionIds.length === 0) return new Map();
-  const rows = await database().query<{ id: string; hz: number | null }>(
-    `SELECT f.revision_id AS id, min(r.first_frequency_hz) AS hz
+  const rows = await database().query<FirstFrequency & { id: string }>(
+    `SELECT f.revision_id AS id, min(r.first_frequency_hz) AS hz,
+            bool_and(r.complete) AS complete
        FROM revision_solves f
        JOIN solve_results r ON r.team_id = f.team_id AND r.key = f.result_key
       WHERE f.revision_id IN (:revisionIds) AND r.method = 'consistent'
       GROUP BY f.revision_id`,
     { type: QueryTypes.SELECT, replacements: { revisionIds } },
   );
-  return new Map(rows.map(({ id, hz }) => [id, hz]));
+  return new Map(rows.map(({ id, ...first }) => [id, first]));
 }

@@ -20,6 +20,7 @@ export function presentProjectSummary(person: Person, project: ProjectOverview):
       approvedAt: new Date(approved.approvedAt).toISOString(),
     },
     firstFrequencyHz: project.firstFrequencyHz,
+    firstFrequencyComplete: project.firstFrequencyComplete,
     waitsFor,
     waitsForMe: isMyMove(person, project, waitsFor),
   };

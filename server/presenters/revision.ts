@@ -18,10 +18,7 @@ import { mayStep } from '#server/policies/revisionTransitions.ts';
 import { presentPerson } from './person.ts';
 
 /** @param listed with submitter, authors and reviews loaded */
-export function presentRevisionBrief({
-  revision,
-  firstFrequencyHz,
-}: ListedRevision): RevisionBrief {
+export function presentRevisionBrief({ revision, first }: ListedRevision): RevisionBrief {
   const decidedAt = revision.state === 'submitted' ? null : revision.stateSince;
   return {
     id: revision.id,
@@ -36,7 +33,8 @@ export function presentRevisionBrief({
     decidedAt: decidedAt?.toISOString() ?? null,
     requiredReviews: revision.requiredReviews,
     acceptedReviews: revision.acceptedByIds.length,
-    firstFrequencyHz,
+    firstFrequencyHz: first?.hz ?? null,
+    firstFrequencyComplete: first?.complete ?? null,
   };
 }
 
@@ -47,7 +45,7 @@ export function presentRevision(
 ): RevisionResponse {
   const { approvedBy, approvedAt, withdrawnBy, withdrawnAt, withdrawalReason } = revision;
   return {
-    ...presentRevisionBrief({ revision, firstFrequencyHz: contents.firstFrequencyHz }),
+    ...presentRevisionBrief({ revision, first: contents.first }),
     document: contents.document,
     settings: revision.settings,
     solves: contents.solves.map(({ id, stateId, method }) => ({ solveId: id, stateId, method })),

@@ -3,6 +3,7 @@ import { fn, literal, type Transaction } from 'sequelize';
 import type { SolveReply } from '#shared/analysis/runSolve.ts';
 import type { WireError } from '#shared/errors/AppError.ts';
 import { canonicalJson } from '#shared/frame/fingerprint.ts';
+import { METHODS } from '#shared/schemas/solveResult.ts';
 import { inTransaction } from '#server/models/database.ts';
 import { Solve } from '#server/models/Solve.ts';
 import { SolveResult } from '#server/models/SolveResult.ts';
@@ -33,6 +34,15 @@ const held = ({ id, runnerId, attempt }: Claim) => ({
   attempt,
   status: 'running' as const,
 });
+
+/**
+ * Hands a queued solve to the runners. Of those that wait, consistent goes before lumped and mesh-free last: the
+ * screens stand on the first, and jobs of one press carry the same time.
+ */
+export function queueSolve(transaction: Transaction, { id, method }: Solve): Promise<void> {
+  const priority = METHODS.length - METHODS.indexOf(method);
+  return enqueue(transaction, 'solve', { solveId: id }, { priority });
+}
 
 /** Takes a queued solve; null when it is not to be had (cancelled, or another runner was quicker). */
 export async function claimSolve(solveId: string, runnerId: string): Promise<Solve | null> {
@@ -162,7 +172,7 @@ async function requeue(transaction: Transaction, solve: Solve): Promise<void> {
     },
     { transaction },
   );
-  await enqueue(transaction, 'solve', { solveId: solve.id });
+  await queueSolve(transaction, solve);
   await announce(transaction, solve);
 }
 

@@ -34,6 +34,9 @@ export const projectSummary = z.object({
   /** Lowest elastic natural frequency by the consistent method over all states, of the draft as it
    * stands; null while no solve of it is in. */
   firstFrequencyHz: z.number().nullable(),
+  /** False where the solve of some state is incomplete, so that a lower one may be missing; null while no
+   * solve of the draft is in. */
+  firstFrequencyComplete: z.boolean().nullable(),
   /** Whose move it is: "draft with designers", "R2 waits for review", "R2 waits for a lead". */
   waitsFor: z.enum(['designer', 'reviewer', 'lead', 'nobody']),
   waitsForMe: z.boolean(),

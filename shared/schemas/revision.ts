@@ -66,7 +66,10 @@ export const revisionBrief = z.object({
   decidedAt: timestamp.nullable(),
   requiredReviews: z.int(),
   acceptedReviews: z.int(),
+  /** Lowest elastic natural frequency by the consistent method over all states. */
   firstFrequencyHz: z.number().nullable(),
+  /** False where one of those solves is incomplete; null where there is none. */
+  firstFrequencyComplete: z.boolean().nullable(),
 });
 export type RevisionBrief = z.infer<typeof revisionBrief>;
 

@@ -1,13 +1,16 @@
 import { Link } from 'react-router-dom';
 import type { SolveBrief } from '#shared/schemas/solve.ts';
+import { METHODS } from '#shared/schemas/solveResult.ts';
 import { formatFrequency } from '#shared/units/formatFrequency.ts';
 import { Button } from '#src/components/Button.tsx';
 import { ErrorNote } from '#src/components/ErrorNote.tsx';
+import { IncompleteMark } from '#src/components/IncompleteMark.tsx';
 import { NoticeMark } from '#src/components/Notice.tsx';
 import { Progress } from '#src/components/Progress.tsx';
 import type { ShownFrame } from '#src/hooks/useShownFrame.ts';
 import { useShownSolves } from '#src/hooks/useShownSolves.ts';
 import { useSolveActions } from '#src/hooks/useSolveActions.ts';
+import { methodName } from '#src/lib/methodName.ts';
 
 interface SolvePanelProps {
   readonly shown: ShownFrame;
@@ -26,7 +29,7 @@ const FIRST_DIGITS = 3;
 
 const isActive = ({ status }: SolveBrief): boolean => status === 'queued' || status === 'running';
 
-/** The press that solves the chosen state by consistent and lumped mass, how far it is, and what came of it. */
+/** The press that solves the chosen state by every method, how far it is, and what came of it. */
 export function SolvePanel({
   shown,
   maySolve,
@@ -38,7 +41,7 @@ export function SolvePanel({
   const { projectId, revision, document, state } = shown;
   const { current } = useShownSolves(projectId, shown);
   const { start, cancel } = useSolveActions(projectId);
-  const solves = [current.consistent, current.lumped].filter((solve) => solve !== undefined);
+  const solves = METHODS.flatMap((method) => current[method] ?? []);
   const active = solves.filter(isActive);
   const done = !changed && current.consistent?.status === 'done';
   const failed = changed ? [] : solves.filter(({ status }) => status === 'failed');
@@ -71,7 +74,7 @@ export function SolvePanel({
         {solves
           .filter((one) => !changed || isActive(one))
           .map((one) => (
-            <SolveLine key={one.id} solve={one} />
+            <SolveLine key={one.id} solve={one} name={methodName(one.method, document)} />
           ))}
         {changed && solves.length > 0 && active.length === 0 && (
           <p className="flex gap-2 text-ink-soft">
@@ -90,7 +93,7 @@ export function SolvePanel({
         </Button>
       )}
       {failed.map((one) => (
-        <Failure key={one.id} solve={one} onShow={onShow} />
+        <Failure key={one.id} solve={one} name={methodName(one.method, document)} onShow={onShow} />
       ))}
       {start.isError && <ErrorNote error={start.error} />}
       {cancel.isError && <ErrorNote error={cancel.error} />}
@@ -103,21 +106,23 @@ export function SolvePanel({
   );
 }
 
-function SolveLine({ solve }: { solve: SolveBrief }) {
+function SolveLine({ solve, name }: { solve: SolveBrief; name: string }) {
   if (isActive(solve)) {
     return (
       <div>
         <span className="text-ink-soft">
-          {solve.method}: {solve.status === 'queued' ? 'waits for its turn' : solve.stage}
+          {name}: {solve.status === 'queued' ? 'waits for its turn' : solve.stage}
         </span>
-        <Progress label={`Solve, ${solve.method} mass`} value={solve.progress} />
+        <Progress label={`Solve, ${name}`} value={solve.progress} />
       </div>
     );
   }
   return (
     <p className="flex justify-between gap-2">
-      <span className="text-ink-soft">{solve.method}</span>
-      <span>{outcomeOf(solve)}</span>
+      <span className="text-ink-soft">{name}</span>
+      <span className="shrink-0 text-right">
+        {outcomeOf(solve)} {solve.complete === false && <IncompleteMark />}
+      </span>
     </p>
   );
 }
@@ -125,22 +130,26 @@ function SolveLine({ solve }: { solve: SolveBrief }) {
 function outcomeOf(solve: SolveBrief): string {
   if (solve.status === 'failed') return 'failed';
   if (solve.status === 'cancelled') return 'cancelled';
-  const first =
-    solve.firstFrequencyHz === null
-      ? 'solved'
-      : `first ${formatFrequency(solve.firstFrequencyHz, FIRST_DIGITS)}`;
-  return solve.complete === false ? `${first}, incomplete` : first;
+  return solve.firstFrequencyHz === null
+    ? 'solved'
+    : `first ${formatFrequency(solve.firstFrequencyHz, FIRST_DIGITS)}`;
+}
+
+interface FailureProps {
+  readonly solve: SolveBrief;
+  readonly name: string;
+  readonly onShow: SolvePanelProps['onShow'];
 }
 
 /** Why a solve failed: each reason, and the way to the thing it names. */
-function Failure({ solve, onShow }: { solve: SolveBrief; onShow: SolvePanelProps['onShow'] }) {
+function Failure({ solve, name, onShow }: FailureProps) {
   const { error } = solve;
   if (!error) return null;
   return (
     <div role="alert" className="max-h-40 overflow-auto border-l-2 border-signal pl-2">
       <p>
         <NoticeMark kind="signal" className="mr-1 align-text-bottom" />
-        {solve.method}: {error.message}
+        {name}: {error.message}
       </p>
       <ul>
         {error.issues.map(({ path, message }, index) => (

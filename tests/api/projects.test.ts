@@ -1,13 +1,21 @@
-import { randomUUID } from 'node:crypto';
+import { createHash, randomUUID } from 'node:crypto';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import type { ProjectResponse, ProjectSummary } from '#shared/schemas/project.ts';
+import { DEFAULT_SOLVE_SETTINGS } from '#shared/schemas/solveResult.ts';
 import type { Person } from '#server/models/Person.ts';
+import { SolveResult } from '#server/models/SolveResult.ts';
 import { aPortal } from '#tests/builders/aFrame.ts';
 import { aPerson } from '#tests/builders/aPerson.ts';
 import { aTeam } from '#tests/builders/aTeam.ts';
 import { startApp, type TestApp } from './setup/app.ts';
 import { signedIn, visitor, type Client } from './setup/client.ts';
 import { aProject } from './setup/project.ts';
+
+const sha256 = (text: string): string => createHash('sha256').update(text).digest('hex');
+const NO_TIME = {
+  ...{ read: 0, assemble: 0, order: 0, symbolic: 0, factor: 0 },
+  ...{ iterate: 0, finish: 0, certify: 0, total: 0 },
+};
 
 let app: TestApp;
 let designer: Client;
@@ -42,6 +50,7 @@ describe('making a project', () => {
     expect(project).toMatchObject({
       ...{ name: 'Stand 4', machine: 'Press 12', draftVersion: 1, waitsFor: 'designer' },
       ...{ waitsForMe: true, latestRevision: null, approvedRevision: null, firstFrequencyHz: null },
+      firstFrequencyComplete: null,
     });
     expect(project.abilities).toEqual({
       ...{ edit: true, rename: true, manageMembers: true, solve: true, submit: true },
@@ -122,6 +131,29 @@ describe('the list', () => {
     const twice = await designer.put(`/api/projects/${id}/members/${guestPerson.id}`).expect(200);
     expect((twice.body as ProjectResponse).members).toHaveLength(2);
     await foreigner.put(`/api/projects/${id}/members/${foreignPerson.id}`).expect(404);
+  });
+});
+
+describe('first natural frequency of the draft', () => {
+  it('is marked incomplete until the solve of every state is complete', async () => {
+    const project = await aProject(designer);
+    const { teamId } = guestPerson;
+    /** What a solver would have stored; the summary is not looked at here. */
+    const store = (stateId: string, digit: string, complete: boolean, firstFrequencyHz: number) =>
+      SolveResult.create({
+        ...{ teamId, key: digit.repeat(64), stateId, complete, firstFrequencyHz },
+        ...{ documentFingerprint: project.draftFingerprint, method: 'consistent' },
+        ...{ settings: DEFAULT_SOLVE_SETTINGS, solverVersion: 'of the test', timing: NO_TIME },
+        ...{ summary: '{}', summaryFingerprint: sha256('{}') },
+        ...{ shapes: Buffer.alloc(0), shapesFingerprint: sha256('') },
+      });
+    const first = async () => (await list(designer)).find(({ id }) => id === project.id);
+    await store('full', 'a', true, 42);
+    expect(await first()).toMatchObject({ firstFrequencyHz: 42, firstFrequencyComplete: true });
+    await store('empty', 'b', false, 50);
+    expect(await first()).toMatchObject({ firstFrequencyHz: 42, firstFrequencyComplete: false });
+    await store('empty', 'c', true, 41);
+    expect(await first()).toMatchObject({ firstFrequencyHz: 41, firstFrequencyComplete: true });
   });
 });
 

@@ -81,6 +81,8 @@ describe('submitting', () => {
     const submitted = (await designer.post(path, note).expect(201)).body as RevisionResponse;
     expect(submitted).toMatchObject({ number: 1, state: 'submitted', acceptedReviews: 0 });
     expect(submitted.solves).toHaveLength(4);
+    expect(submitted.firstFrequencyHz).toBeGreaterThan(0);
+    expect(submitted.firstFrequencyComplete).toBe(true);
     expect(submitted.documentFingerprint).toBe(project.draftFingerprint);
     expect(submitted.authors.map(({ id }) => id)).toEqual([people.designer.id]);
     await designer.post(path, note).expect(409);

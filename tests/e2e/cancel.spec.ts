@@ -7,7 +7,7 @@ test('a running solve is cancelled, and the queue goes on with the next', async 
   await solveButton(page).click();
   await expect(page.getByRole('progressbar', { name: 'Solve, consistent mass' })).toBeVisible();
   await page.getByRole('button', { name: 'Cancel', exact: true }).click();
-  await expect(page.getByText('cancelled', { exact: true })).toHaveCount(2);
+  await expect(page.getByText('cancelled', { exact: true })).toHaveCount(3);
   await expect(page.getByRole('progressbar')).toHaveCount(0);
   await expect(solveButton(page)).toBeEnabled();
 

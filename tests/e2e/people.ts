@@ -93,11 +93,11 @@ export async function importFrame(page: Page, name: string, document: unknown): 
 export const solveButton = (page: Page): Locator =>
   page.getByRole('button', { name: 'Solve', exact: true });
 
-/** Presses Solve and waits until both mass kinds are in. */
+/** Presses Solve and waits until every method is in. */
 export async function solveIt(page: Page): Promise<void> {
   await solveButton(page).click();
   await expect(page.getByRole('link', { name: 'See the modes' })).toBeVisible();
-  await expect(page.getByText(/^first \d/)).toHaveCount(2);
+  await expect(page.getByText(/^first \d/)).toHaveCount(3);
 }
 
 export const readFixture = (name: string): unknown =>

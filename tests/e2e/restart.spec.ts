@@ -22,7 +22,7 @@ for (const { how, end } of INTERRUPTIONS) {
     await startProduct();
 
     // The page is never reloaded: it has to find the server again by itself.
-    await expect(page.getByText(/^first \d/)).toHaveCount(2, { timeout: 90_000 });
+    await expect(page.getByText(/^first \d/)).toHaveCount(3, { timeout: 90_000 });
     await expect(page.getByRole('progressbar')).toHaveCount(0);
     await page.getByRole('link', { name: 'See the modes' }).click();
     await expect(page.getByRole('region', { name: 'Mode 1' })).toBeVisible();
@@ -30,6 +30,6 @@ for (const { how, end } of INTERRUPTIONS) {
     await page
       .getByRole('combobox', { name: 'Project' })
       .selectOption({ label: `Rack, server ${how}` });
-    await expect(page.getByText('asked for a solve: consistent, lumped')).toHaveCount(1);
+    await expect(page.getByText('asked for a solve: consistent, lumped, mesh-free')).toHaveCount(1);
   });
 }

@@ -1,6 +1,7 @@
 import { useState } from 'react';
 import type { ModeSummary, SolveSummary } from '#shared/schemas/solveResult.ts';
 import { formatFrequency } from '#shared/units/formatFrequency.ts';
+import { IncompleteMark } from '#src/components/IncompleteMark.tsx';
 import { useElementWidth } from '#src/hooks/useElementWidth.ts';
 import type { Preview } from '#src/lib/preview.ts';
 import { frequencyScale, type ScaleKind } from '../state/frequencyScale.ts';
@@ -15,7 +16,7 @@ export interface FrequencyLineProps {
   readonly preview: Preview | null;
   /** What the line shows, in words: "Draft, tank full, consistent mass". */
   readonly caption: string;
-  /** Everything that limits what the line says: stale, incomplete, not solved yet. */
+  /** Everything that limits what the line says: stale, solving, failed. */
   readonly remarks: readonly string[];
   readonly selectedMode: number | null;
   readonly hrefFor: (mode: ModeSummary) => string;
@@ -28,9 +29,6 @@ const SIDE_PX = 36;
 const DIGITS = 4;
 
 const formatHz = (mode: ModeSummary): string => formatFrequency(mode.frequencyHz, DIGITS);
-
-const describe = (mode: ModeSummary): string =>
-  `Mode ${mode.number}, ${formatHz(mode)}, ${mode.name}`;
 
 /**
  * The frequency line along the foot of every project screen: natural frequencies on a scale of Hz with the
@@ -48,12 +46,20 @@ export function FrequencyLine(props: FrequencyLineProps) {
   );
   const marks = width > 0 ? layOutMarks(modes, scale, formatHz) : [];
   const rigid = summary?.rigidBodyModes ?? 0;
+  const incomplete = summary?.complete === false;
+  const describe = (mode: ModeSummary): string =>
+    `Mode ${mode.number}, ${formatHz(mode)}, ${mode.name}${incomplete ? ' (of an incomplete solve)' : ''}`;
 
   return (
     <section aria-label="Frequency line" className="border-t border-ink bg-sheet pb-1">
       <div className="flex flex-wrap items-baseline gap-x-4 gap-y-0.5 px-4 pt-1 text-xs text-ink-soft">
         <span className="text-ink">{caption}</span>
         {rigid > 0 && <span>{rigid} rigid-body modes at 0 Hz</span>}
+        {incomplete && (
+          <span className="text-signal-text">
+            <IncompleteMark />: modes may be missing
+          </span>
+        )}
         {remarks.map((remark) => (
           <span key={remark} className="text-caution">
             <span aria-hidden="true">△ </span>

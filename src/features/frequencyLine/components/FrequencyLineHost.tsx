@@ -38,7 +38,6 @@ export function FrequencyLineHost() {
   else if (summary && !own) remarks.push('stale: the draft has changed since this was solved');
   if (consistent?.status === 'queued' || consistent?.status === 'running') remarks.push('solving');
   if (consistent?.status === 'failed') remarks.push('the last solve failed');
-  if (summary && !summary.complete) remarks.push('incomplete: modes may be missing');
 
   const onModes = pathname.endsWith('/modes');
   const selected = onModes ? Number(search.get('mode') ?? 1) : null;

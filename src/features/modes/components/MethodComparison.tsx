@@ -1,103 +1,128 @@
-import type { ModePairing } from '#shared/analysis/pairModes.ts';
-import type { ModeSummary } from '#shared/schemas/solveResult.ts';
-import { Notice } from '#src/components/Notice.tsx';
+import type { ReactNode } from 'react';
+import type { ModeSummary, SolveSummary } from '#shared/schemas/solveResult.ts';
+import { IncompleteMark } from '#src/components/IncompleteMark.tsx';
+import { whyEmpty, type ComparedMethod } from '../state/comparedMethod.ts';
 import { formatDifference, formatModeFrequency } from '../state/formatMode.ts';
 
 interface MethodComparisonProps {
-  readonly consistent: readonly ModeSummary[];
-  readonly lumped: readonly ModeSummary[];
-  readonly pairing: ModePairing;
+  readonly consistent: Pick<SolveSummary, 'modes' | 'complete'>;
+  /** In the order of the columns. */
+  readonly others: readonly ComparedMethod[];
+  /** The beam theory whose values mesh-free gives. */
+  readonly theory: string;
   readonly selectedMode: number;
   readonly onChoose: (mode: number) => void;
 }
 
-/** Lumped beside consistent, mode by mode, paired by shape; what has no partner is listed too. */
+const TITLES = { consistent: 'Consistent', lumped: 'Lumped', 'mesh-free': 'Mesh-free' } as const;
+
+/** Consistent, lumped and mesh-free side by side, paired by shape; what has no partner is listed too. */
 export function MethodComparison(props: MethodComparisonProps) {
-  const { consistent, lumped, pairing, selectedMode, onChoose } = props;
+  const { consistent, others, theory, selectedMode, onChoose } = props;
   return (
     <div className="flex flex-col gap-4">
-      <Notice kind="caution" word="What agreement means">
-        That lumped and consistent agree says only that the mesh is fine enough. It says nothing
-        about supports, joints or the choice of beam theory, which move these values far more.
-        Consistent mass comes from above the same continuous model, lumped usually from below, but
-        that is no guarantee.
-      </Notice>
-      <div className="overflow-x-auto">
-        <table className="w-full min-w-[40rem] text-left">
-          <caption className="sr-only">
-            Modes by consistent and lumped mass, paired by shape
-          </caption>
-          <thead className="text-sm text-ink-soft">
-            <tr className="border-b border-ink">
-              <Head>Consistent</Head>
-              <Head right>Frequency</Head>
-              <Head>Lumped</Head>
-              <Head right>Frequency</Head>
-              <Head right>Lumped lies</Head>
-              <Head right>MAC</Head>
-              <Head>Motion</Head>
-            </tr>
-          </thead>
-          <tbody>
-            {pairing.pairs.map((pair) => {
-              const a = consistent[pair.a];
-              const b = lumped[pair.b];
-              if (!a || !b) return null;
-              return (
-                <tr
-                  key={a.number}
-                  aria-selected={a.number === selectedMode}
-                  className="border-b border-rule aria-selected:bg-ground aria-selected:font-medium"
+      <table className="w-full max-w-4xl text-left max-sm:text-sm">
+        <caption className="pb-2 text-left text-sm text-ink-soft">
+          Natural frequencies by method, paired by shape. Under each: how far it lies from
+          consistent, and the MAC of both shapes.
+        </caption>
+        <thead className="text-sm text-ink-soft">
+          <tr className="border-b border-ink">
+            <th scope="col" className="py-1 pr-2 align-bottom font-normal">
+              Mode
+            </th>
+            <Head title={TITLES.consistent} complete={consistent.complete} />
+            {others.map(({ method, solved }) => (
+              <Head
+                key={method}
+                title={TITLES[method]}
+                note={method === 'mesh-free' ? theory : undefined}
+                complete={solved?.summary.complete ?? true}
+              />
+            ))}
+          </tr>
+        </thead>
+        <tbody>
+          {consistent.modes.map((mode, index) => (
+            <tr
+              key={mode.number}
+              aria-selected={mode.number === selectedMode}
+              className="border-b border-rule align-top aria-selected:bg-ground aria-selected:font-medium"
+            >
+              <th scope="row" className="py-1 pr-2 font-normal">
+                <button
+                  type="button"
+                  className="link min-h-6 min-w-6 cursor-pointer"
+                  onClick={() => onChoose(mode.number)}
                 >
-                  <td className="py-1 pr-4">
-                    <button
-                      type="button"
-                      className="link min-h-6 min-w-6 cursor-pointer"
-                      onClick={() => onChoose(a.number)}
-                    >
-                      Mode {a.number}
-                    </button>
-                  </td>
-                  <Value>{formatModeFrequency(a)}</Value>
-                  <td className="py-1 pr-4">Mode {b.number}</td>
-                  <Value>{formatModeFrequency(b)}</Value>
-                  <Value>{differenceOf(a, b)}</Value>
-                  <Value>{pair.mac.toFixed(3)}</Value>
-                  <td className="py-1">
-                    {a.name}
-                    {pair.subspace && (
-                      <span className="text-ink-soft"> (close modes, compared together)</span>
-                    )}
-                  </td>
-                </tr>
-              );
-            })}
-          </tbody>
-        </table>
-      </div>
-      <Unpaired
-        title="Consistent modes without a lumped partner"
-        modes={pick(consistent, pairing.unpairedA)}
-      />
-      <Unpaired
-        title="Lumped modes without a consistent partner"
-        modes={pick(lumped, pairing.unpairedB)}
-      />
+                  Mode {mode.number}
+                </button>
+                <span className="block text-sm text-ink-soft">{mode.name}</span>
+              </th>
+              <Cell>
+                <span className="num">{formatModeFrequency(mode)}</span>
+              </Cell>
+              {others.map((other) => (
+                <Cell key={other.method}>
+                  <Partner mode={mode} index={index} other={other} />
+                </Cell>
+              ))}
+            </tr>
+          ))}
+        </tbody>
+      </table>
+      {others.map((other) => (
+        <Remainder key={other.method} other={other} />
+      ))}
     </div>
   );
 }
 
-const pick = (modes: readonly ModeSummary[], indices: readonly number[]): ModeSummary[] =>
-  indices.flatMap((i) => modes[i] ?? []);
+interface PartnerProps {
+  readonly mode: ModeSummary;
+  /** 0-based place of the mode in its solve. */
+  readonly index: number;
+  readonly other: ComparedMethod;
+}
+
+function Partner({ mode, index, other }: PartnerProps) {
+  const pair = other.pairing?.pairs.find(({ a }) => a === index);
+  const partner = pair && other.solved?.summary.modes[pair.b];
+  if (!partner) {
+    return <span className="text-sm text-ink-soft">{other.solved ? 'no such shape' : '–'}</span>;
+  }
+  return (
+    <>
+      <span className="num">{formatModeFrequency(partner)}</span>
+      <span className="num block text-xs text-ink-soft">{differenceOf(mode, partner)}</span>
+      <span className="block text-xs text-ink-soft">
+        MAC <span className="num">{pair.mac.toFixed(3)}</span>
+        {partner.number !== mode.number && `, its mode ${partner.number}`}
+        {pair.subspace && ', close modes together'}
+      </span>
+    </>
+  );
+}
 
 const differenceOf = (a: ModeSummary, b: ModeSummary): string =>
   a.frequencyHz > 0 ? formatDifference(b.frequencyHz / a.frequencyHz - 1) : '0.00 %';
 
-function Unpaired({ title, modes }: { title: string; modes: readonly ModeSummary[] }) {
+/** What a column cannot say in its rows: why it is empty, or which of its modes have no partner. */
+function Remainder({ other }: { other: ComparedMethod }) {
+  const title = TITLES[other.method];
+  const empty = whyEmpty(other);
+  if (empty !== null) {
+    return (
+      <p>
+        {title}: {empty}.
+      </p>
+    );
+  }
+  const modes = other.pairing?.unpairedB.flatMap((i) => other.solved?.summary.modes[i] ?? []) ?? [];
   if (modes.length === 0) return null;
   return (
     <div>
-      <h3>{title}</h3>
+      <h3>{title} modes without a consistent partner</h3>
       <ul className="mt-1">
         {modes.map((mode) => (
           <li key={mode.number}>
@@ -110,14 +135,26 @@ function Unpaired({ title, modes }: { title: string; modes: readonly ModeSummary
   );
 }
 
-function Head({ children, right = false }: { children: string; right?: boolean }) {
+interface HeadProps {
+  readonly title: string;
+  readonly note?: string | undefined;
+  readonly complete: boolean;
+}
+
+function Head({ title, note, complete }: HeadProps) {
   return (
-    <th scope="col" className={`py-1 pr-4 font-normal ${right ? 'text-right' : ''}`}>
-      {children}
+    <th scope="col" className="py-1 pl-2 text-right align-bottom font-normal">
+      {title}
+      {note !== undefined && <span className="block">{note}</span>}
+      {!complete && (
+        <span className="block">
+          <IncompleteMark />
+        </span>
+      )}
     </th>
   );
 }
 
-const Value = ({ children }: { children: string }) => (
-  <td className="num py-1 pr-4 text-right">{children}</td>
+const Cell = ({ children }: { children: ReactNode }) => (
+  <td className="py-1 pl-2 text-right">{children}</td>
 );

@@ -1,6 +1,8 @@
 import type { FrameDocument } from '#shared/schemas/frameDocument.ts';
 import type { EnergyShare, ModeSummary, SolveSummary } from '#shared/schemas/solveResult.ts';
+import { HandCheckBlock } from './HandCheckBlock.tsx';
 import { formatModeFrequency, formatShare } from '../state/formatMode.ts';
+import { checksOf } from '../state/handCheckBounds.ts';
 import { partName } from '../state/partName.ts';
 
 interface ModeDetailsProps {
@@ -15,6 +17,7 @@ const PARTS_SHOWN = 4;
 
 /** What is known of one mode: how much of the frame's mass goes with it and where its energy sits. */
 export function ModeDetails({ mode, summary, document }: ModeDetailsProps) {
+  const { handChecks } = summary;
   const strain = [
     ...mode.strainShares.members.map((one) => named(one, partName(document, 'members', one.id))),
     ...mode.strainShares.joints.map((one) => named(one, `joint, ${one.id}`)),
@@ -41,7 +44,7 @@ export function ModeDetails({ mode, summary, document }: ModeDetailsProps) {
             {AXES.map((axis, i) => (
               <td key={axis} className="pr-4">
                 along {axis}{' '}
-                <span className="num">
+                <span className="num whitespace-nowrap">
                   {formatShare(share(mode.effectiveMass[i], summary.effectiveMass.total[i]))}
                 </span>
               </td>
@@ -49,6 +52,12 @@ export function ModeDetails({ mode, summary, document }: ModeDetailsProps) {
           </tr>
         </tbody>
       </table>
+      {checksOf(handChecks?.axes ?? [], mode).map((check) => (
+        <HandCheckBlock key={check.axis} check={check} mode={mode} modes={summary.modes} />
+      ))}
+      {handChecks && handChecks.none !== null && (
+        <p className="text-ink-soft">Hand checks: {handChecks.none}</p>
+      )}
       {mode.kind !== 'rigid' && <Shares title="Strain energy sits in" shares={strain} />}
       <Shares title="Moving mass" shares={kinetic} />
       <p className="text-ink-soft">

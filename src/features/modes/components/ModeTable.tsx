@@ -1,5 +1,6 @@
-import type { ModeSummary, SolveSummary } from '#shared/schemas/solveResult.ts';
-import { formatModeFrequency, formatShare } from '../state/formatMode.ts';
+import type { HandCheck, ModeSummary, SolveSummary } from '#shared/schemas/solveResult.ts';
+import { formatCheck, formatModeFrequency, formatShare } from '../state/formatMode.ts';
+import { checksOf } from '../state/handCheckBounds.ts';
 
 interface ModeTableProps {
   readonly summary: SolveSummary;
@@ -42,6 +43,7 @@ export function ModeTable({ summary, selectedMode, onChoose }: ModeTableProps) {
             <ModeRow
               key={mode.number}
               mode={mode}
+              checks={checksOf(summary.handChecks?.axes ?? [], mode)}
               selected={mode.number === selectedMode}
               ofWhole={ofWhole}
               onChoose={onChoose}
@@ -73,12 +75,13 @@ function countSentence(count: SolveSummary['count']): string {
 
 interface ModeRowProps {
   readonly mode: ModeSummary;
+  readonly checks: readonly HandCheck[];
   readonly selected: boolean;
   readonly ofWhole: (values: readonly number[], i: number) => string;
   readonly onChoose: (mode: number) => void;
 }
 
-function ModeRow({ mode, selected, ofWhole, onChoose }: ModeRowProps) {
+function ModeRow({ mode, checks, selected, ofWhole, onChoose }: ModeRowProps) {
   return (
     <tr
       aria-selected={selected}
@@ -95,7 +98,14 @@ function ModeRow({ mode, selected, ofWhole, onChoose }: ModeRowProps) {
       </td>
       <td className="num py-1 pr-4 text-right">{formatModeFrequency(mode)}</td>
       <td className="num py-1 pr-4 text-right">{(mode.frequencyHz * 60).toFixed(0)} rpm</td>
-      <td className="py-1 pr-4">{mode.name}</td>
+      <td className="py-1 pr-4">
+        {mode.name}
+        {checks.map(({ axis, rayleigh }) => (
+          <span key={axis} className="block text-sm text-ink-soft">
+            hand check along {axis}: Rayleigh <span className="num">{formatCheck(rayleigh)}</span>
+          </span>
+        ))}
+      </td>
       {DIRECTIONS.map((direction, i) => (
         <td key={direction} className="num py-1 pr-4 text-right">
           {ofWhole(mode.effectiveMass, i)}

@@ -1,3 +1,4 @@
+import { useMemo } from 'react';
 import { Link, useParams, useSearchParams } from 'react-router-dom';
 import { Button } from '#src/components/Button.tsx';
 import { EmptyState } from '#src/components/EmptyState.tsx';
@@ -9,9 +10,10 @@ import { useShownFrame } from '#src/hooks/useShownFrame.ts';
 import { useShownSolves } from '#src/hooks/useShownSolves.ts';
 import { useSolve } from '#src/hooks/useSolve.ts';
 import { useSolveShapes } from '#src/hooks/useSolveShapes.ts';
+import { useMethodSolve } from '../api/useMethodSolve.ts';
 import { ModesSheet } from './ModesSheet.tsx';
 
-/** Modes: one frame moving in its mode, all of them, and lumped beside consistent. */
+/** Modes: one frame moving in its mode, all of them, and the methods beside each other. */
 export default function ModesPage() {
   const { projectId = '' } = useParams();
   const [search] = useSearchParams();
@@ -19,11 +21,18 @@ export default function ModesPage() {
   const { shown, error, noSuchRevision } = useShownFrame(projectId);
   const { current, stale, loading } = useShownSolves(projectId, shown);
   const consistentId = current.consistent?.status === 'done' ? current.consistent.id : stale?.id;
-  const lumpedId = current.lumped?.status === 'done' ? current.lumped.id : null;
   const consistent = useSolve(consistentId ?? null);
-  const lumped = useSolve(lumpedId);
   const shapes = useSolveShapes(consistentId ?? null);
-  const lumpedShapes = useSolveShapes(lumpedId);
+  const summary = consistent.data?.summary;
+  const solved = useMemo(
+    () => (summary && shapes.data ? { summary, shapes: shapes.data } : null),
+    [summary, shapes.data],
+  );
+  // Beside a stale result stands nothing: the others are of another frame.
+  const isStale = current.consistent?.status !== 'done';
+  const lumped = useMethodSolve('lumped', isStale ? undefined : current.lumped);
+  const meshFree = useMethodSolve('mesh-free', isStale ? undefined : current['mesh-free']);
+  const others = useMemo(() => [lumped, meshFree], [lumped, meshFree]);
 
   const heading = <PageHeading title={`Modes, ${project.data?.name ?? ''}`} hidden />;
   const failure = error ?? project.error ?? consistent.error ?? shapes.error;
@@ -78,7 +87,7 @@ export default function ModesPage() {
       </div>
     );
   }
-  if (!consistent.data?.summary || !shapes.data) {
+  if (!solved) {
     return (
       <div className="p-6">
         {heading}
@@ -86,11 +95,6 @@ export default function ModesPage() {
       </div>
     );
   }
-  const isStale = current.consistent?.status !== 'done';
-  const beside =
-    !isStale && lumped.data?.summary && lumpedShapes.data
-      ? { summary: lumped.data.summary, shapes: lumpedShapes.data }
-      : null;
   return (
     <>
       {heading}
@@ -99,8 +103,8 @@ export default function ModesPage() {
         project={project.data}
         shown={shown}
         stale={isStale}
-        consistent={{ summary: consistent.data.summary, shapes: shapes.data }}
-        lumped={beside}
+        consistent={solved}
+        others={others}
       />
     </>
   );

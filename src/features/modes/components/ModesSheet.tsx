@@ -1,17 +1,17 @@
 import { useEffect, useMemo, useState } from 'react';
 import { useSearchParams } from 'react-router-dom';
-import { pairModes } from '#shared/analysis/pairModes.ts';
-import type { ModeShapes } from '#shared/analysis/shapesFile.ts';
 import { applyState } from '#shared/frame/applyState.ts';
 import type { ProjectResponse } from '#shared/schemas/project.ts';
-import type { SolveSummary } from '#shared/schemas/solveResult.ts';
 import { Notice } from '#src/components/Notice.tsx';
 import { useReducedMotion } from '#src/hooks/useReducedMotion.ts';
 import type { ShownFrame } from '#src/hooks/useShownFrame.ts';
+import { methodName } from '#src/lib/methodName.ts';
 import { createCameraStore } from '#src/viewer/camera/cameraStore.ts';
+import type { MethodSolve, Solved } from '../api/useMethodSolve.ts';
 import { createPlayback } from '../state/playback.ts';
 import { LOOKS, type Look } from '../state/looks.ts';
-import { MethodComparison } from './MethodComparison.tsx';
+import { HandCheckTable } from './HandCheckTable.tsx';
+import { MethodsBeside } from './MethodsBeside.tsx';
 import { ModeDetails } from './ModeDetails.tsx';
 import { ModeSheet } from './ModeSheet.tsx';
 import { ModeStrip } from './ModeStrip.tsx';
@@ -20,22 +20,18 @@ import { ModeTitleBlock } from './ModeTitleBlock.tsx';
 import { MovingFrame } from './MovingFrame.tsx';
 import { PlaybackBar } from './PlaybackBar.tsx';
 
-export interface Solved {
-  readonly summary: SolveSummary;
-  readonly shapes: ModeShapes;
-}
-
 interface ModesSheetProps {
   readonly project: ProjectResponse;
   readonly shown: ShownFrame;
   /** The result is of an older draft than the one there is now. */
   readonly stale: boolean;
   readonly consistent: Solved;
-  readonly lumped: Solved | null;
+  /** Lumped and mesh-free, as far as they are. */
+  readonly others: readonly MethodSolve[];
 }
 
-/** The sheet: the moving frame fills it, or two side by side, the small pictures, or the table. */
-export function ModesSheet({ project, shown, stale, consistent, lumped }: ModesSheetProps) {
+/** The sheet: the moving frame fills it, or two methods side by side, the small pictures, or the table. */
+export function ModesSheet({ project, shown, stale, consistent, others }: ModesSheetProps) {
   const [search, setSearch] = useSearchParams();
   const [exaggeration, setExaggeration] = useState(1);
   const [playback] = useState(() => createPlayback());
@@ -66,20 +62,6 @@ export function ModesSheet({ project, shown, stale, consistent, lumped }: ModesS
 
   const stateId = shown.state?.id ?? null;
   const inState = useMemo(() => applyState(shown.document, stateId), [shown.document, stateId]);
-  const pairing = useMemo(
-    () =>
-      lumped
-        ? pairModes(
-            { shapes, frequenciesHz: summary.modes.map((one) => one.frequencyHz) },
-            {
-              shapes: lumped.shapes,
-              frequenciesHz: lumped.summary.modes.map((one) => one.frequencyHz),
-            },
-          )
-        : null,
-    [shapes, summary, lumped],
-  );
-
   if (!mode) {
     return (
       <div className="p-6">
@@ -89,8 +71,6 @@ export function ModesSheet({ project, shown, stale, consistent, lumped }: ModesS
       </div>
     );
   }
-  const partner = pairing?.pairs.find((pair) => summary.modes[pair.a]?.number === mode.number);
-  const partnerMode = partner ? lumped?.summary.modes[partner.b] : undefined;
   const moving = { document: inState, camera, playback, exaggeration };
   const playbackBar = (
     <PlaybackBar playback={playback} exaggeration={exaggeration} onExaggeration={setExaggeration} />
@@ -131,54 +111,27 @@ export function ModesSheet({ project, shown, stale, consistent, lumped }: ModesS
             shapes={shapes}
             index={summary.modes.indexOf(mode)}
             mode={mode}
-            label="consistent mass"
+            label={methodName(summary.method, shown.document)}
+            complete={summary.complete}
             tools={playbackBar}
           />
-          <div className="border-rule bg-sheet p-4 max-md:border-t md:absolute md:top-14 md:left-3 md:w-64 md:border">
+          <div
+            className="border-rule bg-sheet p-4 max-md:border-t md:absolute md:top-14 md:left-3 md:max-h-[calc(100%-5rem)] md:w-72 md:overflow-y-auto md:border"
+            tabIndex={0}
+          >
             <ModeDetails mode={mode} summary={summary} document={shown.document} />
           </div>
         </div>
       )}
       {look === 'beside' && (
-        <div className="min-h-0 flex-1 overflow-y-auto">
-          <div className="grid h-[46%] min-h-72 divide-rule border-b border-rule max-md:h-auto max-md:divide-y md:grid-cols-2 md:divide-x">
-            <MovingFrame
-              {...moving}
-              shapes={shapes}
-              index={summary.modes.indexOf(mode)}
-              mode={mode}
-              label="consistent mass"
-              tools={playbackBar}
-            />
-            {lumped && partner && partnerMode ? (
-              <MovingFrame
-                {...moving}
-                shapes={lumped.shapes}
-                index={partner.b}
-                mode={partnerMode}
-                label="lumped mass"
-                bare
-              />
-            ) : (
-              <p className="self-center p-6 text-ink-soft">
-                {lumped
-                  ? 'No lumped mode has this shape within ±30 % of its frequency.'
-                  : 'Lumped mass is not solved for this document and state yet. Solve at Frame.'}
-              </p>
-            )}
-          </div>
-          <div className="p-4 sm:px-6">
-            {pairing && lumped && (
-              <MethodComparison
-                consistent={summary.modes}
-                lumped={lumped.summary.modes}
-                pairing={pairing}
-                selectedMode={mode.number}
-                onChoose={choose}
-              />
-            )}
-          </div>
-        </div>
+        <MethodsBeside
+          consistent={consistent}
+          others={others}
+          mode={mode}
+          moving={moving}
+          tools={playbackBar}
+          onChoose={choose}
+        />
       )}
       {look === 'sheet' && (
         <div className="min-h-0 flex-1 overflow-y-auto p-4">
@@ -194,8 +147,11 @@ export function ModesSheet({ project, shown, stale, consistent, lumped }: ModesS
         </div>
       )}
       {look === 'table' && (
-        <div className="min-h-0 flex-1 overflow-y-auto p-4">
+        <div className="min-h-0 flex-1 space-y-6 overflow-y-auto p-4">
           <ModeTable summary={summary} selectedMode={mode.number} onChoose={choose} />
+          {summary.handChecks && (
+            <HandCheckTable checks={summary.handChecks} modes={summary.modes} />
+          )}
         </div>
       )}
       {look === 'one' && <ModeTitleBlock project={project} shown={shown} summary={summary} />}

@@ -2,6 +2,7 @@ import { useMemo, type ReactNode } from 'react';
 import type { ModeShapes } from '#shared/analysis/shapesFile.ts';
 import type { FrameDocument } from '#shared/schemas/frameDocument.ts';
 import type { ModeSummary } from '#shared/schemas/solveResult.ts';
+import { IncompleteMark } from '#src/components/IncompleteMark.tsx';
 import type { CameraStore } from '#src/viewer/camera/cameraStore.ts';
 import { FrameView } from '#src/viewer/FrameView.tsx';
 import { boundsOf, sizeOf } from '#src/viewer/model/bounds.ts';
@@ -16,6 +17,8 @@ interface MovingFrameProps {
   readonly mode: ModeSummary;
   /** "consistent mass": also stands on the view. */
   readonly label: string;
+  /** Of the solve: false where modes may be missing. */
+  readonly complete: boolean;
   readonly camera: CameraStore;
   readonly playback: Playback;
   readonly exaggeration: number;
@@ -57,7 +60,7 @@ export function MovingFrame(props: MovingFrameProps) {
       />
       <figcaption className="pointer-events-none absolute right-3 bottom-2 bg-sheet px-1 text-sm">
         <span className="num">{formatModeFrequency(mode)}</span>
-        <span className="text-ink-soft"> {label}</span>
+        <span className="text-ink-soft"> {label}</span> {!props.complete && <IncompleteMark />}
       </figcaption>
     </figure>
   );

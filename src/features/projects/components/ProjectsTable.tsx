@@ -1,6 +1,7 @@
 import { Link } from 'react-router-dom';
 import type { ProjectSummary } from '#shared/schemas/project.ts';
 import { formatFrequency } from '#shared/units/formatFrequency.ts';
+import { IncompleteMark } from '#src/components/IncompleteMark.tsx';
 import { DataTable, type DataColumn } from '#src/components/dataTable/DataTable.tsx';
 import { useNarrowScreen } from '#src/hooks/useNarrowScreen.ts';
 import { formatDate } from '#src/lib/formatTime.ts';
@@ -51,12 +52,22 @@ const COLUMNS: readonly DataColumn<ProjectSummary>[] = [
     header: 'First mode',
     numeric: true,
     sortValue: (project) => project.firstFrequencyHz,
-    cell: (project) =>
-      project.firstFrequencyHz === null ? (
-        <span className="font-sans text-ink-soft">not solved</span>
-      ) : (
-        formatFrequency(project.firstFrequencyHz, LIST_DIGITS)
-      ),
+    cell: (project) => (
+      <>
+        {project.firstFrequencyHz === null ? (
+          <span className="font-sans text-ink-soft">
+            {project.firstFrequencyComplete === null ? 'not solved' : 'none found'}
+          </span>
+        ) : (
+          formatFrequency(project.firstFrequencyHz, LIST_DIGITS)
+        )}
+        {project.firstFrequencyComplete === false && (
+          <span className="block text-sm">
+            <IncompleteMark />
+          </span>
+        )}
+      </>
+    ),
   },
   {
     id: 'waits',

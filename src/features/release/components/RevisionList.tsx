@@ -1,8 +1,13 @@
 import { Link, useSearchParams } from 'react-router-dom';
 import type { RevisionBrief } from '#shared/schemas/revision.ts';
+import { formatFrequency } from '#shared/units/formatFrequency.ts';
+import { IncompleteMark } from '#src/components/IncompleteMark.tsx';
 import { NoticeMark } from '#src/components/Notice.tsx';
 import { formatDate } from '#src/lib/formatTime.ts';
 import { REVISION_WORDS } from '../state/revisionWords.ts';
+
+/** A list compares revisions; the accuracy of each figure is stated where its results are. */
+const LIST_DIGITS = 4;
 
 interface RevisionListProps {
   readonly revisions: readonly RevisionBrief[];
@@ -41,6 +46,17 @@ export function RevisionList({ revisions, openNumber }: RevisionListProps) {
                 <span className="col-span-2 col-start-2 line-clamp-2 text-sm break-words text-ink-soft">
                   {revision.changeNote}
                 </span>
+                {revision.firstFrequencyHz !== null && (
+                  <span className="col-span-2 col-start-2 flex flex-wrap gap-x-2 text-sm text-ink-soft">
+                    <span>
+                      first{' '}
+                      <span className="num">
+                        {formatFrequency(revision.firstFrequencyHz, LIST_DIGITS)}
+                      </span>
+                    </span>
+                    {revision.firstFrequencyComplete === false && <IncompleteMark />}
+                  </span>
+                )}
               </Link>
             </li>
           );

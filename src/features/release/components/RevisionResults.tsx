@@ -1,6 +1,7 @@
 import { useQueries } from '@tanstack/react-query';
 import type { RevisionResponse } from '#shared/schemas/revision.ts';
 import { solveQuery } from '#src/hooks/useSolve.ts';
+import { IncompleteMark } from '#src/components/IncompleteMark.tsx';
 import { Loading } from '#src/components/Loading.tsx';
 import { formatFrequency } from '#shared/units/formatFrequency.ts';
 
@@ -54,12 +55,15 @@ export function RevisionResults({ revision }: { readonly revision: RevisionRespo
                         {first
                           ? formatFrequency(first.frequencyHz, Math.min(5, first.digits))
                           : 'none'}
+                        {summary?.complete === false && (
+                          <span className="block text-sm">
+                            <IncompleteMark />
+                          </span>
+                        )}
                       </td>
                     );
                   })}
-                  <td className="py-1.5">
-                    {complete ? 'complete' : 'incomplete: modes may be missing'}
-                  </td>
+                  <td className="py-1.5">{complete ? 'complete' : 'modes may be missing'}</td>
                 </tr>
               );
             })}
