@@ -5,6 +5,7 @@ import { IncompleteMark } from '#src/components/IncompleteMark.tsx';
 import { useElementWidth } from '#src/hooks/useElementWidth.ts';
 import type { Preview } from '#src/lib/preview.ts';
 import { frequencyScale, type ScaleKind } from '../state/frequencyScale.ts';
+import { formatPreviewed } from '../state/layOutPreview.ts';
 import { layOutMarks } from '../state/layOutMarks.ts';
 import { FrequencyAxis } from './FrequencyAxis.tsx';
 import { FrequencyMarks } from './FrequencyMarks.tsx';
@@ -66,6 +67,15 @@ export function FrequencyLine(props: FrequencyLineProps) {
             {remark}
           </span>
         ))}
+        {preview && (
+          <span role="status" className="sr-only">
+            Preview: natural frequencies{' '}
+            {preview.frequenciesHz
+              .filter((hz) => hz > 0)
+              .map(formatPreviewed)
+              .join(', ')}
+          </span>
+        )}
         <span className="ml-auto flex items-baseline gap-2">
           <span>Hz over rpm</span>
           <button

@@ -1,4 +1,3 @@
-import { formatFrequency } from '#shared/units/formatFrequency.ts';
 import type { Preview } from '#src/lib/preview.ts';
 import type { FrequencyScale } from '../state/frequencyScale.ts';
 import { layOutPreview } from '../state/layOutPreview.ts';
@@ -11,15 +10,9 @@ interface PreviewMarksProps {
   readonly scale: FrequencyScale;
 }
 
-/** A preview is good to about this on a screen; the stored result states its own digits. */
-const DIGITS = 3;
-
-const formatHz = (hz: number): string => formatFrequency(hz, DIGITS);
-
 /** The frequencies of the changed frame over the ghosts of the stored ones: to look at, not to open. */
 export function PreviewMarks({ preview, ghosts, scale }: PreviewMarksProps) {
-  const marks = layOutPreview(preview.frequenciesHz, scale, formatHz);
-  const elastic = preview.frequenciesHz.filter((hz) => hz > 0);
+  const marks = layOutPreview(preview.frequenciesHz, scale);
   return (
     <div className="absolute inset-x-0 top-0 h-11">
       {ghosts.map(({ x, modes }) => (
@@ -38,9 +31,6 @@ export function PreviewMarks({ preview, ghosts, scale }: PreviewMarksProps) {
           )}
         </div>
       ))}
-      <p role="status" className="sr-only">
-        Preview: natural frequencies {elastic.map(formatHz).join(', ')}
-      </p>
     </div>
   );
 }

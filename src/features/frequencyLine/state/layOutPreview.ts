@@ -1,3 +1,4 @@
+import { formatFrequency } from '#shared/units/formatFrequency.ts';
 import type { FrequencyScale } from './frequencyScale.ts';
 
 /** One previewed frequency on the line. */
@@ -10,11 +11,15 @@ export interface PreviewMark {
 /** A label like "121 Hz" needs about this much. */
 const LABEL_PX = 52;
 
+/** A preview is good to about this on a screen; the stored result states its own digits. */
+const DIGITS = 3;
+
+export const formatPreviewed = (hz: number): string => formatFrequency(hz, DIGITS);
+
 /** Marks of previewed frequencies, left to right; what is at 0 Hz has no place on the line. */
 export function layOutPreview(
   frequenciesHz: readonly number[],
   scale: FrequencyScale,
-  formatHz: (hz: number) => string,
 ): PreviewMark[] {
   let labelledUpTo = -Infinity;
   return frequenciesHz
@@ -24,6 +29,6 @@ export function layOutPreview(
       const x = scale.toX(hz);
       const fits = x - labelledUpTo >= LABEL_PX;
       if (fits) labelledUpTo = x;
-      return { x, label: fits ? formatHz(hz) : '' };
+      return { x, label: fits ? formatPreviewed(hz) : '' };
     });
 }

@@ -21,28 +21,31 @@ export function HandCheckBlock({ check, mode, modes }: HandCheckBlockProps) {
   const { system } = useUnits();
   const { axis } = check;
   const rows = [
-    { what: 'Rayleigh', worth: 'from above', hz: check.rayleigh },
+    { what: 'Rayleigh', worth: 'from above', hz: check.rayleigh, none: '' },
     {
       what: 'g/δ',
       worth: `largest deflection, ${formatDeflection(check.deflectionAtMasses, system)}, masses’ centres included`,
       hz: check.fromDeflectionAtMasses,
+      none: '',
     },
     {
       what: 'g/δ, nodes only',
       worth: formatDeflection(check.deflectionAtNodes, system),
       hz: check.fromDeflectionAtNodes,
+      none: 'no node moves',
     },
     {
       what: 'Dunkerley',
       worth: `from below, as if all moved along ${axis}`,
       hz: check.dunkerley,
+      none: 'too many masses',
     },
   ];
   return (
     <div>
       <h3 className="text-sm font-normal text-ink-soft">Hand check, 1 g along {axis}</h3>
       <dl>
-        {rows.map(({ what, worth, hz }) => (
+        {rows.map(({ what, worth, hz, none }) => (
           <div key={what} className="grid grid-cols-[1fr_auto] gap-x-3">
             <dt>
               {what}
@@ -50,7 +53,7 @@ export function HandCheckBlock({ check, mode, modes }: HandCheckBlockProps) {
             </dt>
             <dd className="text-right">
               {hz === null ? (
-                <span className="text-ink-soft">too many masses</span>
+                <span className="text-ink-soft">{none}</span>
               ) : (
                 <>
                   <span className="num">{formatCheck(hz)}</span>

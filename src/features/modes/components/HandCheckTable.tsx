@@ -100,7 +100,11 @@ function AxisRow({ check, modes }: { check: HandCheck; modes: readonly ModeSumma
         [check.fromDeflectionAtNodes, check.deflectionAtNodes] as const,
       ].map(([hz, deflection], i) => (
         <td key={i} className={`${cell} num text-right`}>
-          {formatCheck(hz)}
+          {hz === null ? (
+            <span className="font-sans text-ink-soft">no node moves</span>
+          ) : (
+            formatCheck(hz)
+          )}
           <span className="block text-sm text-ink-soft">
             {formatDeflection(deflection, system)}
           </span>

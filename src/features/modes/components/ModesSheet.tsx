@@ -19,6 +19,7 @@ import { ModeTable } from './ModeTable.tsx';
 import { ModeTitleBlock } from './ModeTitleBlock.tsx';
 import { MovingFrame } from './MovingFrame.tsx';
 import { PlaybackBar } from './PlaybackBar.tsx';
+import { SolveWarnings } from './SolveWarnings.tsx';
 
 interface ModesSheetProps {
   readonly project: ProjectResponse;
@@ -89,7 +90,7 @@ export function ModesSheet({ project, shown, stale, consistent, others }: ModesS
         onLook={(value) => set('look', value)}
         onState={(value) => set('state', value)}
       />
-      {(stale || !summary.complete) && (
+      {(stale || !summary.complete || summary.warnings.length > 0) && (
         <div className="px-4 py-1">
           {stale && (
             <Notice kind="caution" word="Stale">
@@ -102,6 +103,7 @@ export function ModesSheet({ project, shown, stale, consistent, others }: ModesS
               {summary.count.found}.
             </Notice>
           )}
+          <SolveWarnings warnings={summary.warnings} />
         </div>
       )}
       {look === 'one' && (
