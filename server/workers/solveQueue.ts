@@ -2,7 +2,6 @@ import { createHash } from 'node:crypto';
 import { fn, literal, type Transaction } from 'sequelize';
 import type { SolveReply } from '#shared/analysis/runSolve.ts';
 import type { WireError } from '#shared/errors/AppError.ts';
-import { canonicalJson } from '#shared/frame/fingerprint.ts';
 import { METHODS } from '#shared/schemas/solveResult.ts';
 import { inTransaction } from '#server/models/database.ts';
 import { Solve } from '#server/models/Solve.ts';
@@ -78,10 +77,8 @@ export async function finishSolve(
   solve: Solve,
   reply: Extract<SolveReply, { kind: 'done' }>,
 ): Promise<boolean> {
-  const { timing, ...certain } = reply.summary;
-  const summary = canonicalJson(certain);
+  const { summary, timing, complete, firstFrequencyHz } = reply;
   const shapes = Buffer.from(reply.shapes.buffer);
-  const elastic = certain.modes.find(({ kind }) => kind !== 'rigid');
   return inTransaction(async (transaction) => {
     const mine = await Solve.findOne({ where: held(claim), transaction, lock: true });
     if (!mine) return false;
@@ -95,8 +92,8 @@ export async function finishSolve(
           method: solve.method,
           settings: solve.settings,
           solverVersion: solve.solverVersion,
-          complete: certain.complete,
-          firstFrequencyHz: elastic?.frequencyHz ?? null,
+          complete,
+          firstFrequencyHz,
           summary,
           summaryFingerprint: sha256(summary),
           timing,

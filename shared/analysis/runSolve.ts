@@ -1,14 +1,20 @@
 import { AppError, type WireError } from '../errors/AppError.ts';
 import { checkDocument } from '../frame/checkDocument.ts';
+import { canonicalJson } from '../frame/fingerprint.ts';
 import type { SolveSummary } from '../schemas/solveResult.ts';
 import { encodeShapes } from './shapesFile.ts';
 import { solveFrame, type SolveHooks, type SolveRequest } from './solveFrame.ts';
 
-/** What a solver thread answers: the summary and the file of shapes, or why there are none. */
+/** What a solver thread answers: what is stored of a result, or why there is none. */
 export type SolveReply =
   | {
       readonly kind: 'done';
-      readonly summary: SolveSummary;
+      /** The summary without its timing as canonical JSON: a string goes between threads faster than what it tells. */
+      readonly summary: string;
+      readonly timing: SolveSummary['timing'];
+      readonly complete: boolean;
+      /** Lowest frequency above the rigid-body modes [Hz]. */
+      readonly firstFrequencyHz: number | null;
       /** As `encodeShapes` writes it; its buffer may be transferred. */
       readonly shapes: Uint8Array<ArrayBuffer>;
     }
@@ -27,7 +33,16 @@ export function runSolve(request: SolveRequest, hooks: Omit<SolveHooks, 'warning
       });
     }
     const { summary, shapes } = solveFrame({ ...request, document }, { ...hooks, warnings });
-    return { kind: 'done', summary, shapes: encodeShapes(shapes) };
+    const { timing, ...certain } = summary;
+    const elastic = certain.modes.find(({ kind }) => kind !== 'rigid');
+    return {
+      kind: 'done',
+      summary: canonicalJson(certain),
+      timing,
+      complete: certain.complete,
+      firstFrequencyHz: elastic?.frequencyHz ?? null,
+      shapes: encodeShapes(shapes),
+    };
   } catch (error) {
     if (error instanceof AppError) return { kind: 'failed', error: error.toWire() };
     throw error;

@@ -138,9 +138,10 @@ function draggingLine(): string {
 async function main(): Promise<void> {
   const { product, frames, runs } = readChoice();
   if (product !== null) {
-    const { ms, members } = await productPress(product);
+    const { first, last, members } = await productPress(product);
     console.log(
-      `- From the press of Solve to both results stored, ${members} members: ${ms.toFixed(0)} ms.`,
+      `- From the press of Solve, ${members} members: ${first.toFixed(0)} ms to the first result stored, ` +
+        `${last.toFixed(0)} ms to both mass kinds.`,
     );
     return;
   }
