@@ -1,5 +1,6 @@
 import type { Transaction } from 'sequelize';
-import { canonicalJson, fingerprint } from '#shared/frame/fingerprint.ts';
+import { canonicalJson } from '#shared/frame/canonicalJson.ts';
+import { fingerprint } from '#shared/frame/fingerprint.ts';
 import type { LockRecord as LockRecordContract } from '#shared/schemas/revision.ts';
 import { inTransaction } from '#server/models/database.ts';
 import { LockRecord } from '#server/models/LockRecord.ts';

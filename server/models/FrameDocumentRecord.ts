@@ -8,7 +8,7 @@ import {
   type Sequelize,
   type Transaction,
 } from 'sequelize';
-import { canonicalJson } from '#shared/frame/fingerprint.ts';
+import { canonicalJson } from '#shared/frame/canonicalJson.ts';
 import { frameDocument, type FrameDocument } from '#shared/schemas/frameDocument.ts';
 
 /** A frame document by content: once per team, never changed. */

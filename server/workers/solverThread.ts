@@ -10,9 +10,9 @@ import { memoryLimit, type SolveProgress, type SolveTask } from './solveWorker.t
 const MEGABYTE = 1024 * 1024;
 const MEMORY_LOOK_MS = 200;
 
-/** From sources the thread runs TypeScript as its parent does; bundled, it lies in a folder beside the two programs. */
+/** From sources the thread loads TypeScript; bundled, it lies in a folder beside the two programs. */
 const fromSources = import.meta.url.endsWith('.ts');
-const file = fromSources ? './solveWorker.ts' : './workers/solveWorker.js';
+const file = fromSources ? './solveWorkerFromSources.mjs' : './workers/solveWorker.js';
 
 export interface SolverThread {
   /** Resolves when everything the solver needs is loaded. */
@@ -38,7 +38,6 @@ export function startSolverThread(
   const { solveTimeLimitMs, solveMemoryLimitMb } = config;
   const pool = new Piscina<SolveTask | undefined, unknown>({
     filename: fileURLToPath(new URL(file, import.meta.url)),
-    execArgv: fromSources ? ['--import', 'tsx'] : [],
     minThreads: 1,
     maxThreads: 1,
     resourceLimits: { maxOldGenerationSizeMb: solveMemoryLimitMb },

@@ -1,6 +1,6 @@
 import { AppError, type WireError } from '../errors/AppError.ts';
 import { checkDocument } from '../frame/checkDocument.ts';
-import { canonicalJson } from '../frame/fingerprint.ts';
+import { canonicalJson } from '../frame/canonicalJson.ts';
 import type { SolveSummary } from '../schemas/solveResult.ts';
 import { encodeShapes } from './shapesFile.ts';
 import { solveFrame, type SolveHooks, type SolveRequest } from './solveFrame.ts';

@@ -1,5 +1,5 @@
 import type { FrameDocument } from '../schemas/frameDocument.ts';
-import { canonicalJson } from './fingerprint.ts';
+import { canonicalJson } from './canonicalJson.ts';
 
 /** The lists of a document whose entries are told apart by an id (supports by their node). */
 export const DOCUMENT_LISTS = [

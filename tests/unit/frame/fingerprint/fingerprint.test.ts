@@ -1,7 +1,8 @@
 import { describe, expect, it } from 'vitest';
 
 import { AppError } from '#shared/errors/AppError.ts';
-import { canonicalJson, fingerprint } from '#shared/frame/fingerprint.ts';
+import { canonicalJson } from '#shared/frame/canonicalJson.ts';
+import { fingerprint } from '#shared/frame/fingerprint.ts';
 
 describe('canonical JSON, RFC 8785', () => {
   it('writes the sample of §3.2.2 as §3.2.3 shows it', () => {
