@@ -11,8 +11,12 @@ export interface FrequencyMark {
 
 /** WCAG 2.2, success criterion 2.5.8: no target under 24 px, so closer marks become one. */
 export const TARGET_PX = 24;
-/** A label like "121.4 Hz" needs about this much. */
-const LABEL_PX = 58;
+/** What a character of a label takes (11 px, fixed width), and the gap between two labels. */
+const CHARACTER_PX = 6.6;
+const GAP_PX = 6;
+
+/** Room that a label over a mark needs. */
+export const labelWidth = (text: string): number => text.length * CHARACTER_PX + GAP_PX;
 
 /**
  * Marks for the elastic modes of one solve, left to right. Modes nearer than 24 px fold into one mark;
@@ -36,8 +40,9 @@ export function layOutMarks(
   let labelledUpTo = -Infinity;
   return groups.map(({ modes: together, x }) => {
     const text = labelOf(together, formatHz);
-    const fits = x - labelledUpTo >= LABEL_PX;
-    if (fits) labelledUpTo = x;
+    const half = labelWidth(text) / 2;
+    const fits = x - half >= labelledUpTo;
+    if (fits) labelledUpTo = x + half;
     return { x, modes: together, label: fits ? text : '' };
   });
 }

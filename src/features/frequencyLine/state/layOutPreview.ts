@@ -1,4 +1,5 @@
 import { formatFrequency } from '#shared/units/formatFrequency.ts';
+import { labelWidth } from './layOutMarks.ts';
 import type { FrequencyScale } from './frequencyScale.ts';
 
 /** One previewed frequency on the line. */
@@ -7,9 +8,6 @@ export interface PreviewMark {
   /** Empty where there is no room for it. */
   readonly label: string;
 }
-
-/** A label like "121 Hz" needs about this much. */
-const LABEL_PX = 52;
 
 /** A preview is good to about this on a screen; the stored result states its own digits. */
 const DIGITS = 3;
@@ -27,8 +25,10 @@ export function layOutPreview(
     .toSorted((a, b) => a - b)
     .map((hz) => {
       const x = scale.toX(hz);
-      const fits = x - labelledUpTo >= LABEL_PX;
-      if (fits) labelledUpTo = x;
-      return { x, label: fits ? formatPreviewed(hz) : '' };
+      const text = formatPreviewed(hz);
+      const half = labelWidth(text) / 2;
+      const fits = x - half >= labelledUpTo;
+      if (fits) labelledUpTo = x + half;
+      return { x, label: fits ? text : '' };
     });
 }

@@ -118,7 +118,7 @@ export function ModesSheet({ project, shown, stale, consistent, others }: ModesS
             tools={playbackBar}
           />
           <div
-            className="border-rule bg-sheet p-4 max-md:border-t md:absolute md:top-14 md:left-3 md:max-h-[calc(100%-5rem)] md:w-72 md:overflow-y-auto md:border"
+            className="border-rule bg-sheet p-4 max-md:border-t md:absolute md:top-14 md:left-3 md:max-h-[calc(100%-10rem)] md:w-72 md:overflow-y-auto md:border"
             tabIndex={0}
           >
             <ModeDetails mode={mode} summary={summary} document={shown.document} />
