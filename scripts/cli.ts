@@ -1,6 +1,7 @@
 import { AppError } from '#shared/errors/AppError.ts';
 import { refine } from './cli/refine.ts';
 import { reportFailure } from './cli/reportFailure.ts';
+import { sensitivities } from './cli/sensitivities.ts';
 import { solve } from './cli/solve.ts';
 import type { Streams } from './cli/Streams.ts';
 
@@ -8,6 +9,7 @@ import type { Streams } from './cli/Streams.ts';
 const VERBS = new Map<string, (args: string[], streams: Streams) => Promise<number>>([
   ['solve', solve],
   ['refine', refine],
+  ['sensitivities', sensitivities],
 ]);
 
 async function run(args: string[], streams: Streams): Promise<number> {

@@ -33,7 +33,8 @@ export type StaticChecks = { readonly axes: AxisCheck[] } | { readonly none: str
  * - Rayleigh's quotient of the deflected shape, g ΣWδ / ΣWδ² with the whole motion in it: the lowest frequency is
  *   never higher (Thomson, Theory of Vibration with Applications, section on Rayleigh's method).
  * - Dunkerley by component systems: 1/ω² = 1/ω₀² + Σ m f, ω₀ of the frame without its masses, f the deflection at
- *   each mass alone under a unit force there (Thomson §12.2): from below, as if the masses moved along this axis only.
+ *   each mass alone under a unit force there (Thomson §12.2): from below if all moved along this axis alone. No bound of
+ *   a frame whose motions are coupled.
  */
 export function staticChecks(
   model: FrameModel,

@@ -88,7 +88,7 @@ export const handCheck = z.object({
   fromDeflectionAtMasses: z.number(),
   /** The lowest frequency is never above it [Hz]. */
   rayleigh: z.number(),
-  /** From below, as if the masses moved along this axis only [Hz]; null for a frame with very many masses. */
+  /** From below if all moved along this axis alone [Hz]: coupled motions may lie below it. Null with very many masses. */
   dunkerley: z.number().nullable(),
 });
 export type HandCheck = z.infer<typeof handCheck>;

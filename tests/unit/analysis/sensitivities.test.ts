@@ -3,8 +3,8 @@ import { describe, expect, it } from 'vitest';
 import { LiveFrame } from '#shared/analysis/LiveFrame.ts';
 import { parametersOf, withParameter } from '#shared/analysis/sensitivity/Parameter.ts';
 import type { Parameter } from '#shared/analysis/sensitivity/Parameter.ts';
-import { sensitivities } from '#shared/analysis/sensitivity/sensitivities.ts';
 import type { Sensitivities } from '#shared/analysis/sensitivity/sensitivities.ts';
+import { solveSensitivities } from '#shared/analysis/sensitivity/solveSensitivities.ts';
 import { SharedWork } from '#shared/analysis/SharedWork.ts';
 import { solveMeshed } from '#shared/analysis/solveMeshed.ts';
 import type { MassKind } from '#shared/frame/assembly/FrameModel.ts';
@@ -26,11 +26,9 @@ function solve(document: FrameDocument, modes: number, massKind: MassKind = 'con
 function sensitivitiesOf(
   document: FrameDocument,
   modes: number,
-  massKind?: MassKind,
+  method: MassKind = 'consistent',
 ): Sensitivities {
-  const { model, phi, modes: found, rigidBodyModes } = solve(document, modes, massKind);
-  const lambda = found.map(({ frequencyHz }) => (2 * Math.PI * frequencyHz) ** 2);
-  return sensitivities({ model, phi, lambda, rigidBodyModes });
+  return solveSensitivities({ document, method, stateId: null, settings: { modes } });
 }
 function perUnit(result: Sensitivities, list: Parameter['list'], id: string, field: string) {
   const found = result.parameters.find(

@@ -36,7 +36,7 @@ export function HandCheckBlock({ check, mode, modes }: HandCheckBlockProps) {
     },
     {
       what: 'Dunkerley',
-      worth: `from below, as if all moved along ${axis}`,
+      worth: `from below if all moved along ${axis} alone`,
       hz: check.dunkerley,
       none: 'too many masses',
     },
@@ -72,9 +72,9 @@ export function HandCheckBlock({ check, mode, modes }: HandCheckBlockProps) {
           check speaks of the axis, not of this mode alone.
         </p>
       )}
-      {outsideBounds(check, mode, modes) && (
+      {outsideBounds(check, modes) && (
         <Notice kind="caution" className="mt-1">
-          Outside its bounds: look for the reason.
+          Outside its bounds: the lowest frequency lies above Rayleigh’s. Look for the reason.
         </Notice>
       )}
     </div>

@@ -54,8 +54,9 @@ export function HandCheckTable({ checks, modes }: HandCheckTableProps) {
       </div>
       <p className="mt-2 max-w-prose text-sm text-ink-soft">
         Rayleigh bounds the lowest frequency from above. g/δ is exact for one degree of freedom and
-        reads low where the mass is spread. Dunkerley comes from below, as if all moved along the
-        axis alone. Each speaks of the mode with the most effective mass along its axis.
+        reads low where the mass is spread. Dunkerley comes from below where everything moves along
+        the axis alone; in a frame whose motions are coupled it may lie above. Each speaks of the
+        mode with the most effective mass along its axis.
       </p>
     </section>
   );
@@ -77,15 +78,15 @@ function AxisRow({ check, modes }: { check: HandCheck; modes: readonly ModeSumma
             <span className="block text-sm text-ink-soft">
               holds {formatShare(check.share)} of the mass that moves along {check.axis}
             </span>
-            {outsideBounds(check, mode, modes) && (
-              <span className="flex items-center gap-1 text-sm text-caution">
-                <NoticeMark kind="caution" className="size-3.5" />
-                outside its bounds: look for the reason
-              </span>
-            )}
           </>
         ) : (
           <span className="text-ink-soft">no mode found moves along {check.axis}</span>
+        )}
+        {outsideBounds(check, modes) && (
+          <span className="flex items-center gap-1 text-sm text-caution">
+            <NoticeMark kind="caution" className="size-3.5" />
+            outside its bounds: look for the reason
+          </span>
         )}
       </td>
       <td className={`${cell} num text-right`}>
