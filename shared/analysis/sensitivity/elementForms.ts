@@ -27,7 +27,8 @@ export class ElementForms {
   readonly #model: FrameModel;
   readonly #fields: readonly ModeField[];
   readonly #pairs: readonly ModePair[];
-  readonly #makes = new Map<number, Make>();
+  /** By make, section and material: other sections may have the same figures. */
+  readonly #makes = new Map<string, Make>();
 
   constructor(model: FrameModel, fields: readonly ModeField[], pairs: readonly ModePair[]) {
     this.#model = model;
@@ -60,18 +61,19 @@ export class ElementForms {
   }
 
   #makesOf(chosen: (part: DividedPart) => boolean): Make[] {
-    const byMake = new Map<number, DividedPart[]>();
+    const byMake = new Map<string, DividedPart[]>();
     for (const part of this.#model.parts) {
       if (!chosen(part)) continue;
-      const parts = byMake.get(part.make);
+      const key = JSON.stringify([part.make, part.member.section, part.member.material]);
+      const parts = byMake.get(key);
       if (parts) parts.push(part);
-      else byMake.set(part.make, [part]);
+      else byMake.set(key, [part]);
     }
-    return [...byMake].map(([make, parts]) => {
-      let known = this.#makes.get(make);
+    return [...byMake].map(([key, parts]) => {
+      let known = this.#makes.get(key);
       if (known === undefined) {
         known = { part: parts[0]!, moments: this.#momentsOf(parts) };
-        this.#makes.set(make, known);
+        this.#makes.set(key, known);
       }
       return known;
     });

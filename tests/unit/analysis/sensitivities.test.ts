@@ -148,6 +148,20 @@ describe('sensitivities against central differences of whole solves', { timeout:
     expectSlopes(sensitivitiesOf(document, 4), document, moves);
   });
 
+  it('two sections, and two materials, of the same figures', () => {
+    const input = aStand({ divisions: 2 });
+    input.sections.push({ ...input.sections[0]!, id: 'rail tube' });
+    input.materials.push({ ...input.materials[0]!, id: 'rail steel' });
+    for (const member of input.members) {
+      if (member.id.startsWith('rail')) member.section = 'rail tube';
+      if (member.id.startsWith('cross')) member.material = 'rail steel';
+    }
+    const document = accepted(input);
+    const chosen = parametersOf(document).filter(({ field }) => field === 'wall' || field === 'E');
+    expect(chosen).toHaveLength(4);
+    expectSlopes(sensitivitiesOf(document, 4), document, chosen);
+  });
+
   it('elastic modes of a free frame', () => {
     const document = accepted({ ...aStand({ divisions: 2 }), supports: [] });
     const result = sensitivitiesOf(document, 9);
